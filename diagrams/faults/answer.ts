@@ -1,0 +1,74 @@
+import type { Condition } from '../document/condition-schema'
+import type { Mode } from '../document/sites'
+
+export type Verdict = 'faulty' | 'in-question' | 'proved-good'
+export type Outcome = 'located' | 'narrowed' | 'no-fault' | 'two-faults' | 'cannot-be'
+
+export interface ModeAnswer {
+  mode: Mode
+  probability: number
+  /** Most likely severity in ohm; null where the mode has none (open, dead, stuck, weak). */
+  ohms: number | null
+  /** The other wire of a short between wires. */
+  other: string | null
+  /** Fuses that this fault has blown: the consequence, not the cause. */
+  blows: string[]
+}
+
+export interface SiteAnswer {
+  site: string
+  verdict: Verdict
+  /** True when the clearance also holds with any one reading left out. */
+  firm: boolean
+  /** Ids of readings that suffice to clear the site. */
+  clearedBy: string[]
+  probability: number
+  modes: ModeAnswer[]
+}
+
+export interface ReadingAnswer {
+  id: string
+  /** What the good circuit would show: number in V, ohm or A, "OL", true/false or "high"/"low"; null when it cannot settle. */
+  expected: number | 'OL' | boolean | 'high' | 'low' | null
+  agrees: boolean
+  says: string
+}
+
+export interface NextOutcome {
+  /** "12.5 V", "0.3 ohm", "OL", "works", "does not", "high", "low". */
+  about: string
+  low?: number
+  high?: number
+  probability: number
+  /** Sites left by this outcome, most probable first. */
+  leaves: string[]
+}
+
+export interface NextReading {
+  kind: 'volts' | 'ohms' | 'amps' | 'works' | 'sees'
+  red?: string
+  black?: string
+  wire?: string
+  node?: string
+  pin?: string
+  condition: Condition
+  bits: number
+  minutes: number
+  outcomes: NextOutcome[]
+  /** One plain sentence: where, what, in which condition, what each outcome leaves. */
+  says: string
+}
+
+/** The evaluator's answer, as circuit-format's page lays it out, with sentences. */
+export interface Answer {
+  outcome: Outcome
+  noFault: number
+  sites: SiteAnswer[]
+  readings: ReadingAnswer[]
+  /** With `cannot-be` only: the reading to take again. */
+  reading?: string
+  next: NextReading[]
+  inseparable: string[][]
+  /** The verdict in plain sentences. */
+  says: string
+}
