@@ -1,0 +1,28 @@
+import { randomBytes } from 'node:crypto'
+import { existsSync, mkdirSync, readFileSync, writeFileSync } from 'node:fs'
+import path from 'node:path'
+import { Refusal } from './refusal.mjs'
+
+/** The root of this checkout. */
+export const projectFolder = path.resolve(import.meta.dirname, '..', '..')
+
+/** Everything an install makes for itself (database, hashes, locks) lives here and may be deleted to begin afresh. */
+export const dataFolder = path.join(projectFolder, '.data')
+
+export function ensureDataFolder() {
+  try {
+    mkdirSync(dataFolder, { recursive: true })
+  } catch (error) {
+    throw new Refusal(
+      `Cannot write to ${dataFolder} (${error.code}); give this user the folder and start again.`,
+    )
+  }
+}
+
+/** A name of this install's own, so that a new clone at an old path does not find the old clone's data. */
+export function installId() {
+  ensureDataFolder()
+  const file = path.join(dataFolder, 'install-id')
+  if (!existsSync(file)) writeFileSync(file, randomBytes(4).toString('hex'), { flag: 'wx' })
+  return readFileSync(file, 'utf8').trim()
+}
