@@ -1,0 +1,57 @@
+import { controlCombinations } from '../document/condition'
+import { restCondition } from '../document/condition-schema'
+import { withBlown, type Alteration } from './alteration'
+import { branchAmps, Case, type Settled } from './case'
+import { blowsAtRatingTimes } from './constants'
+import type { Network } from './network'
+import { Study } from './study'
+
+/** Combinations of controls looked at when a circuit has very many. */
+const combinationLimit = 256
+
+/** Studies of every combination of controls with everything plugged in, the conditions a vehicle is driven in. */
+export function drivingStudies(network: Network): Study[] {
+  return controlCombinations(network.circuit, combinationLimit).map(
+    (controls) => new Study(network, { ...restCondition, controls }),
+  )
+}
+
+/**
+ * The fuses that a short has blown, most overloaded first: in any combination of controls more than
+ * `limitTimes` the rating (1.35) goes through, states of a chattering relay counted. Node ids.
+ */
+export function blownFuses(
+  network: Network,
+  studies: readonly Study[],
+  alteration: Alteration,
+  severity: number,
+  limitTimes = blowsAtRatingTimes,
+): string[] {
+  const blown: string[] = []
+  let cases = studies.map((study) => new Case(study, alteration))
+  for (;;) {
+    let worst = limitTimes
+    let worstFuse: string | null = null
+    for (const each of cases) {
+      const settled = each.settle(severity)
+      const states: Settled[] = settled ? [settled] : each.passed
+      for (const state of states)
+        for (const fuse of network.fuses) {
+          const times = Math.abs(branchAmps(each, state, fuse.branch)) / fuse.amps
+          if (times > worst && !blown.includes(fuse.node)) {
+            worst = times
+            worstFuse = fuse.node
+          }
+        }
+    }
+    if (worstFuse === null) return blown
+    blown.push(worstFuse)
+    const after = withBlown(alteration, blown.map(fuseBranch))
+    cases = studies.map((study) => new Case(study, after))
+  }
+}
+
+/** Branch name of a fuse. */
+export function fuseBranch(node: string): string {
+  return `part:${node}`
+}

@@ -1,0 +1,117 @@
+import type { Problem } from '../document/check-circuit'
+import type { Circuit } from '../document/circuit-schema'
+import { checkCondition } from '../document/condition'
+import { parsePoint, pointName } from '../document/points'
+import { hasContact, portsOf } from '../document/ports'
+import type { Probe } from '../document/reading-schema'
+import { Case, voltsAt, type Settled } from './case'
+import { deadVolts } from './constants'
+import { openCase } from './faulted-case'
+import { unstable } from './operating-point'
+
+/** Why a reading cannot be taken, or null. Judged on the good circuit, as the person with the meter would. */
+export function refuseReading(circuit: Circuit, probe: Probe): Problem | null {
+  const wrong = checkCondition(circuit, probe.condition, 'condition')[0]
+  if (wrong) return wrong
+  switch (probe.kind) {
+    case 'amps':
+      return circuit.wires.some((wire) => wire.id === probe.wire)
+        ? null
+        : { path: 'wire', message: `wire "${probe.wire}" does not exist` }
+    case 'works':
+      return circuit.nodes.some((node) => node.id === probe.node && node.kind === 'load')
+        ? null
+        : { path: 'node', message: `load "${probe.node}" does not exist` }
+    case 'sees': {
+      const point = parsePoint(probe.pin)
+      const node = circuit.nodes.find((n) => n.id === point?.node)
+      const pin = node?.kind === 'module' ? node.pins.find((p) => p.pin === point?.port) : undefined
+      return pin?.circuit.type === 'pull-up' || pin?.circuit.type === 'pull-down'
+        ? null
+        : { path: 'pin', message: `"${probe.pin}" is not an input of a module` }
+    }
+    case 'volts':
+    case 'ohms':
+      for (const side of ['red', 'black'] as const) {
+        const problem = refusePoint(circuit, probe[side], side, probe.condition.unplugged)
+        if (problem) return problem
+      }
+      if (probe.red === probe.black) return { path: 'black', message: `both leads are on ${probe.red}` }
+      return probe.kind === 'ohms' && probe.condition.battery ? refuseLiveOhms(circuit, probe) : null
+  }
+}
+
+function refusePoint(
+  circuit: Circuit,
+  text: string,
+  side: string,
+  unplugged: readonly string[],
+): Problem | null {
+  const point = parsePoint(text)
+  if (!point) return null
+  const node = circuit.nodes.find((n) => n.id === point.node)
+  const port = node && portsOf(node).find((p) => p.name === point.port)
+  if (!node || !port || (point.part && !hasContact(node, port)))
+    return { path: side, message: `point ${text} does not exist` }
+  if (!point.part) return null
+  const pulled = (node.kind === 'fuse' || node.kind === 'relay') && unplugged.includes(node.id)
+  return unplugged.includes(port.connector!) || pulled
+    ? null
+    : {
+        path: side,
+        message: `${pointName(circuit, text)} is reachable only while its connector is unplugged`,
+      }
+}
+
+const liveOhms =
+  'Ohms needs the battery disconnected. A live circuit gives a false figure and can harm the meter.'
+
+function refuseLiveOhms(circuit: Circuit, probe: Extract<Probe, { kind: 'volts' | 'ohms' }>): Problem | null {
+  const opened = openCase(circuit, probe.condition)
+  if (!opened.ok) return opened.problem
+  const settled = opened.value.given.settle(0)
+  if (!settled) return unstable
+  return isDead(opened.value.given, settled, probe.red, probe.black)
+    ? null
+    : { path: 'condition.battery', message: liveOhms }
+}
+
+/** Both leads within 0.05 V of chassis and of each other, and no source connected to either. */
+export function isDead(given: Case, settled: Settled, red: string, black: string): boolean {
+  const { network } = given.study
+  const [a, b] = [network.unknownOf.get(red)!, network.unknownOf.get(black)!]
+  const [va, vb] = [voltsAt(settled, a), voltsAt(settled, b)]
+  if (Math.abs(va) > deadVolts || Math.abs(vb) > deadVolts || Math.abs(va - vb) > deadVolts) return false
+  const fed = unknownsFed(given, settled)
+  return !fed.has(a) && !fed.has(b)
+}
+
+/** Unknowns that a conducting path joins to a live source, chassis not counted as a path. */
+function unknownsFed(given: Case, settled: Settled): Set<number> {
+  const { network } = given.study
+  const { conductance, emfBattery, emfFixed } = settled.located.base
+  const beside = new Map<number, number[]>()
+  const queue: number[] = []
+  network.branches.forEach((branch, i) => {
+    if (conductance[i] === 0) return
+    const live = emfBattery[i] !== 0 || emfFixed[i] !== 0
+    for (const [here, there] of [
+      [branch.a, branch.b],
+      [branch.b, branch.a],
+    ] as const) {
+      if (here < 0) continue
+      if (live) queue.push(here)
+      if (there < 0) continue
+      const list = beside.get(here)
+      if (list) list.push(there)
+      else beside.set(here, [there])
+    }
+  })
+  const fed = new Set<number>()
+  for (let next = queue.pop(); next !== undefined; next = queue.pop()) {
+    if (fed.has(next)) continue
+    fed.add(next)
+    queue.push(...(beside.get(next) ?? []))
+  }
+  return fed
+}
