@@ -1,8 +1,7 @@
 import localFont from 'next/font/local'
 
 // The two cuts of each face (basic and extended Latin) are families of their own, so that the second is only
-// fetched by a page that shows one of its letters. Next wants every value here
-// written out, so the ranges stand twice.
+// fetched by a page that shows one of its letters. Next wants every value here written out, hence the twins.
 
 const text = localFont({
   src: '../../node_modules/@fontsource-variable/atkinson-hyperlegible-next/files/atkinson-hyperlegible-next-latin-wght-normal.woff2',
