@@ -3,7 +3,7 @@ import { describeCluster, holdCluster, releaseCluster } from './cluster.mjs'
 import { projectFolder } from './project-folder.mjs'
 import { Refusal } from './refusal.mjs'
 import { appRole, ensureDatabase, ensureRoles, ownerRole } from './roles.mjs'
-import { run } from './run.mjs'
+import { collect } from './run.mjs'
 
 /**
  * Brings up the server that the settings describe, with both roles and an up-to-date database in it.
@@ -32,15 +32,17 @@ export async function bringUpDatabase(settings) {
 }
 
 /**
- * Runs one of the TypeScript programs beside this folder with the given environment.
+ * Runs one of the TypeScript programs beside this folder and answers what it printed; its messages are shown.
  * @param {string} script
  * @param {Record<string, string | undefined>} env
- * @param {import('node:child_process').StdioOptions} [stdio]
  */
-export async function runTypeScript(script, env, stdio = ['ignore', 'inherit', 'inherit']) {
-  const file = path.join(projectFolder, 'scripts', script)
-  const args = ['--import', 'tsx', file]
-  return run(process.execPath, args, { cwd: projectFolder, env: { ...process.env, ...env }, stdio })
+export async function runTypeScript(script, env) {
+  const args = ['--import', 'tsx', path.join(projectFolder, 'scripts', script)]
+  return collect(process.execPath, args, {
+    cwd: projectFolder,
+    env: { ...process.env, ...env },
+    stdio: ['ignore', 'pipe', 'inherit'],
+  })
 }
 
 function account(settings, setting, role) {

@@ -52,7 +52,7 @@ async function ensureTemplate(access: Access): Promise<string> {
     ensureRoles(access, { owner: access.adminPassword, app: access.adminPassword })
     dropDatabase(access, draft)
     ensureDatabase(access, draft)
-    const code = await runTypeScript('migrate.ts', {
+    const { code } = await runTypeScript('migrate.ts', {
       DATABASE_OWNER_URL: addresses(access, draft).ownerUrl,
       NODE_ENV: undefined,
     })
