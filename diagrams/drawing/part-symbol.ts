@@ -20,6 +20,15 @@ function body(node: Node, state: PartState): Primitive[] {
     case 'battery':
       return [
         inkLine(20, 40, 20, 20),
+        // Nothing wired to the minus: it is bonded to chassis.
+        ...(state.wired?.has('neg') === false
+          ? [
+              inkLine(20, 40, 20, 44),
+              inkLine(6, 44, 34, 44),
+              inkLine(11, 50, 29, 50),
+              inkLine(16, 56, 24, 56),
+            ]
+          : []),
         inkLine(20, 20, 25, 20),
         { kind: 'line', x1: 26, y1: 11, x2: 26, y2: 29, stroke: 'ink', strokeWidth: 6 },
         inkLine(36, 3, 36, 37),

@@ -1,0 +1,16 @@
+import type { Circuit } from '../document/circuit-schema'
+import { openCircuit } from '../document/open-circuit'
+import { lampRequestLine } from './lamp-request-line'
+import type { SampleDocument } from './sample-document'
+
+/** The sample circuits in rising difficulty, as the demo shop and school hold them. */
+export const sampleDocuments: readonly SampleDocument[] = [lampRequestLine]
+
+export const samples: Circuit[] = sampleDocuments.map(open)
+
+function open(document: SampleDocument): Circuit {
+  const opened = openCircuit(document)
+  if (opened.ok) return opened.value
+  const problem = opened.problems[0]
+  throw new Error(`sample "${document.title}": ${problem?.path}: ${problem?.message}`)
+}
