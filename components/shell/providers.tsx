@@ -2,14 +2,11 @@
 
 import { MutationCache, QueryCache, QueryClient, QueryClientProvider } from '@tanstack/react-query'
 import { type ReactNode, useState } from 'react'
+import { CallError } from '@/lib/client/api/traces'
 import { reportSessionEnded } from './session-ended'
 
-function codeOf(error: unknown): unknown {
-  return typeof error === 'object' && error !== null && 'code' in error ? error.code : undefined
-}
-
 const onError = (error: unknown) => {
-  if (codeOf(error) === 'not-signed-in') reportSessionEnded()
+  if (error instanceof CallError && error.failure.code === 'not-signed-in') reportSessionEnded()
 }
 
 export function Providers({ children }: { children: ReactNode }) {
@@ -22,7 +19,7 @@ export function Providers({ children }: { children: ReactNode }) {
           queries: {
             staleTime: 15_000,
             // A refusal stays a refusal; only a server that does not answer is worth asking again.
-            retry: (failures, error) => codeOf(error) === undefined && failures < 2,
+            retry: (failures, error) => error instanceof CallError && error.failure.tryAgain && failures < 2,
           },
         },
       }),
