@@ -1,0 +1,3 @@
+'use client'
+
+export { ErrorScreen as default } from '@/components/shell/error-screen'
