@@ -20,7 +20,7 @@ export interface ModuleLayout {
 
 const rowPixels = 40
 const numberSize = 14
-const nameSize = 13.5
+const nameSize = 13
 
 /**
  * A pin that takes current in stands at the left, one that gives it out at the right: supplies, low-side drivers
@@ -35,7 +35,7 @@ export function moduleLayout(node: NodeOf<'module'>): ModuleLayout {
   const widest = (side: 'left' | 'right') =>
     Math.max(0, ...rows.filter((row) => row.side === side).map((row) => rowWidth(row)))
   const both = next.left > 0 && next.right > 0
-  const content = widest('left') + widest('right') + (both ? 60 : 72)
+  const content = widest('left') + widest('right') + (both ? 52 : 72)
   return {
     width: Math.max(120, Math.ceil(content / 20) * 20),
     height: rowPixels * Math.max(next.left, next.right) + (both ? 10 : 0),

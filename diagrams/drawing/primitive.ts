@@ -66,9 +66,13 @@ export interface Box {
 /** Line width of every symbol. */
 export const inkWidth = 2.2
 
-/** Width of a text in the drawing's face, near enough to place labels (the face averages 0.55 em a letter). */
+/** Width of a text in the drawing's face, near enough to place labels: measured means in em by kind of letter. */
 export function textWidth(text: string, size: number, mono = false): number {
-  return Math.ceil(text.length * size * (mono ? 0.62 : 0.56))
+  if (mono) return Math.ceil(text.length * size * 0.62)
+  let em = 0
+  for (const letter of text)
+    em += /[A-Z0-9MW@%]/.test(letter) ? 0.63 : /[ .,:;/'()|!il-]/.test(letter) ? 0.34 : 0.54
+  return Math.ceil(em * size)
 }
 
 export function boxesMeet(one: Box, other: Box): boolean {

@@ -1,10 +1,18 @@
 import type { Circuit } from '../document/circuit-schema'
 import { openCircuit } from '../document/open-circuit'
+import { coolingFan } from './cooling-fan'
 import { lampRequestLine } from './lamp-request-line'
 import type { SampleDocument } from './sample-document'
+import { tailgateButton } from './tailgate-button'
+import { trailerLamps } from './trailer-lamps'
 
 /** The sample circuits in rising difficulty, as the demo shop and school hold them. */
-export const sampleDocuments: readonly SampleDocument[] = [lampRequestLine]
+export const sampleDocuments: readonly SampleDocument[] = [
+  lampRequestLine,
+  tailgateButton,
+  coolingFan,
+  trailerLamps,
+]
 
 export const samples: Circuit[] = sampleDocuments.map(open)
 

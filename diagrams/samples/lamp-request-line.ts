@@ -63,7 +63,7 @@ export const lampRequestLine: SampleDocument = {
           name: 'lamp request',
           circuit: { type: 'high-side', on: { control: 'key', positions: ['on'] } },
         },
-        { pin: '8', name: 'module ground', circuit: { type: 'ground' } },
+        { pin: '8', name: 'ground', circuit: { type: 'ground' } },
       ],
     },
     { id: 'g1', kind: 'ground', label: 'G1', x: 620, y: 200, accessMinutes: 3 },
@@ -79,7 +79,7 @@ export const lampRequestLine: SampleDocument = {
       pins: [
         { pin: '5', name: 'lamp request', circuit: { type: 'pull-down', ohms: 4700 } },
         { pin: '6', name: 'feed', circuit: { type: 'supply', ohms: 120 } },
-        { pin: '4', name: 'module ground', circuit: { type: 'ground' } },
+        { pin: '4', name: 'ground', circuit: { type: 'ground' } },
       ],
     },
     { id: 'g2', kind: 'ground', label: 'G2', x: 1200, y: 180, accessMinutes: 4 },
