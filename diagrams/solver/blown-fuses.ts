@@ -19,6 +19,7 @@ export function drivingStudies(network: Network): Study[] {
 /**
  * The fuses that a short has blown, most overloaded first: in any combination of controls more than
  * `limitTimes` the rating (1.35) goes through, states of a chattering relay counted. Node ids.
+ * `cache` may be shared between severities of the same alteration.
  */
 export function blownFuses(
   network: Network,
@@ -26,13 +27,22 @@ export function blownFuses(
   alteration: Alteration,
   severity: number,
   limitTimes = blowsAtRatingTimes,
+  cache = new Map<string, Case[]>(),
 ): string[] {
   const blown: string[] = []
-  let cases = studies.map((study) => new Case(study, alteration))
+  const casesAfter = (): Case[] => {
+    const key = blown.join(',')
+    let found = cache.get(key)
+    if (!found) {
+      const after = withBlown(alteration, blown.map(fuseBranch))
+      cache.set(key, (found = studies.map((study) => new Case(study, after))))
+    }
+    return found
+  }
   for (;;) {
     let worst = limitTimes
     let worstFuse: string | null = null
-    for (const each of cases) {
+    for (const each of casesAfter()) {
       const settled = each.settle(severity)
       const states: Settled[] = settled ? [settled] : each.passed
       for (const state of states)
@@ -46,8 +56,6 @@ export function blownFuses(
     }
     if (worstFuse === null) return blown
     blown.push(worstFuse)
-    const after = withBlown(alteration, blown.map(fuseBranch))
-    cases = studies.map((study) => new Case(study, after))
   }
 }
 

@@ -1,7 +1,7 @@
 import type { Alteration } from './alteration'
 import { nominalBatteryVolts } from './constants'
 import { solveInPlace, type Factor } from './factor'
-import { factorNetwork, solveSources, stateKey, type Base, type States, type Study } from './study'
+import { solveSources, stateKey, type Base, type States, type Study } from './study'
 
 /**
  * One state of a faulted network, ready for every severity.
@@ -90,9 +90,10 @@ export class Case {
 
   /**
    * Lets relays, modules and diodes find their state, from everything asleep and released.
-   * Null when they never come to rest.
+   * Null when they never come to rest. `reluctance` multiplies the volts that relays and modules
+   * ask for: what real parts, a little off the drawing, might do.
    */
-  settle(severity: number, scale = this.scaleFor(severity)): Settled | null {
+  settle(severity: number, scale = this.scaleFor(severity), reluctance = 1): Settled | null {
     const { network, condition } = this.study
     let states = this.study.atRest()
     const seen = new Set<string>()
@@ -103,12 +104,16 @@ export class Case {
       this.passed.push(solved)
       if (network.relays.length === 0 && network.modules.length === 0) return solved
       const next: States = {
-        relays: network.relays.map((_, i) => coilVolts(this, solved, i) >= network.relays[i]!.pullIn),
+        relays: network.relays.map(
+          (_, i) => coilVolts(this, solved, i) >= reluctance * network.relays[i]!.pullIn,
+        ),
         modules: network.modules.map(
           (module) =>
             condition.battery &&
             !this.alteration.forced.deadModules.has(module.node) &&
-            module.supplies.every((pin) => voltsBetween(solved, pin, module.innerGround) >= module.runsFrom),
+            module.supplies.every(
+              (pin) => voltsBetween(solved, pin, module.innerGround) >= reluctance * module.runsFrom,
+            ),
         ),
         diodes: solved.states.diodes,
       }
@@ -166,7 +171,7 @@ function locate(study: Study, alteration: Alteration, states: States): Located {
   if (branch !== undefined) {
     const conductance = base.conductance[branch]!
     const { a, b } = network.branches[branch]!
-    const factor = factorNetwork(network, base.conductance, branch)
+    const factor = study.factorWithout(base.conductance, branch)
     const z = unitCurrent(network.size, factor, a, b)
     return {
       base,

@@ -36,6 +36,8 @@ export class Study {
   constructor(
     readonly network: Network,
     readonly condition: Condition,
+    /** Conductance of every unknown to chassis, siemens. */
+    private readonly leak = leakSiemens,
   ) {
     this.positions = positionsIn(network.circuit, condition.controls)
     this.unplugged = new Set(condition.unplugged)
@@ -50,6 +52,11 @@ export class Study {
       modules: modules.map(() => false),
       diodes: diodes.map(() => false),
     }
+  }
+
+  /** Factors the conductances with branch `without` left out (−1: none). */
+  factorWithout(conductance: Float64Array, without: number): Factor {
+    return factorNetwork(this.network, conductance, without, this.leak)
   }
 
   base(states: States, forced: Forced): Base {
@@ -80,7 +87,7 @@ export class Study {
       if (branch.supply === 'battery') emfBattery[i] = branch.emf(setting)
       else emfFixed[i] = branch.emf(setting)
     }
-    const factor = factorNetwork(network, conductance, -1)
+    const factor = this.factorWithout(conductance, -1)
     return {
       setting,
       conductance,
@@ -103,9 +110,9 @@ export function stateKey(states: States): string {
 }
 
 /** Factors the conductance matrix, leaving branch `without` out (−1: none). */
-export function factorNetwork(network: Network, conductance: Float64Array, without: number): Factor {
+function factorNetwork(network: Network, conductance: Float64Array, without: number, leak: number): Factor {
   const edge = new Float64Array(network.order.neighbour.length)
-  const toChassis = new Float64Array(network.size).fill(leakSiemens)
+  const toChassis = new Float64Array(network.size).fill(leak)
   const { places } = network
   for (let i = 0; i < places.length; i++) {
     const place = places[i]!

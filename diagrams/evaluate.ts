@@ -1,0 +1,157 @@
+import type { Answer, ModeAnswer, Outcome, SiteAnswer } from './faults/answer'
+import { clearances, type Clearance } from './faults/clearance'
+import { fitsAll, weighReadings } from './faults/evidence'
+import { faultModelOf, type FaultModel } from './faults/fault-model'
+import { readingToSetAside } from './faults/misfit'
+import { posteriorOf, siteProbabilities, type Posterior } from './faults/posterior'
+import { judgeReadings } from './faults/reading-sentence'
+import type { EvaluationRequest } from './faults/request'
+import { verdictSentence } from './faults/verdict-sentence'
+import { sitesOf } from './document/sites'
+import { outcomesOf } from './planner/outcomes'
+import { planNext, type Plan } from './planner/plan-next'
+import { nextWords } from './planner/wording'
+
+/** One site, or one group that cannot be told apart, is located when it holds this much. */
+const locatedFrom = 0.95
+/** With nothing wrong, a reading worth less than this is not worth taking. */
+const worthwhileBits = 0.05
+
+/**
+ * The evaluator: from a circuit and what was read to where the fault lies, what is proved good, and
+ * what to read next. The request comes from `openEvaluationRequest`, so it is sound.
+ */
+export function evaluate(request: EvaluationRequest): Answer {
+  const { circuit, readings, priors } = request
+  const model = faultModelOf(circuit)
+  const full = weighReadings(model, readings)
+  const fits = [full.good, ...full.cells.flat()].some((cell) => fitsAll(cell, readings))
+  const aside = readingToSetAside(model, readings, full, fits, priors)
+  const evidence = aside === null ? full : weighReadings(model, readings, new Set([aside]))
+  const posterior = posteriorOf(model, evidence, priors)
+  const kept = aside === null ? readings : readings.filter((_, r) => r !== aside)
+  const plan = planNext(model, posterior, kept)
+
+  const sites = sitesOf(circuit).map((site) => site.id)
+  const probabilities = siteProbabilities(model, posterior)
+  const cleared = clearances(model, full, readings, sites)
+  const judged = judgeReadings(model, readings, full)
+  const located = locatedGroup(probabilities, plan.inseparable)
+  const outcome = outcomeOf(
+    posterior,
+    plan,
+    located,
+    aside !== null,
+    judged.every((reading) => reading.agrees) && readings.length > 0,
+  )
+  const siteAnswers = sites
+    .map((site) =>
+      siteAnswer(site, model, posterior, probabilities.get(site) ?? 0, cleared.get(site)!, outcome, located),
+    )
+    .toSorted((a, b) => b.probability - a.probability)
+  const answer: Omit<Answer, 'says'> = {
+    outcome,
+    noFault: posterior.noFault,
+    sites: siteAnswers,
+    readings: judged,
+    ...(outcome === 'cannot-be' && aside !== null ? { reading: readings[aside]!.id } : {}),
+    next: plan.next.map((planned) => {
+      const outcomes = outcomesOf(planned, plan.particles)
+      return {
+        ...planned.probe,
+        bits: planned.bits,
+        minutes: planned.minutes,
+        outcomes,
+        says: nextWords(circuit, planned.probe, planned.minutes, outcomes),
+      }
+    }),
+    inseparable: plan.inseparable,
+  }
+  return { ...answer, says: verdictSentence(circuit, readings, answer) }
+}
+
+function outcomeOf(
+  posterior: Posterior,
+  plan: Plan,
+  located: readonly string[] | null,
+  misfit: boolean,
+  nothingWrong: boolean,
+): Outcome {
+  if (misfit) return 'cannot-be'
+  if (located) return 'located'
+  if (posterior.noFault >= locatedFrom) return 'no-fault'
+  return nothingWrong && plan.mostBits < worthwhileBits ? 'no-fault' : 'narrowed'
+}
+
+/** The site or inseparable group that holds 0.95, or null. */
+function locatedGroup(
+  probabilities: ReadonlyMap<string, number>,
+  inseparable: readonly string[][],
+): string[] | null {
+  const groups = [...[...probabilities.keys()].map((site) => [site]), ...inseparable]
+  return (
+    groups.find(
+      (group) => group.reduce((sum, site) => sum + (probabilities.get(site) ?? 0), 0) >= locatedFrom,
+    ) ?? null
+  )
+}
+
+function siteAnswer(
+  site: string,
+  model: FaultModel,
+  posterior: Posterior,
+  probability: number,
+  clearance: Clearance,
+  outcome: Outcome,
+  located: readonly string[] | null,
+): SiteAnswer {
+  const good = clearance.cleared && outcome !== 'cannot-be'
+  const faulty = outcome === 'located' && located!.includes(site)
+  return {
+    site,
+    verdict: faulty ? 'faulty' : good ? 'proved-good' : 'in-question',
+    firm: good && clearance.firm,
+    clearedBy: good ? clearance.clearedBy : [],
+    probability,
+    modes: modesOf(site, model, posterior),
+  }
+}
+
+/** The ways in which a site may be at fault, most probable first, with the most likely severity of each. */
+function modesOf(site: string, model: FaultModel, posterior: Posterior): ModeAnswer[] {
+  const found = new Map<string, ModeAnswer & { heaviest: number; heaviestVariant: number }>()
+  model.hypotheses.forEach((hypothesis, h) => {
+    if (hypothesis.site !== site) return
+    const key = `${hypothesis.mode} ${hypothesis.other}`
+    const entry = found.get(key) ?? {
+      mode: hypothesis.mode,
+      probability: 0,
+      ohms: null,
+      other: hypothesis.other,
+      blows: hypothesis.blows,
+      heaviest: -1,
+      heaviestVariant: -1,
+    }
+    found.set(key, entry)
+    let variant = 0
+    hypothesis.cells.forEach((cell, c) => {
+      const mass = posterior.cells[h]![c]!
+      variant += mass
+      if (mass <= entry.heaviest) return
+      entry.heaviest = mass
+      entry.ohms = hasOhms(hypothesis.mode) ? Math.sqrt(cell.low * cell.high) : null
+    })
+    entry.probability += variant
+    if (variant > entry.heaviestVariant) {
+      entry.heaviestVariant = variant
+      entry.blows = hypothesis.blows
+    }
+  })
+  return [...found.values()]
+    .toSorted((a, b) => b.probability - a.probability)
+    .map(({ mode, probability, ohms, other, blows }) => ({ mode, probability, ohms, other, blows }))
+}
+
+function hasOhms(mode: ModeAnswer['mode']): boolean {
+  return mode === 'resistive' || mode.startsWith('short')
+}

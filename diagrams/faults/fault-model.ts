@@ -1,0 +1,71 @@
+import type { Circuit } from '../document/circuit-schema'
+import { conditionKey } from '../document/condition'
+import type { Probe, Reading } from '../document/reading-schema'
+import { buildNetwork } from '../solver/build-network'
+import type { Network } from '../solver/network'
+import type { Study } from '../solver/study'
+import { hypothesesOf, type Hypothesis } from './hypothesis'
+import { predictAll, studyFor, type PredictionTable } from './prediction-table'
+
+/** A circuit with all its hypotheses, and what each foretells for the readings asked so far. */
+export class FaultModel {
+  readonly network: Network
+  readonly hypotheses: readonly Hypothesis[]
+  private readonly tables = new Map<string, PredictionTable>()
+  private readonly studies = new Map<string, Study>()
+
+  constructor(readonly circuit: Circuit) {
+    this.network = buildNetwork(circuit)
+    this.hypotheses = hypothesesOf(circuit, this.network)
+  }
+
+  table(reading: Reading | Probe): PredictionTable {
+    const key = probeKey(this.circuit, reading)
+    let found = this.tables.get(key)
+    if (!found) {
+      // Bounded memory: a trace has tens of readings, not thousands.
+      if (this.tables.size > 300) this.tables.clear()
+      this.tables.set(key, (found = predictAll(this.study(reading), this.hypotheses, reading)))
+    }
+    return found
+  }
+
+  study(probe: Probe): Study {
+    const key = conditionKey(this.circuit, probe.condition)
+    let found = this.studies.get(key)
+    if (!found) {
+      if (this.studies.size > 300) this.studies.clear()
+      this.studies.set(key, (found = studyFor(this.network, probe)))
+    }
+    return found
+  }
+}
+
+/** The same key for the same measurement in an equal condition. */
+export function probeKey(circuit: Circuit, probe: Probe | Reading): string {
+  const what = leadsOf(probe)
+  return `${probe.kind} ${what} ${conditionKey(circuit, probe.condition)}`
+}
+
+function leadsOf(probe: Probe | Reading): string {
+  switch (probe.kind) {
+    case 'volts':
+    case 'ohms':
+      return `${probe.red}|${probe.black}`
+    case 'amps':
+      return probe.wire
+    case 'works':
+      return probe.node
+    case 'sees':
+      return probe.pin
+  }
+}
+
+const models = new WeakMap<Circuit, FaultModel>()
+
+/** Models are kept as long as their circuit is: a trace asks again with every reading. */
+export function faultModelOf(circuit: Circuit): FaultModel {
+  let found = models.get(circuit)
+  if (!found) models.set(circuit, (found = new FaultModel(circuit)))
+  return found
+}

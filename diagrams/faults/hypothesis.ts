@@ -1,0 +1,135 @@
+import type { Circuit } from '../document/circuit-schema'
+import { neighbourWires, sitesOf, type Mode } from '../document/sites'
+import { withBlown, type Alteration } from '../solver/alteration'
+import { blownFuses, drivingStudies, fuseBranch } from '../solver/blown-fuses'
+import { Case } from '../solver/case'
+import { blowsAtRatingTimes } from '../solver/constants'
+import { alterationOf, isShort, type FaultKind } from '../solver/fault-alteration'
+import type { Network } from '../solver/network'
+import type { Study } from '../solver/study'
+import { goodShow, showsBy, type Show } from './shows'
+import { severityGrid } from './severity-grid'
+
+/** A stretch of severities of one hypothesis, between two solved ones. */
+export interface Cell {
+  low: number
+  high: number
+  /** Part of the mode's odds that falls here; 0 for a cell kept only so that nothing is cleared too early. */
+  share: number
+}
+
+/** One way in which one site can be at fault, with the fuses it has blown, over a range of severities. */
+export interface Hypothesis {
+  site: string
+  mode: Mode
+  other: string | null
+  /** The wire at whose end a splice fails. */
+  wire: string | null
+  blows: string[]
+  /** Part of its mode's odds: a splice's ends and a wire's neighbours share them. */
+  part: number
+  cells: Cell[]
+  alteration(network: Network): Alteration
+}
+
+/** Moves of a point by more than this count as showing, volts. */
+const showsAtVolts = 0.4
+/** For clearing a site a little less is enough: tolerances may add what is missing. */
+const nearlyShowsAtVolts = 0.3
+/** Battery and tolerances move the current through a fuse by less than this either way. */
+const fuseSlack = { low: 0.88, high: 1.14 }
+
+/** Every hypothesis of a circuit that would show. Nothing else counts as a fault. */
+export function hypothesesOf(circuit: Circuit, network: Network): Hypothesis[] {
+  const studies = drivingStudies(network)
+  const good = goodShow(studies)
+  return sitesOf(circuit).flatMap((site) =>
+    site.modes.flatMap((mode) => {
+      const kinds = kindsOf(circuit, site.id, mode)
+      return kinds.flatMap((kind) => {
+        const part = (mode === 'short-to-wire' ? 0.5 : 1) / kinds.length
+        return variants(network, studies, good, kind).map(
+          ({ blows, cells }): Hypothesis => ({
+            site: kind.site,
+            mode: kind.mode,
+            other: kind.other ?? null,
+            wire: kind.wire ?? null,
+            blows,
+            part,
+            cells,
+            alteration: (in_) => withBlown(alterationOf(in_, kind), blows.map(fuseBranch)),
+          }),
+        )
+      })
+    }),
+  )
+}
+
+/** A splice fails at any one of its wires; a wire touches any one of its neighbours. */
+function kindsOf(circuit: Circuit, site: string, mode: Mode): FaultKind[] {
+  if (mode === 'short-to-wire')
+    return neighbourWires(circuit, site.slice(5)).map((other) => ({ site, mode, other }))
+  const splice =
+    site.startsWith('part:') && circuit.nodes.find((n) => n.kind === 'splice' && n.id === site.slice(5))
+  if (splice) {
+    const end = `${splice.id}.s`
+    return circuit.wires
+      .filter((w) => w.from === end || w.to === end)
+      .map((w) => ({ site, mode, wire: w.id }))
+  }
+  return [{ site, mode }]
+}
+
+/** The same fault once for each set of fuses it blows somewhere in its range. */
+function variants(
+  network: Network,
+  studies: Study[],
+  good: Show[],
+  kind: FaultKind,
+): { blows: string[]; cells: Cell[] }[] {
+  const grid = severityGrid(kind.mode)
+  const plain = alterationOf(network, kind)
+  const found = new Map<string, { blows: string[]; certain: boolean[]; possible: boolean[] }>()
+  const cache = new Map<string, Case[]>()
+  const mark = (index: number, blows: string[], certain: boolean) => {
+    const key = blows.toSorted().join(',')
+    let entry = found.get(key)
+    if (!entry) {
+      entry = { blows, certain: grid.map(() => false), possible: grid.map(() => false) }
+      found.set(key, entry)
+    }
+    entry.possible[index] = true
+    if (certain) entry.certain[index] = true
+  }
+  grid.forEach((severity, index) => {
+    if (!isShort(kind.mode) || network.fuses.length === 0) return mark(index, [], true)
+    const blown = (times: number) =>
+      blownFuses(network, studies, plain, severity, blowsAtRatingTimes * times, cache)
+    mark(index, blown(1), true)
+    mark(index, blown(fuseSlack.low), false)
+    mark(index, blown(fuseSlack.high), false)
+  })
+  return [...found.values()].flatMap(({ blows, certain, possible }) => {
+    const alteration = withBlown(plain, blows.map(fuseBranch))
+    const cases = studies.map((study) => new Case(study, alteration))
+    const moved = grid.map((severity, index) =>
+      near(possible, index) ? showsBy(cases, good, severity, showsAtVolts) : 0,
+    )
+    const cells: Cell[] = []
+    const last = Math.max(1, grid.length - 1)
+    for (let i = 0; i < last; i++) {
+      const j = Math.min(i + 1, grid.length - 1)
+      if (!possible[i] && !possible[j]) continue
+      const most = Math.max(moved[i]!, moved[j]!)
+      if (most <= nearlyShowsAtVolts) continue
+      // Where the fuse gives way inside a cell, both outcomes share it.
+      const share = (Number(certain[i]) + Number(certain[j])) / 2
+      cells.push({ low: grid[i]!, high: grid[j]!, share: most > showsAtVolts ? share : 0 })
+    }
+    return cells.length > 0 ? [{ blows, cells }] : []
+  })
+}
+
+function near(list: readonly boolean[], index: number): boolean {
+  return Boolean(list[index - 1] || list[index] || list[index + 1])
+}

@@ -1,0 +1,61 @@
+import type { Evidence } from './evidence'
+import type { FaultModel } from './fault-model'
+import type { Hypothesis } from './hypothesis'
+import { modeWeight, noFaultPrior } from './priors'
+import type { PriorKind } from './request'
+
+/** Probabilities of no fault and of every cell; they sum to 1. */
+export interface Posterior {
+  noFault: number
+  /** Same order as the model's hypotheses and their cells. */
+  cells: Float64Array[]
+  /** ln of the probability of the readings under all hypotheses together. */
+  logEvidence: number
+}
+
+export function posteriorOf(model: FaultModel, evidence: Evidence, kind: PriorKind): Posterior {
+  const logPrior = logPriors(model, kind)
+  const logNoFault = model.hypotheses.length === 0 ? 0 : Math.log(noFaultPrior)
+  const logs = model.hypotheses.map((hypothesis, h) =>
+    Float64Array.from(hypothesis.cells, (_, c) => logPrior[h]![c]! + evidence.cells[h]![c]!.logLikelihood),
+  )
+  const good = logNoFault + evidence.good.logLikelihood
+  let most = good
+  for (const list of logs) for (const log of list) most = Math.max(most, log)
+  let sum = Math.exp(good - most)
+  for (const list of logs) for (const log of list) sum += Math.exp(log - most)
+  return {
+    noFault: Math.exp(good - most) / sum,
+    cells: logs.map((list) => list.map((log) => Math.exp(log - most) / sum)),
+    logEvidence: most + Math.log(sum),
+  }
+}
+
+/** ln of each cell's share of the 0.9 that faults have before any reading. */
+function logPriors(model: FaultModel, kind: PriorKind): Float64Array[] {
+  // A mode's odds are spread over those of its severities that show.
+  const shareOf = new Map<string, number>()
+  const key = (h: Hypothesis) => `${h.site} ${h.mode} ${h.other} ${h.wire}`
+  for (const hypothesis of model.hypotheses)
+    for (const cell of hypothesis.cells)
+      shareOf.set(key(hypothesis), (shareOf.get(key(hypothesis)) ?? 0) + cell.share)
+  const weights = model.hypotheses.map((hypothesis) => {
+    const all = shareOf.get(key(hypothesis))!
+    const weight = modeWeight(model.circuit, hypothesis.site, hypothesis.mode, kind) * hypothesis.part
+    return Float64Array.from(hypothesis.cells, (cell) => (all > 0 ? (weight * cell.share) / all : 0))
+  })
+  let total = 0
+  for (const list of weights) for (const weight of list) total += weight
+  return weights.map((list) => list.map((weight) => Math.log(((1 - noFaultPrior) * weight) / total)))
+}
+
+/** Probability per site, for every site of the model. */
+export function siteProbabilities(model: FaultModel, posterior: Posterior): Map<string, number> {
+  const found = new Map<string, number>()
+  model.hypotheses.forEach((hypothesis, h) => {
+    let sum = found.get(hypothesis.site) ?? 0
+    for (const probability of posterior.cells[h]!) sum += probability
+    found.set(hypothesis.site, sum)
+  })
+  return found
+}

@@ -1,0 +1,115 @@
+import type { Probe } from '../document/reading-schema'
+import { noAlteration, type Alteration } from '../solver/alteration'
+import { buildNetwork } from '../solver/build-network'
+import { Case, type Settled } from '../solver/case'
+import type { Network } from '../solver/network'
+import { stateKey, Study, type States } from '../solver/study'
+import { chargingRange, restingRange, weakRange, type ScaleRange } from './battery-range'
+import type { Cell, Hypothesis } from './hypothesis'
+import { predict, type Prediction } from './prediction'
+
+/** What one cell foretells for one reading. */
+export interface CellPrediction {
+  /**
+   * Predictions that enclose the cell: both of its ends in every state its parts may be in. Null
+   * when the circuit may not come to rest, which foretells nothing.
+   */
+  bounds: Prediction[] | null
+  /** The two ends in the state they settle in; null when one does not settle. */
+  ends: readonly [Prediction, Prediction] | null
+}
+
+/** Relays and modules are looked at a little eager and a little reluctant: all that tolerances can do to them. */
+const eager = 0.89
+const reluctant = 1.12
+
+/** The good circuit as a hypothesis with one cell. */
+export const goodCell: Cell = { low: 0, high: 0, share: 1 }
+
+/** Predictions of one reading for the good circuit and every cell of every hypothesis. */
+export interface PredictionTable {
+  good: CellPrediction
+  /** Same order as the hypotheses and their cells. */
+  cells: CellPrediction[][]
+}
+
+export function predictAll(study: Study, hypotheses: readonly Hypothesis[], probe: Probe): PredictionTable {
+  return {
+    good: predictCells(study, noAlteration, [goodCell], probe)[0]!,
+    cells: hypotheses.map((hypothesis) =>
+      predictCells(study, hypothesis.alteration(study.network), hypothesis.cells, probe),
+    ),
+  }
+}
+
+export function predictCells(
+  study: Study,
+  alteration: Alteration,
+  cells: readonly Cell[],
+  probe: Probe,
+): CellPrediction[] {
+  const given = new Case(study, alteration)
+  const range = alteration.weak ? weakRange : study.condition.charging ? chargingRange : restingRange
+  const ends = new Map<number, EndStates | null>()
+  const endOf = (severity: number) => {
+    let found = ends.get(severity)
+    if (found === undefined) ends.set(severity, (found = settleEnd(given, severity, range)))
+    return found
+  }
+  const known = new Map<string, Prediction>()
+  const predicted = (states: States, severity: number): Prediction => {
+    const key = `${severity} ${stateKey(states)}`
+    let found = known.get(key)
+    if (!found)
+      known.set(
+        key,
+        (found = predict(given, given.solve(states, severity, scaleFor(given, severity)), probe)),
+      )
+    return found
+  }
+  return cells.map(({ low, high }) => {
+    const [a, b] = [endOf(low), endOf(high)]
+    if (!a || !b) return { bounds: null, ends: null }
+    const states = new Map([...a.possible, ...b.possible])
+    const bounds: Prediction[] = []
+    for (const state of states.values()) {
+      bounds.push(predicted(state, low))
+      if (high !== low) bounds.push(predicted(state, high))
+    }
+    return { bounds, ends: [predicted(a.settled.states, low), predicted(b.settled.states, high)] as const }
+  })
+}
+
+/** Predictions are linear in the battery, so a weak one is predicted for 12.6 V and scaled. */
+function scaleFor(given: Case, severity: number): number {
+  return given.alteration.weak ? 1 : given.scaleFor(severity)
+}
+
+interface EndStates {
+  settled: Settled
+  /** Every state the parts may be in, given battery and tolerances. */
+  possible: Map<string, States>
+}
+
+function settleEnd(given: Case, severity: number, range: ScaleRange): EndStates | null {
+  const settled = given.settle(severity)
+  if (!settled) return null
+  const possible = new Map([[stateKey(settled.states), settled.states]])
+  const { relays, modules, diodes } = given.study.network
+  if (relays.length + modules.length + diodes.length > 0)
+    for (const [scale, reluctance] of [
+      [range.high, eager],
+      [range.low, reluctant],
+    ] as const) {
+      const other = given.settle(severity, scale, reluctance)
+      if (!other) return null
+      possible.set(stateKey(other.states), other.states)
+    }
+  return { settled, possible }
+}
+
+/** A study for a probe's condition, with the leads it adds. */
+export function studyFor(network: Network, probe: Probe): Study {
+  const { added } = probe.condition
+  return new Study(added.length === 0 ? network : buildNetwork(network.circuit, added), probe.condition)
+}

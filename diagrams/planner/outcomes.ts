@@ -1,0 +1,79 @@
+import type { NextOutcome } from '../faults/answer'
+import type { Probe } from '../document/reading-schema'
+import type { Particle } from './particles'
+import type { PlannedReading } from './plan-next'
+import { resolution, type Bin } from './split'
+import { figure } from './wording'
+
+/** Outcomes rarer than this are not announced. */
+const leastProbability = 0.004
+const mostOutcomes = 4
+
+/** What each outcome of a reading would be about, between which figures, how likely, and which sites it leaves. */
+export function outcomesOf(planned: PlannedReading, particles: readonly Particle[]): NextOutcome[] {
+  const { probe, bins } = planned
+  let covered = 0
+  for (const bin of bins) covered += massOf(bin, particles)
+  return mergeSlivers(bins, particles)
+    .map((bin) => outcomeOf(probe, bin, particles, covered))
+    .filter((outcome) => outcome.probability >= leastProbability)
+}
+
+/** Keeps the heaviest outcomes apart and lets lighter ones join their nearest neighbour. */
+function mergeSlivers(bins: readonly Bin[], particles: readonly Particle[]): Bin[] {
+  const merged = bins.map((bin) => ({ ...bin, members: [...bin.members] }))
+  while (merged.length > mostOutcomes) {
+    let lightest = 0
+    for (let b = 1; b < merged.length; b++)
+      if (massOf(merged[b]!, particles) < massOf(merged[lightest]!, particles)) lightest = b
+    const left = merged[lightest - 1]
+    const right = merged[lightest + 1]
+    const sliver = merged[lightest]!
+    const gap = (a: number, b: number) => (b === Infinity ? Infinity : b - a)
+    const toLeft = left ? gap(left.high, sliver.low) : Infinity
+    const toRight = right ? gap(sliver.high, right.low) : Infinity
+    const into = left && (toLeft <= toRight || !right) ? left : right!
+    into.low = Math.min(into.low, sliver.low)
+    into.high = Math.max(into.high, sliver.high)
+    into.members.push(...sliver.members)
+    merged.splice(lightest, 1)
+  }
+  return merged
+}
+
+function outcomeOf(probe: Probe, bin: Bin, particles: readonly Particle[], covered: number): NextOutcome {
+  const bySite = new Map<string, number>()
+  let heaviest = 0
+  const mass = massOf(bin, particles)
+  for (const i of bin.members) {
+    const particle = particles[i]!
+    heaviest = Math.max(heaviest, particle.weight)
+    if (particle.site !== '') bySite.set(particle.site, (bySite.get(particle.site) ?? 0) + particle.weight)
+  }
+  const leaves = [...bySite]
+    .filter(([, weight]) => weight > 0.002 * mass)
+    .toSorted((a, b) => b[1] - a[1])
+    .map(([site]) => site)
+  const probability = covered > 0 ? mass / covered : 0
+  if (probe.kind === 'works') return { about: bin.high >= 0.5 ? 'works' : 'does not', probability, leaves }
+  if (bin.low === Infinity) return { about: 'OL', probability, leaves }
+  const high = bin.high === Infinity ? bin.low : bin.high
+  const typical = bin.low === 0 ? 0 : (bin.low + high) / 2
+  const slack = resolution(probe.kind, high)
+  return {
+    about:
+      high - bin.low > 2 * slack
+        ? `${figure(probe.kind, bin.low)} to ${figure(probe.kind, high)}`
+        : figure(probe.kind, typical),
+    low: probe.kind === 'ohms' ? Math.max(0, bin.low - slack) : bin.low - slack,
+    high: high + slack,
+    probability,
+    leaves,
+  }
+}
+
+function massOf(bin: Bin, particles: readonly Particle[]): number {
+  let mass = 0
+  for (const i of bin.members) mass += particles[i]!.weight
+  return mass
+}

@@ -1,0 +1,86 @@
+import type { Probe } from '../document/reading-schema'
+import { ohmmeterLimitOhms } from '../solver/constants'
+
+/** Particles that a reading would show alike. */
+export interface Bin {
+  /** Smallest and largest figure in it; Infinity for OL, 0 or 1 for a load. */
+  low: number
+  high: number
+  /** Indices of its particles. */
+  members: number[]
+}
+
+/** How far apart two figures must be to be told apart: meter, and parts a little off the drawing. */
+export function resolution(kind: Probe['kind'], value: number): number {
+  switch (kind) {
+    case 'volts':
+      return 0.08 + 0.025 * Math.abs(value)
+    case 'ohms':
+      return 0.35 + 0.06 * Math.abs(value)
+    case 'amps':
+      return 0.15 + 0.08 * Math.abs(value)
+    default:
+      return 0.5
+  }
+}
+
+/** Sorts particles into what the meter can tell apart. Particles that foretell nothing (NaN) are left out. */
+export function binsOf(kind: Probe['kind'], row: Float64Array): Bin[] {
+  const order: number[] = []
+  for (let i = 0; i < row.length; i++) if (!Number.isNaN(row[i]!)) order.push(i)
+  const shown = (i: number) => (kind === 'ohms' && row[i]! > ohmmeterLimitOhms ? Infinity : row[i]!)
+  order.sort((x, y) => (shown(x) === shown(y) ? 0 : shown(x) - shown(y)))
+  const bins: Bin[] = []
+  let bin: Bin | undefined
+  let before = 0
+  for (const i of order) {
+    const value = shown(i)
+    // A gap parts bins; a long stretch without one is cut as well.
+    if (
+      !bin ||
+      value - before > resolution(kind, before) ||
+      value - bin.low > 3 * resolution(kind, bin.low)
+    ) {
+      bin = { low: value, high: value, members: [] }
+      bins.push(bin)
+    }
+    bin.high = value
+    bin.members.push(i)
+    before = value
+  }
+  return bins
+}
+
+/** Expected drop in entropy over units, bits. `unitOf[i]` numbers the unit of particle i. */
+export function bitsOf(
+  bins: readonly Bin[],
+  weights: Float64Array,
+  unitOf: Int32Array,
+  units: number,
+): number {
+  let covered = 0
+  const total = new Float64Array(units)
+  const inside = new Float64Array(units)
+  let conditional = 0
+  for (const bin of bins) {
+    let mass = 0
+    for (const i of bin.members) {
+      inside[unitOf[i]!]! += weights[i]!
+      total[unitOf[i]!]! += weights[i]!
+      mass += weights[i]!
+    }
+    covered += mass
+    let sum = 0
+    for (const i of bin.members) {
+      const unit = unitOf[i]!
+      const part = inside[unit]!
+      if (part > 0) sum -= part * Math.log2(part / mass)
+      inside[unit] = 0
+    }
+    conditional += sum
+  }
+  if (covered <= 0) return 0
+  let whole = 0
+  for (const part of total) if (part > 0) whole -= part * Math.log2(part / covered)
+  return Math.max(0, whole - conditional)
+}
