@@ -1,4 +1,4 @@
-import { type Expression, type SqlBool, sql } from 'kysely'
+import { type RawBuilder, type SqlBool, sql } from 'kysely'
 import { colourKey, endOfBeginning, textKey, wordsOf } from '../circuits/search-keys'
 import type { Trx } from '../tables/database'
 
@@ -75,7 +75,7 @@ function codeBeginning(finders: Finders): string {
 }
 
 /** The code asked for, else the circuit's first, with its text. */
-function codeOf(finders: Finders, part: 'code_key' | 'text'): Expression<string | null> {
+function codeOf(finders: Finders, part: 'code_key' | 'text'): RawBuilder<string | null> {
   const start = codeBeginning(finders)
   return sql<string | null>`(
     select ${part === 'text' ? sql`code.rest ->> 'text'` : sql`code.code_key`} from circuit_codes as code

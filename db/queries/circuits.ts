@@ -142,3 +142,14 @@ async function clearCircuit(trx: Trx, key: CircuitKey): Promise<void> {
       .where('circuit_id', '=', key.circuit_id)
       .execute()
 }
+
+/** True for the id of any circuit, deleted ones included. */
+export async function isCircuitIdUsed(trx: Trx, organisationId: string, id: string): Promise<boolean> {
+  const row = await trx
+    .selectFrom('circuits')
+    .select('id')
+    .where('organisation_id', '=', organisationId)
+    .where('id', '=', id)
+    .executeTakeFirst()
+  return row !== undefined
+}

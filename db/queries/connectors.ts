@@ -80,3 +80,20 @@ export function otherUsers(
     .orderBy('circuit.title')
     .execute()
 }
+
+/** Ids of the vehicle's connectors that a circuit uses as it is stored. */
+export async function connectorsOfCircuit(
+  trx: Trx,
+  organisationId: string,
+  vehicleId: string,
+  circuitId: string,
+): Promise<Set<string>> {
+  const rows = await trx
+    .selectFrom('circuit_connectors')
+    .select('connector')
+    .where('organisation_id', '=', organisationId)
+    .where('circuit_id', '=', circuitId)
+    .where('vehicle_id', '=', vehicleId)
+    .execute()
+  return new Set(rows.map((row) => row.connector))
+}

@@ -8,15 +8,16 @@ export interface Vehicle {
 
 /**
  * The vehicle of a title, made if it is new, and locked: whoever changes its connectors or circuits waits here.
- * A blank title is nobody else's vehicle, so `id` then names a new one, or the nameless one the circuit has.
+ * Without a title it is the circuit's own, shares its id, and nobody else's.
  */
 export async function lockVehicle(
   trx: Trx,
   organisationId: string,
   title: string,
-  id: string,
+  { circuitId, newId }: { circuitId: string; newId: string },
 ): Promise<Vehicle> {
   const key = textKey(title)
+  const id = key === '' ? circuitId : newId
   await trx
     .insertInto('vehicles')
     .values({ organisation_id: organisationId, id, title: title.trim(), title_key: key })

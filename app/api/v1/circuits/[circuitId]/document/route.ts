@@ -1,0 +1,24 @@
+import { route } from '@/lib/server/http/route'
+import { getCircuit } from '@/lib/server/use-cases/circuits/get-circuit'
+
+/** The document as a file, which imports again as it is. */
+export const GET = route({
+  use: (context, { params }) => getCircuit(context, { id: params.circuitId ?? '' }),
+  respond: ({ document }) =>
+    new Response(`${JSON.stringify(document, null, 2)}\n`, {
+      headers: {
+        'content-type': 'application/json; charset=utf-8',
+        'content-disposition': `attachment; filename="${fileName(document.title)}"`,
+        'cache-control': 'no-store',
+      },
+    }),
+})
+
+function fileName(title: string): string {
+  const plain = title
+    .normalize('NFKD')
+    .replace(/[^A-Za-z0-9]+/g, '-')
+    .replace(/^-|-$/g, '')
+    .toLowerCase()
+  return `${plain || 'circuit'}.halfsplit.json`
+}

@@ -1,0 +1,29 @@
+import { fail, type Result, succeed } from '@/lib/shared/result'
+
+export const mostBodyBytes = 2 * 1024 * 1024
+
+/** The JSON body. One over 2 MB is refused at the byte that is too many, without reading on. */
+export async function readJsonBody(request: Request): Promise<Result<unknown>> {
+  const type = request.headers.get('content-type') ?? ''
+  if (!/^application\/json\s*(;|$)/i.test(type)) return fail('not-json')
+  if (Number(request.headers.get('content-length') ?? 0) > mostBodyBytes) return fail('too-large')
+  const chunks: Uint8Array[] = []
+  let bytes = 0
+  const reader = request.body?.getReader()
+  while (reader) {
+    const { done, value } = await reader.read()
+    if (done) break
+    bytes += value.byteLength
+    if (bytes > mostBodyBytes) {
+      await reader.cancel().catch(() => {})
+      return fail('too-large')
+    }
+    chunks.push(value)
+  }
+  try {
+    const text = new TextDecoder('utf-8', { fatal: true }).decode(Buffer.concat(chunks))
+    return succeed(JSON.parse(text) as unknown)
+  } catch {
+    return fail('bad-request', { message: 'The body is not JSON.' })
+  }
+}
