@@ -52,11 +52,11 @@ export function relaySymbol(node: NodeOf<'relay'>, state: PartState): Primitive[
     ...(changeover ? [inkPath(`M${width} 80H86V96`, undefined, 'none'), inkRound(86, 99, 3.6)] : []),
     inkLine(36, 120, 82, bladeY),
     inkRound(34, 120, 3.6),
-    ink(8, 62, '86', 'start'),
-    ink(width - 8, 62, '85', 'end'),
+    ink(8, 58, '86', 'start'),
+    ink(width - 8, 58, '85', 'end'),
     ink(8, 142, '30', 'start'),
     ...(maker ? [ink(width - 8, 142, '87', 'end')] : []),
-    ...(changeover ? [ink(width - 8, 98, '87a', 'end')] : []),
+    ...(changeover ? [ink(width - 7, 75, '87a', 'end')] : []),
     note(54, 78, `${node.coilOhms} ohm`, 'end'),
   ]
 }

@@ -75,16 +75,21 @@ function candidates(route: readonly Place[], width: number, size: { width: numbe
     const level = from.y === to.y
     const middleX = (from.x + to.x) / 2
     const middleY = (from.y + to.y) / 2
-    return shifts.flatMap((shift) =>
-      level
-        ? [
-            { x: middleX + shift * long - size.width / 2, y: middleY - off - size.height, ...size },
-            { x: middleX + shift * long - size.width / 2, y: middleY + off, ...size },
-          ]
-        : [
-            { x: middleX + off, y: middleY + shift * long - size.height / 2, ...size },
-            { x: middleX - off - size.width, y: middleY + shift * long - size.height / 2, ...size },
-          ],
+    // The whole run's own side before the other one: a label between two parallel wires could mean either.
+    return [-1, 1].flatMap((side) =>
+      shifts.map((shift) =>
+        level
+          ? {
+              x: middleX + shift * long - size.width / 2,
+              y: side < 0 ? middleY - off - size.height : middleY + off,
+              ...size,
+            }
+          : {
+              x: side < 0 ? middleX + off : middleX - off - size.width,
+              y: middleY + shift * long - size.height / 2,
+              ...size,
+            },
+      ),
     )
   })
 }

@@ -1,10 +1,14 @@
 import type { Circuit } from '../document/circuit-schema'
 import { openCircuit } from '../document/open-circuit'
+import { busPair } from './bus-pair'
 import { coolingFan } from './cooling-fan'
+import { fuelSender } from './fuel-sender'
+import { heatedMirrors } from './heated-mirrors'
 import { lampRequestLine } from './lamp-request-line'
 import type { SampleDocument } from './sample-document'
 import { tailgateButton } from './tailgate-button'
 import { trailerLamps } from './trailer-lamps'
+import { windowMotor } from './window-motor'
 
 /** The sample circuits in rising difficulty, as the demo shop and school hold them. */
 export const sampleDocuments: readonly SampleDocument[] = [
@@ -12,6 +16,10 @@ export const sampleDocuments: readonly SampleDocument[] = [
   tailgateButton,
   coolingFan,
   trailerLamps,
+  fuelSender,
+  busPair,
+  windowMotor,
+  heatedMirrors,
 ]
 
 export const samples: Circuit[] = sampleDocuments.map(open)
