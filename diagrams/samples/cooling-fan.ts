@@ -92,11 +92,11 @@ export const coolingFan: SampleDocument = {
       x: 40,
       y: 60,
     },
-    { id: 'f21', kind: 'fuse', label: 'F21', amps: 10, x: 140, y: 60, accessMinutes: 1 },
-    { id: 's2', kind: 'splice', label: 'S2', x: 300, y: 60, accessMinutes: 10 },
+    { id: 'f21', kind: 'fuse', label: 'F21', amps: 10, x: 160, y: 60, accessMinutes: 1 },
+    { id: 's2', kind: 'splice', label: 'S2', x: 320, y: 60, accessMinutes: 10 },
     { id: 'a1', kind: 'feed', label: 'A1 feed', x: 40, y: 260 },
-    { id: 'f20', kind: 'fuse', label: 'F20', amps: 40, style: 'link', x: 140, y: 260, accessMinutes: 2 },
-    { id: 's1', kind: 'splice', label: 'S1', x: 220, y: 260, accessMinutes: 10 },
+    { id: 'f20', kind: 'fuse', label: 'F20', amps: 40, style: 'link', x: 160, y: 260, accessMinutes: 2 },
+    { id: 's1', kind: 'splice', label: 'S1', x: 260, y: 260, accessMinutes: 10 },
     {
       id: 'k1',
       kind: 'relay',
@@ -195,7 +195,7 @@ export const coolingFan: SampleDocument = {
       signal: 'relay coil feed',
       mm2: 0.75,
       length: 0.6,
-      bends: [{ x: 320, y: 320 }],
+      bends: [{ x: 340, y: 320 }],
     },
     {
       id: 'w5',
@@ -206,7 +206,7 @@ export const coolingFan: SampleDocument = {
       mm2: 1,
       length: 1.9,
       bends: [
-        { x: 320, y: 0 },
+        { x: 340, y: 0 },
         { x: 900, y: 0 },
         { x: 900, y: 40 },
       ],
@@ -261,7 +261,7 @@ export const coolingFan: SampleDocument = {
       signal: 'fan feed',
       mm2: 4,
       length: 0.5,
-      bends: [{ x: 240, y: 160 }],
+      bends: [{ x: 280, y: 160 }],
     },
     {
       id: 'w13',
@@ -271,7 +271,7 @@ export const coolingFan: SampleDocument = {
       signal: 'fan feed',
       mm2: 4,
       length: 0.5,
-      bends: [{ x: 240, y: 400 }],
+      bends: [{ x: 280, y: 400 }],
     },
     {
       id: 'w14',

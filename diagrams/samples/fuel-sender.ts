@@ -113,7 +113,7 @@ export const fuelSender: SampleDocument = {
       ],
     },
     { id: 't1', kind: 'splice', label: 'T1', x: 1080, y: 160, accessMinutes: 25 },
-    { id: 'r2', kind: 'resistor', label: 'R2', ohms: 360, x: 1160, y: 160, accessMinutes: 25 },
+    { id: 'r2', kind: 'resistor', label: 'R2', ohms: 360, x: 1180, y: 160, accessMinutes: 25 },
     { id: 't2', kind: 'splice', label: 'T2', x: 1080, y: 280, accessMinutes: 25 },
     { id: 'r3', kind: 'resistor', label: 'R3', ohms: 120, x: 920, y: 280, accessMinutes: 25 },
   ],
@@ -203,8 +203,8 @@ export const fuelSender: SampleDocument = {
       mm2: 0.35,
       length: 0.1,
       bends: [
-        { x: 1280, y: 180 },
-        { x: 1280, y: 300 },
+        { x: 1300, y: 180 },
+        { x: 1300, y: 300 },
       ],
     },
     {

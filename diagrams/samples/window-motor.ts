@@ -99,7 +99,7 @@ export const windowMotor: SampleDocument = {
       y: 60,
     },
     { id: 'f41', kind: 'fuse', label: 'F41', amps: 5, x: 120, y: 60, accessMinutes: 1 },
-    { id: 's20', kind: 'splice', label: 'S20', x: 500, y: 60, accessMinutes: 8 },
+    { id: 's20', kind: 'splice', label: 'S20', x: 480, y: 60, accessMinutes: 8 },
     {
       id: 'm4',
       kind: 'load',
@@ -201,7 +201,7 @@ export const windowMotor: SampleDocument = {
       signal: 'relay coil feed',
       mm2: 0.5,
       length: 0.4,
-      bends: [{ x: 520, y: 320 }],
+      bends: [{ x: 500, y: 320 }],
     },
     {
       id: 'w7',
@@ -212,7 +212,7 @@ export const windowMotor: SampleDocument = {
       mm2: 0.75,
       length: 2.1,
       bends: [
-        { x: 520, y: 0 },
+        { x: 500, y: 0 },
         { x: 960, y: 0 },
         { x: 960, y: 40 },
       ],
