@@ -12,6 +12,7 @@ export function answerFailure({ code, message, path, details }: Failure): Respon
   const body: ErrorBody = {
     error: { code, message, ...(path ? { path } : {}), ...(details ? { details } : {}) },
   }
-  const retry = code === 'too-many-attempts' ? { 'retry-after': '900' } : {}
-  return Response.json(body, { status: errors[code].status, headers: { ...headers, ...retry } })
+  const response = Response.json(body, { status: errors[code].status, headers })
+  if (code === 'too-many-attempts') response.headers.set('retry-after', '900')
+  return response
 }

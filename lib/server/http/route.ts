@@ -1,4 +1,4 @@
-import { fail, type Result } from '@/lib/shared/result'
+import { fail, type Result, succeed } from '@/lib/shared/result'
 import type { Context, OpenContext } from '../context'
 import { answerFailure, answerWith } from './answer'
 import { attempt } from './attempt'
@@ -15,43 +15,45 @@ interface Parts {
   body: unknown
 }
 
-interface Spec<T> {
+interface Spec<C, T> {
   /** Takes a JSON body of at most 2 MB. */
   body?: boolean
   status?: number
-  use: (context: Context, parts: Parts) => Promise<Result<T>>
+  use: (context: C, parts: Parts) => Promise<Result<T>>
   /** Makes the answer of a success, where it is not plain JSON. */
   respond?: (value: T) => Response
-}
-
-interface OpenSpec<T> extends Omit<Spec<T>, 'use'> {
-  /** For everybody, signed in or not. */
-  open: true
-  use: (context: OpenContext, parts: Parts) => Promise<Result<T>>
 }
 
 type Handler = (request: Request, segment: { params: Promise<Record<string, string>> }) => Promise<Response>
 
 /** The one wrapper of every route: same origin, session, body and limits on the way in, errors on the way out. */
-export function route<T>(spec: Spec<T> | OpenSpec<T>): Handler {
+export function route<T>(spec: Spec<Context, T>): Handler {
+  return serve(spec, async (request) => {
+    const session = await sessionOfCookie(openContext().db, cookieOf(request, sessionCookieName()))
+    return session ? succeed(contextFor(session.actor)) : fail('not-signed-in')
+  })
+}
+
+/** The same for everybody, signed in or not. */
+export function openRoute<T>(spec: Spec<OpenContext, T>): Handler {
+  return serve(spec, async () => succeed(openContext()))
+}
+
+function serve<C, T>(spec: Spec<C, T>, contextOf: (request: Request) => Promise<Result<C>>): Handler {
   return async (request, segment) => {
     const result = await attempt(async () => {
       const reads = request.method === 'GET' || request.method === 'HEAD'
       if (!reads && !isSameOrigin(request)) return fail('wrong-origin')
-      const session =
-        'open' in spec
-          ? null
-          : await sessionOfCookie(openContext().db, cookieOf(request, sessionCookieName()))
-      if (!('open' in spec) && !session) return fail('not-signed-in')
-      const body = spec.body ? await readJsonBody(request) : undefined
-      if (body && !body.ok) return body
-      const parts: Parts = {
+      // Before the body: nobody unknown gets two megabytes read.
+      const context = await contextOf(request)
+      if (!context.ok) return context
+      const body = spec.body ? await readJsonBody(request) : succeed(undefined)
+      if (!body.ok) return body
+      return spec.use(context.value, {
         params: await segment.params,
         query: Object.fromEntries(new URL(request.url).searchParams),
-        body: body?.value,
-      }
-      if ('open' in spec) return spec.use(openContext(), parts)
-      return session ? spec.use(contextFor(session.actor), parts) : fail('not-signed-in')
+        body: body.value,
+      })
     })
     if (!result.ok) return answerFailure(result.failure)
     return spec.respond ? spec.respond(result.value) : answerWith(result.value, spec.status ?? 200)

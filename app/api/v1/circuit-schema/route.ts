@@ -1,9 +1,8 @@
 import { circuitJsonSchema } from '@/diagrams/document/json-schema'
-import { route } from '@/lib/server/http/route'
+import { openRoute } from '@/lib/server/http/route'
 import { succeed } from '@/lib/shared/result'
 
-export const GET = route({
-  open: true,
+export const GET = openRoute({
   use: async () => succeed(circuitJsonSchema()),
   respond: (schema) => Response.json(schema, { headers: { 'content-type': 'application/schema+json' } }),
 })
