@@ -4,7 +4,6 @@ import { keepPreviousData, useInfiniteQuery, useQuery } from '@tanstack/react-qu
 import { useEffect, useRef, useState } from 'react'
 import { allOpenTracesQuery, circuitsQuery } from '@/lib/client/api/circuits'
 import type { CircuitPage } from '@/lib/shared/api/circuits'
-import type { TraceList } from '@/lib/shared/api/traces'
 import { Band } from '../ui/band'
 import { Button, ButtonLink } from '../ui/button'
 import { classNames } from '../ui/class-names'
@@ -23,12 +22,10 @@ import { useSettled } from './use-settled'
 export function CircuitsScreen({
   initialFinders,
   initialPage,
-  initialTraces,
   mayCreate,
 }: {
   initialFinders: Finders
   initialPage: CircuitPage | null
-  initialTraces: TraceList | null
   mayCreate: boolean
 }) {
   const [finders, setFinders] = useState(initialFinders)
@@ -43,7 +40,7 @@ export function CircuitsScreen({
         ? { pages: [initialPage], pageParams: [null] }
         : undefined,
   })
-  const traces = useQuery({ ...allOpenTracesQuery(), initialData: initialTraces ?? undefined })
+  const traces = useQuery(allOpenTracesQuery())
 
   // The address follows the finders, so that a search can be sent to someone and the way back finds it again.
   useEffect(() => {

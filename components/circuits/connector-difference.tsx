@@ -2,6 +2,7 @@
 
 import { useState } from 'react'
 import type { ConnectorChoice } from '@/lib/shared/api/circuits'
+import { errors } from '@/lib/shared/errors'
 import type { Failure } from '@/lib/shared/result'
 import { Button } from '../ui/button'
 import { Choice } from '../ui/choice'
@@ -35,7 +36,7 @@ export function ConnectorDifference({
         <Triangle size={24} />
         <div className="min-w-0 flex-1" role="alert">
           <h2 id="difference" className="text-lead">
-            {failure.message}
+            {errors[failure.code].sentence}
           </h2>
           {failure.details && (
             <ul className="mt-2">

@@ -50,7 +50,7 @@ export function Landing() {
             {steps.map((step) => (
               <div
                 key={step.title}
-                className="border-edge px-4 tablet:px-5 py-5 max-tablet:border-b tablet:not-last:border-r"
+                className="border-edge px-4 tablet:px-5 py-5 max-tablet:border-b tablet:not-last:border-r min-[75rem]:first:pl-0"
               >
                 <h2 className="text-lead">{step.title}</h2>
                 <p className="mt-2 text-body text-ink-2">{step.text}</p>

@@ -1,7 +1,9 @@
 'use client'
 
 import { createContext, type ReactNode, useContext } from 'react'
+import type { ChooseMembership } from '@/lib/shared/api/account'
 import type { Role } from '@/lib/shared/permissions'
+import type { Result } from '@/lib/shared/result'
 
 /** Who is signed in, as the screens show it. What may be done is decided by the use cases. */
 export interface ActorView {
@@ -12,8 +14,8 @@ export interface ActorView {
   memberships: { organisationId: string; organisation: string; role: Role }[]
 }
 
-/** Changes the organisation one works in; a sentence when that was refused. */
-export type ChooseOrganisation = (organisationId: string) => Promise<string | null>
+/** Changes the organisation one works in. */
+export type ChooseOrganisation = (input: ChooseMembership) => Promise<Result<null>>
 
 const ActorContext = createContext<{ actor: ActorView; choose?: ChooseOrganisation } | null>(null)
 

@@ -23,11 +23,15 @@ export function OrganisationSwitch({ actor }: { actor: ActorView }) {
               disabled={going !== null}
               onClick={async () => {
                 setGoing(entry.organisationId)
-                const refused = await choose(entry.organisationId)
+                try {
+                  const chosen = await choose({ organisationId: entry.organisationId })
+                  // Nothing of the shop just left may stay on the screen or in memory.
+                  if (chosen.ok) return location.assign('/circuits')
+                  setFailure(chosen.failure.message)
+                } catch {
+                  setFailure('The server did not answer. Try again when it is back.')
+                }
                 setGoing(null)
-                // Nothing of the shop just left may stay on the screen or in memory.
-                if (refused) setFailure(refused)
-                else location.assign('/circuits')
               }}
             >
               {entry.organisation}
