@@ -1,7 +1,7 @@
 import type { Alteration } from './alteration'
 import { nominalBatteryVolts } from './constants'
 import { solveInPlace, type Factor } from './factor'
-import { solveSources, stateKey, type Base, type States, type Study } from './study'
+import { stateKey, type Base, type States, type Study } from './study'
 
 /**
  * One state of a faulted network, ready for every severity.
@@ -184,8 +184,8 @@ function locate(study: Study, alteration: Alteration, states: States): Located {
       ownOhms: 1 / conductance,
       emfBattery: base.emfBattery[branch]!,
       emfFixed: base.emfFixed[branch]!,
-      voltsBattery: solveSources(network, factor, base.conductance, base.emfBattery, branch),
-      voltsFixed: solveSources(network, factor, base.conductance, base.emfFixed, branch),
+      voltsBattery: study.solveSources(factor, base.conductance, base.emfBattery, branch),
+      voltsFixed: study.solveSources(factor, base.conductance, base.emfFixed, branch),
     }
   }
   if (alteration.shunt) {

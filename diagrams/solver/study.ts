@@ -4,6 +4,9 @@ import { leakSiemens, nominalBatteryVolts, nominalChargingVolts } from './consta
 import { factorise, solveInPlace, type Factor } from './factor'
 import { nowhere, type Forced, type Network, type Setting } from './network'
 
+/** Above this a source between two floating unknowns is solved by its loop, amperes of its Norton current. */
+const loopFromAmps = 1
+
 /** Which relays have pulled in, which modules are awake, which diodes conduct. */
 export interface States {
   relays: boolean[]
@@ -59,6 +62,46 @@ export class Study {
     return factorNetwork(this.network, conductance, without, this.leak)
   }
 
+  /**
+   * Volts per unknown that the given source volts cause, with branch `without` left out.
+   *
+   * A source becomes a current E·g put in at a and taken out at b. Between a battery's poles that is
+   * hundreds of amperes in and out, whose rounding would put a floating harness off by a millivolt.
+   * Such a source is left out instead: with z the volts for one ampere from b to a and
+   * R = z(a) − z(b), it drives E/(1/g + R) round its loop, and v = z · E/(1/g + R).
+   */
+  solveSources(factor: Factor, conductance: Float64Array, emf: Float64Array, without: number): Float64Array {
+    const { network } = this
+    const x = new Float64Array(network.size)
+    const loops: number[] = []
+    let any = false
+    for (let i = 0; i < emf.length; i++) {
+      if (emf[i] === 0 || i === without) continue
+      const amps = emf[i]! * conductance[i]!
+      const { a, b } = network.branches[i]!
+      if (a >= 0 && b >= 0 && Math.abs(amps) > loopFromAmps) {
+        loops.push(i)
+        continue
+      }
+      any = true
+      if (a >= 0) x[a]! += amps
+      if (b >= 0) x[b]! -= amps
+    }
+    if (any) solveInPlace(factor, x)
+    for (const i of loops) {
+      const { a, b } = network.branches[i]!
+      const others = conductance.slice()
+      if (without >= 0) others[without] = 0
+      const z = new Float64Array(network.size)
+      z[a] = 1
+      z[b] = -1
+      solveInPlace(this.factorWithout(others, i), z)
+      const amps = emf[i]! / (1 / conductance[i]! + Math.max(0, z[a]! - z[b]!))
+      for (let k = 0; k < x.length; k++) x[k]! += amps * z[k]!
+    }
+    return x
+  }
+
   base(states: States, forced: Forced): Base {
     const key = stateKey(states) + forced.key
     let found = this.bases.get(key)
@@ -94,8 +137,8 @@ export class Study {
       emfBattery,
       emfFixed,
       factor,
-      voltsBattery: solveSources(network, factor, conductance, emfBattery, -1),
-      voltsFixed: solveSources(network, factor, conductance, emfFixed, -1),
+      voltsBattery: this.solveSources(factor, conductance, emfBattery, -1),
+      voltsFixed: this.solveSources(factor, conductance, emfFixed, -1),
     }
   }
 }
@@ -121,25 +164,4 @@ function factorNetwork(network: Network, conductance: Float64Array, without: num
     else toChassis[-1 - place]! += conductance[i]!
   }
   return factorise(network.order, edge, toChassis)
-}
-
-/** Volts per unknown that the given source volts cause, with branch `without` left out. */
-export function solveSources(
-  network: Network,
-  factor: Factor,
-  conductance: Float64Array,
-  emf: Float64Array,
-  without: number,
-): Float64Array {
-  const x = new Float64Array(network.size)
-  let any = false
-  for (let i = 0; i < emf.length; i++) {
-    if (emf[i] === 0 || i === without) continue
-    any = true
-    const amps = emf[i]! * conductance[i]!
-    const { a, b } = network.branches[i]!
-    if (a >= 0) x[a]! += amps
-    if (b >= 0) x[b]! -= amps
-  }
-  return any ? solveInPlace(factor, x) : x
 }
