@@ -51,9 +51,9 @@ module.exports = {
     {
       name: 'diagrams-layers-only',
       severity: 'error',
-      comment: `A file of diagrams/ belongs to a layer: ${Object.keys(layers).join(', ')}.`,
+      comment: `A file of diagrams/ belongs to a layer (${Object.keys(layers).join(', ')}) or is a front door over all of them.`,
       from: {},
-      to: { path: '^diagrams/', pathNot: `^diagrams/(${Object.keys(layers).join('|')})/` },
+      to: { path: '^diagrams/', pathNot: `^diagrams/((${Object.keys(layers).join('|')})/|[^/]+$)` },
     },
     ...mayImport('db', { path: '^db/' }, ['^db/', '^diagrams/', ...packages('kysely', 'pg')], {
       core: true,

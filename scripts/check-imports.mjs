@@ -36,10 +36,10 @@ function importProblems() {
   ]
 }
 
-/** `"use client"` marks a border of the product; it may run through components/ only. */
+/** `"use client"` marks a border of the product; it runs through components/, and where Next itself demands it. */
 function directiveProblems() {
   return sourceFiles()
-    .filter((file) => !file.startsWith('components/'))
+    .filter((file) => !file.startsWith('components/') && !/^app\/(.*\/)?(global-)?error\.tsx$/.test(file))
     .filter((file) =>
       /^\s*(\/\/[^\n]*\n\s*|\/\*[\s\S]*?\*\/\s*)*['"]use client['"]/.test(
         readFileSync(path.join(target, file), 'utf8'),

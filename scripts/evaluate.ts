@@ -9,7 +9,8 @@ for await (const line of lines) {
   if (line.trim() === '') continue
   const answer = JSON.stringify(answerTo(line))
   // Wait for a slow reader instead of piling answers up.
-  if (!process.stdout.write(`${answer}\n`)) await new Promise((resume) => process.stdout.once('drain', resume))
+  if (!process.stdout.write(`${answer}\n`))
+    await new Promise((resume) => process.stdout.once('drain', resume))
 }
 
 function answerTo(line: string): object {
@@ -17,7 +18,9 @@ function answerTo(line: string): object {
   try {
     input = JSON.parse(line)
   } catch (error) {
-    return { error: { path: '', message: `not JSON: ${error instanceof Error ? error.message : String(error)}` } }
+    return {
+      error: { path: '', message: `not JSON: ${error instanceof Error ? error.message : String(error)}` },
+    }
   }
   const opened = openEvaluationRequest(input)
   return opened.ok ? evaluate(opened.value) : { error: opened.problems[0] }
