@@ -1,49 +1,55 @@
 'use client'
 
+import { currentChevrons } from '@/diagrams/drawing/current-chevron'
+import { drawNotes } from '@/diagrams/drawing/drawn-notes'
+import { shortTail } from '@/diagrams/drawing/short-tail'
 import { verdictGlyph } from '@/diagrams/drawing/verdict-mark'
-import { chevrons } from './chevrons'
-import { FlagDrawing } from './flag-drawing'
-import { useInks } from './inks'
 import { Primitives } from './primitives'
 import type { PlacedMark, Scene } from './scene'
+import { WireLabelDrawing } from './wire-drawing'
 
-/** All that lies over the wires and parts: chevrons, tails of shorts, glyphs, flags. In the sheet's coordinates. */
-export function MarksDrawing({ scene }: { scene: Scene }) {
-  const { paint, text } = useInks()
-  const { amps, letters } = scene.overlay
+/** Under this size of the sheet only picked wires and those in question keep their labels. */
+const labelsFrom = 0.7
+
+/** All that lies over wires and parts: labels, chevrons, tails of shorts, glyphs, plates and flags. */
+export function MarksDrawing({ scene, zoom = 1 }: { scene: Scene; zoom?: number }) {
+  const { verdicts, wireAmps, tails } = scene.overlay
+  const wires = [...scene.wires.values()]
   return (
     <g>
-      {amps &&
-        [...scene.wires.values()].map((drawn) => (
-          <Primitives key={drawn.wire.id} of={chevrons(drawn.route, amps.get(drawn.wire.id) ?? 0)} />
+      {wires
+        .filter(
+          ({ wire }) =>
+            zoom >= labelsFrom ||
+            scene.picked === wire.id ||
+            verdicts?.get(`wire:${wire.id}`) === 'in-question' ||
+            verdicts?.get(`wire:${wire.id}`) === 'faulty',
+        )
+        .map((drawn) => (
+          <WireLabelDrawing key={drawn.wire.id} drawn={drawn} />
         ))}
-      {scene.tails.map((tail) => (
-        <Primitives key={tail.wire} of={tail.primitives} />
+      {wireAmps &&
+        wires.map(({ wire, route }) => (
+          <Primitives key={wire.id} of={currentChevrons(route, wire.mm2, wireAmps.get(wire.id) ?? 0)} />
+        ))}
+      {tails?.map((tail) => (
+        <Primitives key={tail.wire} of={shortTail(scene.circuit, tail)} />
       ))}
+      <Primitives of={drawNotes(scene.circuit)} />
       {scene.marks.filter(hasGlyph).map((mark) => (
-        <g key={mark.site}>
-          <Primitives of={verdictGlyph(mark.verdict, mark.glyph)} />
-          {letters?.has(mark.site) && (
-            <text
-              x={mark.glyph.x + 17}
-              y={mark.glyph.y + 5}
-              style={{ fill: paint('ink'), fontFamily: text, fontSize: '14px', fontWeight: 800 }}
-            >
-              {letters.get(mark.site)}
-            </text>
-          )}
-        </g>
+        <Primitives key={mark.site} of={verdictGlyph(mark.verdict, mark.glyph)} />
       ))}
-      {scene.flags.map((flag) => (
-        <FlagDrawing key={flag.id} flag={flag} />
+      {scene.plates.map((plate) => (
+        <Primitives key={plate.point} of={plate.primitives} />
+      ))}
+      {scene.flags.map((flag, index) => (
+        <Primitives key={`${flag.box.x} ${flag.box.y} ${index}`} of={flag.primitives} />
       ))}
     </g>
   )
 }
 
-/** A proved wire has its two rails and a proved contact its ring: ticks on parts only, so that the sheet stays quiet. */
-function hasGlyph(mark: PlacedMark): boolean {
-  if (mark.verdict === 'faulty') return true
-  if (mark.site.startsWith('wire:')) return mark.verdict === 'in-question'
-  return !mark.site.startsWith('contact:') || mark.ring === null || !mark.overBody
+/** Rails and rings say it for wires and contacts that are proved: a tick on each would hide the drawing. */
+function hasGlyph({ site, verdict }: PlacedMark): boolean {
+  return verdict !== 'proved-good' || !(site.startsWith('wire:') || site.startsWith('contact:'))
 }

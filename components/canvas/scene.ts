@@ -1,44 +1,20 @@
 import type { Circuit } from '@/diagrams/document/circuit-schema'
 import type { Node } from '@/diagrams/document/node-schema'
-import { type DrawnWire, drawWires } from '@/diagrams/drawing/drawn-wires'
-import { type Moment, type PartState, partState } from '@/diagrams/drawing/part-state'
-import type { Box } from '@/diagrams/drawing/primitive'
+import { type DrawnWire, drawWires, labelObstacles } from '@/diagrams/drawing/drawn-wires'
+import type { Overlay } from '@/diagrams/drawing/overlay'
+import { type PartState, partState } from '@/diagrams/drawing/part-state'
+import { type Box, grow, type Place } from '@/diagrams/drawing/primitive'
+import { type PlacedFlag, readingFlags } from '@/diagrams/drawing/reading-flag'
 import { type PlaceMark, placeMark } from '@/diagrams/drawing/verdict-mark'
-import type { Verdict } from '@/diagrams/faults/answer'
-import { type Flag, type FlagWish, layFlags } from './flag-layout'
-import { type ShortTail, shortTails, type ShortFound } from './short-tail'
-
-/** What is laid over a circuit on the sheet. */
-export interface Overlay {
-  /** By site; empty before the first reading. */
-  verdicts: ReadonlyMap<string, Verdict>
-  moment: Moment
-  /** Readings, the next target, volts of points: plates that point at something. */
-  flags: readonly FlagWish[]
-  /** Current in each wire, ampere, positive from its `from` end; null draws no chevrons. */
-  amps: ReadonlyMap<string, number> | null
-  /** Shorts found in wires, drawn as a tail to what the wire touches. */
-  shorts: readonly ShortFound[]
-  /** A wire or a site that is picked. */
-  picked: string | null
-  /** Letters for two faults, "A" and "B", by site. */
-  letters?: ReadonlyMap<string, string>
-}
-
-export const emptyOverlay: Overlay = {
-  verdicts: new Map(),
-  moment: { positions: {}, unplugged: [] },
-  flags: [],
-  amps: null,
-  shorts: [],
-  picked: null,
-}
+import { type VoltsPlate, voltsPlates } from '@/diagrams/drawing/volts-plate'
+import type { VerdictMark } from '@/diagrams/drawing/wire-stroke'
 
 export interface PlacedMark extends PlaceMark {
   site: string
-  verdict: Verdict
-  /** Where the ring is drawn: with its part, under or over the part's own body. */
+  verdict: VerdictMark
+  /** The part that the ring is drawn with; null for a wire, whose band is its own. */
   node: string | null
+  /** On the part's body, not under it: one of several places within a part. */
   overBody: boolean
 }
 
@@ -47,43 +23,61 @@ export interface Scene {
   circuit: Circuit
   overlay: Overlay
   wires: ReadonlyMap<string, DrawnWire>
-  states: ReadonlyMap<string, PartState>
   nodes: ReadonlyMap<string, Node>
+  states: ReadonlyMap<string, PartState>
   marks: readonly PlacedMark[]
-  flags: readonly Flag[]
-  tails: readonly ShortTail[]
+  flags: readonly PlacedFlag[]
+  plates: readonly VoltsPlate[]
+  /** A wire that is picked. */
+  picked: string | null
 }
 
-export function buildScene(circuit: Circuit, overlay: Overlay, flagScale = 1): Scene {
-  const marks = [...overlay.verdicts].flatMap(([site, verdict]): PlacedMark[] => {
+export function buildScene(circuit: Circuit, overlay: Overlay, picked: string | null = null): Scene {
+  const verdicts = overlay.verdicts ?? new Map<string, VerdictMark>()
+  const taken = [...labelObstacles(circuit), ...runBoxes([...drawWires(circuit, verdicts).values()])]
+  const marks = [...verdicts].flatMap(([site, verdict]): PlacedMark[] => {
     const mark = placeMark(circuit, site)
     return mark ? [{ ...mark, site, verdict, ...ringOwner(circuit, site) }] : []
   })
-  const flags = layFlags(circuit, overlay.flags, marks, flagScale)
-  const wires = drawWires(
-    circuit,
-    overlay.verdicts,
-    flags.map((flag): Box => flag.box),
-  )
+  const flags = readingFlags(circuit, overlay.flags ?? [], taken)
+  const plates = voltsPlates(circuit, overlay.volts ?? new Map(), [
+    ...taken,
+    ...flags.map((flag) => flag.box),
+  ])
+  const moment = overlay.moment ?? { positions: {}, unplugged: [] }
   return {
     circuit,
     overlay,
-    wires,
-    states: new Map(circuit.nodes.map((node) => [node.id, partState(circuit, node, overlay.moment)])),
+    wires: drawWires(
+      circuit,
+      verdicts,
+      [...flags, ...plates].map((one) => grow(one.box, 2)),
+    ),
     nodes: new Map(circuit.nodes.map((node) => [node.id, node])),
+    states: new Map(circuit.nodes.map((node) => [node.id, partState(circuit, node, moment)])),
     marks,
     flags,
-    tails: shortTails(circuit, overlay.shorts, wires),
+    plates,
+    picked,
   }
 }
 
 function ringOwner(circuit: Circuit, site: string): { node: string | null; overBody: boolean } {
   const colon = site.indexOf(':')
-  const kind = site.slice(0, colon)
-  if (kind === 'wire') return { node: null, overBody: false }
+  if (site.slice(0, colon) === 'wire') return { node: null, overBody: false }
   const rest = site.slice(colon + 1)
   const dot = rest.indexOf('.')
   const id = dot < 0 ? rest : rest.slice(0, dot)
   const node = circuit.nodes.find((one) => one.id === id)
   return { node: id, overBody: dot >= 0 && node?.kind !== 'cavity' }
+}
+
+function runBoxes(wires: readonly DrawnWire[]): Box[] {
+  return wires.flatMap(({ route }) =>
+    route.slice(1).map((to, at) => {
+      const from = route[at] as Place
+      const [x, y] = [Math.min(from.x, to.x), Math.min(from.y, to.y)]
+      return grow({ x, y, width: Math.abs(from.x - to.x), height: Math.abs(from.y - to.y) }, 6)
+    }),
+  )
 }

@@ -1,0 +1,96 @@
+'use client'
+
+import type { ReactNode } from 'react'
+import type { Circuit } from '@/diagrams/document/circuit-schema'
+import type { NextReading } from '@/diagrams/faults/answer'
+import { Chevron } from '../ui/glyphs'
+import { Plate } from '../ui/plate'
+import { ConnectorFace } from './connector-face'
+import { MeterPanel } from './meter/meter-panel'
+import { connectorOf, nextHow, nextTitle } from './next-words'
+import { OutcomeCards } from './outcome-cards'
+import type { MeterWork } from './use-meter'
+
+/** A phone's whole screen for one reading: place and face, kind, leads, conditions, figure, outcomes, keys. */
+export function EntryScreen({
+  circuit,
+  title,
+  code,
+  left,
+  next,
+  meter,
+  saved,
+  onClose,
+}: {
+  circuit: Circuit
+  title: string
+  code: string | null
+  /** "7 in question" */
+  left: string
+  next: NextReading | null
+  meter: MeterWork
+  saved: ReactNode
+  onClose: () => void
+}) {
+  const face = next ? connectorOf(circuit, next.red ?? '') : null
+  return (
+    <div
+      role="dialog"
+      aria-modal="true"
+      aria-label="Take the reading"
+      className="fixed inset-0 z-dialog flex flex-col overflow-y-auto bg-tray tablet:hidden"
+    >
+      <header className="double-rule flex min-h-12 flex-none items-center gap-2 bg-panel px-2">
+        <button
+          type="button"
+          aria-label="Back to the trace"
+          onClick={onClose}
+          className="flex min-h-target min-w-target items-center justify-center"
+        >
+          <Chevron direction="left" size={22} />
+        </button>
+        <h1 className="min-w-0 flex-1 truncate font-bold">{title}</h1>
+        {code && <Plate>{code}</Plate>}
+      </header>
+      <div className="flex flex-none gap-3 border-b-2 border-ink bg-panel px-4 py-2">
+        <div className="min-w-0 flex-1">
+          <p className="text-dense font-bold">
+            {left}
+            {next && '. Next split:'}
+          </p>
+          {next && (
+            <>
+              <h2 className="text-title">{nextTitle(circuit, next)}</h2>
+              <p className="text-small text-ink-2">
+                {face?.location ? `${face.location}. ` : ''}
+                {nextHow(circuit, next)}
+              </p>
+            </>
+          )}
+          <div className="text-small text-ink-2">{saved}</div>
+        </div>
+        {face && (
+          <ConnectorFace circuit={circuit} connector={face.connector} cavity={face.cavity} width={130} />
+        )}
+      </div>
+      <div className="flex flex-1 flex-col gap-2 p-3">
+        <MeterPanel
+          circuit={circuit}
+          meter={meter}
+          layout="screen"
+          outcomes={
+            meter.outcomes.length > 0 ? (
+              <OutcomeCards
+                circuit={circuit}
+                outcomes={meter.outcomes}
+                lit={meter.lit}
+                outside={meter.outside}
+                look="rows"
+              />
+            ) : null
+          }
+        />
+      </div>
+    </div>
+  )
+}

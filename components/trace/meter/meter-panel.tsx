@@ -1,0 +1,223 @@
+'use client'
+
+import { type ReactNode, type RefObject, useId, useMemo, useState } from 'react'
+import type { Circuit } from '@/diagrams/document/circuit-schema'
+import { pointName } from '@/diagrams/document/points'
+import { siteName } from '@/diagrams/document/sites'
+import { type MeterAction, type MeterKind, meterKinds, type MeterState } from '@/lib/client/meter/meter-state'
+import { kindWords } from '@/lib/client/meter/reading-words'
+import { mostVolts, typedValue } from '@/lib/client/meter/typed-value'
+import { pointPlaces } from '../../canvas/point-place'
+import { Button } from '../../ui/button'
+import { Choice } from '../../ui/choice'
+import { classNames } from '../../ui/class-names'
+import { FieldMessage } from '../../ui/field'
+import type { MeterWork } from '../use-meter'
+import { ConditionChips } from './condition-chips'
+import { Keypad } from './keypad'
+import { LeadField } from './lead-field'
+import { MeterScale } from './meter-scale'
+import { MeterWindow } from './meter-window'
+import { PickDialog } from './pick-dialog'
+import { PickField } from './pick-field'
+
+const kinds = meterKinds.map((kind) => ({ value: kind, label: kindWords[kind] }))
+const worksChoices = [
+  { value: 'yes', label: 'Works' },
+  { value: 'no', label: 'Does not' },
+] as const
+
+type Listing = 'red' | 'black' | 'wire' | 'node' | null
+
+/** Entry of a reading: kind, leads, conditions, the figure, and one key that logs it. */
+export function MeterPanel({
+  circuit,
+  meter,
+  field,
+  layout,
+  outcomes: outcomeRows,
+}: {
+  circuit: Circuit
+  meter: MeterWork
+  field?: RefObject<HTMLInputElement | null>
+  /** Tray: under the sheet, keys only on a tablet. Screen: a phone's whole screen, keys always. */
+  layout: 'tray' | 'screen'
+  /** Rows of the outcomes, between the window and the keys of a phone. */
+  outcomes?: ReactNode
+}) {
+  const [listing, setListing] = useState<Listing>(null)
+  const messageId = useId()
+  const { state, act, refusal, enter, outcomes } = meter
+  const value = typedValue(state)
+  const takesFigure = state.kind !== 'works'
+  return (
+    <div className="flex min-h-0 flex-1 flex-col gap-2">
+      <div className="flex items-center gap-3">
+        {layout === 'tray' && <h2 className="hidden text-body font-bold laptop:block">Meter</h2>}
+        <Choice
+          label="What to measure"
+          options={kinds}
+          value={state.kind}
+          onChange={(kind: MeterKind) => act({ do: 'choose-kind', kind })}
+          fill
+        />
+      </div>
+      <div className="flex gap-2">
+        {state.kind === 'volts' || state.kind === 'ohms' ? (
+          (['red', 'black'] as const).map((lead) => (
+            <LeadField
+              key={lead}
+              lead={lead}
+              point={leadWords(circuit, state, lead)}
+              active={state.lead === lead}
+              onPress={() => {
+                act({ do: 'pick-lead', lead })
+                setListing(lead)
+              }}
+            />
+          ))
+        ) : state.kind === 'amps' ? (
+          <PickField
+            label="Clamp round"
+            value={state.wire === null ? null : siteName(circuit, `wire:${state.wire}`)}
+            unset="tap a wire"
+            onPress={() => setListing('wire')}
+          />
+        ) : (
+          <PickField
+            label="Does its job"
+            value={state.node === null ? null : siteName(circuit, `part:${state.node}`)}
+            unset="tap a load"
+            onPress={() => setListing('node')}
+          />
+        )}
+      </div>
+      <div className={classNames(layout === 'tray' ? 'laptop:order-3' : '')}>
+        <ConditionChips circuit={circuit} state={state} act={act} />
+      </div>
+      {takesFigure ? (
+        <div className="flex min-h-20 gap-2 tablet:min-h-[6.125rem] laptop:min-h-20">
+          <MeterWindow
+            state={state}
+            onType={(text) => act({ do: 'type', text })}
+            onEnter={enter}
+            field={field}
+            withKeys={layout === 'screen'}
+            describedBy={refusal ? messageId : undefined}
+            scale={
+              state.kind === 'volts' && (
+                <MeterScale
+                  outcomes={outcomes}
+                  most={mostVolts(circuit) * 1.2}
+                  value={typeof value === 'number' ? value : null}
+                />
+              )
+            }
+          />
+          {layout === 'tray' && (
+            <Button
+              look="filled"
+              size="bay"
+              onClick={enter}
+              className="hidden w-28 leading-tight laptop:flex"
+            >
+              Enter reading
+            </Button>
+          )}
+        </div>
+      ) : (
+        <div className="flex gap-2">
+          <Choice
+            label="Does it work"
+            options={worksChoices}
+            value={state.works === null ? null : state.works ? 'yes' : 'no'}
+            onChange={(answer) => act({ do: 'say-works', works: answer === 'yes' })}
+            size="bay"
+            fill
+          />
+          <Button look="filled" size="bay" onClick={enter} className="w-28 flex-none leading-tight">
+            Enter reading
+          </Button>
+        </div>
+      )}
+      {refusal && (
+        <div id={messageId} role="alert" className="-mt-1 flex flex-wrap items-center gap-x-3 laptop:order-2">
+          <FieldMessage id={`${messageId}-text`}>{refusal.message}</FieldMessage>
+          {refusal.meant !== null && (
+            <Button look="text" onClick={() => act({ do: 'type', text: refusal.meant ?? '' })}>
+              Use {refusal.meant}
+            </Button>
+          )}
+        </div>
+      )}
+      {outcomeRows}
+      {takesFigure && (
+        <div className={classNames('flex flex-1', layout === 'tray' && 'max-tablet:hidden laptop:hidden')}>
+          <Keypad onPress={(key) => act({ do: 'press', key })} onEnter={enter} />
+        </div>
+      )}
+      <Lists circuit={circuit} state={state} act={act} listing={listing} onClose={() => setListing(null)} />
+    </div>
+  )
+}
+
+function leadWords(circuit: Circuit, state: MeterState, lead: 'red' | 'black'): string | null {
+  const point = lead === 'red' ? state.red : state.black
+  return point === null ? null : pointName(circuit, point)
+}
+
+function Lists({
+  circuit,
+  state,
+  act,
+  listing,
+  onClose,
+}: {
+  circuit: Circuit
+  state: MeterState
+  act: (action: MeterAction) => void
+  listing: Listing
+  onClose: () => void
+}) {
+  const points = useMemo(
+    () => [
+      { id: 'chassis', name: 'chassis', about: '0 V' },
+      ...pointPlaces(circuit, state.condition.unplugged).map(({ point }) => ({
+        id: point,
+        name: pointName(circuit, point),
+      })),
+    ],
+    [circuit, state.condition.unplugged],
+  )
+  return (
+    <>
+      <PickDialog
+        title={listing === 'black' ? 'Black lead' : 'Red lead'}
+        choices={points}
+        open={listing === 'red' || listing === 'black'}
+        onPick={(point) => act({ do: 'put-lead', lead: listing === 'black' ? 'black' : 'red', point })}
+        onClose={onClose}
+      />
+      <PickDialog
+        title="Clamp round which wire"
+        choices={circuit.wires.map((wire) => ({
+          id: wire.id,
+          name: siteName(circuit, `wire:${wire.id}`),
+          about: wire.colour,
+        }))}
+        open={listing === 'wire'}
+        onPick={(wire) => act({ do: 'tap-wire', wire })}
+        onClose={onClose}
+      />
+      <PickDialog
+        title="Which load"
+        choices={circuit.nodes
+          .filter((node) => node.kind === 'load')
+          .map((node) => ({ id: node.id, name: siteName(circuit, `part:${node.id}`) }))}
+        open={listing === 'node'}
+        onPick={(node) => act({ do: 'tap-load', node })}
+        onClose={onClose}
+      />
+    </>
+  )
+}

@@ -1,0 +1,94 @@
+'use client'
+
+import type { Circuit } from '@/diagrams/document/circuit-schema'
+import type { NextOutcome } from '@/diagrams/faults/answer'
+import { classNames } from '../ui/class-names'
+import { leavesWords } from './next-words'
+
+/** Each outcome of the next reading and what it leaves; the one that the typed value falls in is lit. */
+export function OutcomeCards({
+  circuit,
+  outcomes,
+  lit,
+  outside,
+  look,
+}: {
+  circuit: Circuit
+  outcomes: readonly NextOutcome[]
+  lit: NextOutcome | null
+  outside: boolean
+  /** Cards side by side, or rows under one another. */
+  look: 'cards' | 'rows'
+}) {
+  const shown = outcomes
+    .toSorted((one, other) => other.probability - one.probability)
+    .slice(0, look === 'cards' ? 3 : 4)
+  const between = outcomes.some((outcome) => outcome.low !== undefined)
+  return (
+    <ul
+      aria-label="What each outcome leaves"
+      className={classNames(
+        'grid gap-2',
+        look === 'cards' && 'laptop:grid-cols-[repeat(auto-fit,minmax(7.5rem,1fr))]',
+      )}
+    >
+      {shown.map((outcome) => (
+        <Outcome
+          key={outcome.about}
+          lit={outcome === lit}
+          about={outcome.about}
+          leaves={`leaves ${outcome.leaves.length}`}
+          what={leavesWords(circuit, outcome)}
+          look={look}
+        />
+      ))}
+      {between && look === 'cards' && (
+        <Outcome
+          lit={outside}
+          about="between"
+          leaves="fits no single fault well"
+          what="Check the leads, take it again"
+          look={look}
+          dashed
+        />
+      )}
+    </ul>
+  )
+}
+
+function Outcome({
+  lit,
+  about,
+  leaves,
+  what,
+  look,
+  dashed = false,
+}: {
+  lit: boolean
+  about: string
+  leaves: string
+  what: string
+  look: 'cards' | 'rows'
+  dashed?: boolean
+}) {
+  return (
+    <li
+      aria-current={lit ? 'true' : undefined}
+      data-lit={lit}
+      className={classNames(
+        'flex items-center gap-x-3 gap-y-1 rounded-field px-3 py-2 transition-colors duration-press',
+        look === 'cards' && 'laptop:flex-col laptop:items-start laptop:py-2',
+        dashed && !lit ? 'border-control border-dashed border-edge' : 'border-control',
+        lit ? 'border-ink bg-ink text-on-ink' : 'border-edge bg-panel',
+      )}
+    >
+      <span className={classNames('w-24 flex-none text-lead leading-tight', dashed ? '' : 'figures')}>
+        {about}
+      </span>
+      <span className={classNames('min-w-0 leading-tight', look === 'rows' && 'flex flex-wrap gap-x-2')}>
+        <b className="block text-dense">{leaves}</b>
+        <span className={classNames('block text-small', !lit && 'text-ink-2')}>{what}</span>
+      </span>
+    </li>
+  )
+}

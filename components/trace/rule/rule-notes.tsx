@@ -1,0 +1,101 @@
+'use client'
+
+import { classNames } from '../../ui/class-names'
+import type { RuleCut } from './rule-cut'
+import type { RuleLegLayout } from './rule-layout'
+
+/** The notch and line where the next reading cuts, named above. */
+export function CutMark({ title }: { title: string }) {
+  return (
+    <>
+      <span className="absolute -top-6 right-full z-marks mr-2.5 whitespace-nowrap text-small font-bold [direction:rtl]">
+        <bdi>Next split: {title}</bdi>
+      </span>
+      <svg
+        width="18"
+        height="76"
+        viewBox="0 0 18 76"
+        aria-hidden="true"
+        focusable="false"
+        className="pointer-events-none absolute -left-[9px] -top-6 z-marks"
+      >
+        <path d="M1 2h16L9 16z" style={{ fill: 'var(--ink)' }} />
+        <path d="M9 12v64" style={{ stroke: 'var(--ink)', strokeWidth: 3.5 }} />
+      </svg>
+    </>
+  )
+}
+
+/** Under a leg: its name and how it stands, or what each side of the cut would mean. */
+export function LegNote({
+  leg,
+  cut,
+  cells,
+  started,
+}: {
+  leg: RuleLegLayout
+  cut: RuleCut | null
+  cells: readonly string[]
+  started: boolean
+}) {
+  const own = leg.entries.filter((entry) => entry.kind === 'cell')
+  if (cut && own.length > 0) {
+    const groups = [
+      { outcome: cut.before, sites: cells.slice(0, cut.after) },
+      { outcome: cut.beyond, sites: cells.slice(cut.after) },
+    ]
+    return (
+      <div className="flex">
+        {groupWidths(
+          leg,
+          groups.map(({ sites }) => new Set(sites)),
+        ).map(({ width, group }, index) => {
+          const found = group === null ? null : groups[group]
+          return (
+            <Bracket key={`${group} ${index}`} width={width} strong={group !== null}>
+              {found
+                ? `${found.outcome.about}: ${width > 210 ? 'fault is ' : ''}in these ${found.sites.length}`
+                : ''}
+            </Bracket>
+          )
+        })}
+      </div>
+    )
+  }
+  const words = !started ? leg.name : leg.left === 0 ? `${leg.name}: proved good` : leg.name
+  return (
+    <Bracket width={leg.width} strong={leg.left > 0}>
+      {words}
+    </Bracket>
+  )
+}
+
+function Bracket({ width, strong, children }: { width: number; strong: boolean; children: string }) {
+  return (
+    <div style={{ width }} className="flex-none overflow-hidden px-px pt-1">
+      <div className={classNames('h-1.5 border-x-2 border-b-2', strong ? 'border-ink' : 'border-line')} />
+      <p
+        className={classNames('truncate text-center text-note', strong ? 'text-ink' : 'text-ink-3')}
+        title={children}
+      >
+        {children}
+      </p>
+    </div>
+  )
+}
+
+/** Neighbouring entries of a leg that lie under the same outcome, as one width each. */
+function groupWidths(
+  leg: RuleLegLayout,
+  groups: ReadonlySet<string>[],
+): { width: number; group: number | null }[] {
+  const out: { width: number; group: number | null }[] = []
+  for (const entry of leg.entries) {
+    const at = entry.kind === 'cell' ? groups.findIndex((sites) => sites.has(entry.site)) : -1
+    const group = at < 0 ? null : at
+    const last = out.at(-1)
+    if (last && last.group === group) last.width += entry.width
+    else out.push({ width: entry.width, group })
+  }
+  return out
+}

@@ -1,0 +1,110 @@
+'use client'
+
+import type { ReactNode } from 'react'
+import type { Circuit } from '@/diagrams/document/circuit-schema'
+import { nodeName } from '@/diagrams/document/points'
+import type { Answer, SiteAnswer } from '@/diagrams/faults/answer'
+import { VerdictGlyph } from '../ui/verdict-glyph'
+import { ConnectorFace } from './connector-face'
+import { connectorOf } from './next-words'
+import { lookFor, modeWords, siteTitle } from './site-words'
+
+/** What was found: place first, then what, then why; what it cleared, and under which assumption. */
+export function VerdictCard({
+  circuit,
+  answer,
+  actions,
+}: {
+  circuit: Circuit
+  answer: Answer
+  actions?: ReactNode
+}) {
+  const faulty = answer.sites.filter((site) => site.verdict === 'faulty')
+  const [first] = faulty
+  const mode = first && likeliestMode(first)
+  const group = first && answer.inseparable.find((sites) => sites.includes(first.site) && sites.length > 1)
+  const good = answer.sites.filter((site) => site.verdict === 'proved-good').length
+  const point = first && pointOfSite(first.site)
+  const face = point ? connectorOf(circuit, point) : null
+  const blown = mode?.blows ?? []
+  return (
+    <section
+      aria-labelledby="verdict"
+      className="flex min-h-full flex-col gap-2"
+      data-outcome={answer.outcome}
+    >
+      <div className="flex gap-3">
+        {first && answer.outcome !== 'no-fault' && <VerdictGlyph verdict="faulty" size={40} />}
+        <div className="min-w-0 flex-1" role="status">
+          <h3 id="verdict" className="text-title">
+            {heading(circuit, answer, first)}
+          </h3>
+          <p className="mt-1 text-dense text-ink-2">{answer.says}</p>
+        </div>
+        {face && (
+          <ConnectorFace circuit={circuit} connector={face.connector} cavity={face.cavity} width={124} />
+        )}
+      </div>
+      {group && (
+        <div className="border-x-2 border-b-2 border-ink px-3 pb-1.5 text-dense">
+          {group.map((site) => siteTitle(circuit, site)).join(', ')}: these {group.length} cannot be told
+          apart by any reading.
+        </div>
+      )}
+      {first && mode && (
+        <div className="rounded-field border-control border-edge bg-panel px-3 py-2 text-dense">
+          {blown.length > 0 && (
+            <p>
+              <b>{blown.map((id) => nameOf(circuit, id)).join(' and ')} has blown because of it.</b> Mend this
+              first, then renew the fuse, never a bigger one.
+            </p>
+          )}
+          <p>
+            <b>Look for</b> {lookFor(first.site, mode.mode)}.
+          </p>
+          {good > 0 && (
+            <p className="text-ink-2">
+              The other {good} {good === 1 ? 'place is' : 'places are'} cleared if there is one fault and no
+              reading is wrong.
+            </p>
+          )}
+        </div>
+      )}
+      {actions && <div className="mt-auto flex flex-wrap gap-2">{actions}</div>}
+    </section>
+  )
+}
+
+function heading(circuit: Circuit, answer: Answer, first: SiteAnswer | undefined): string {
+  switch (answer.outcome) {
+    case 'no-fault':
+      return 'Nothing wrong in the conditions tried'
+    case 'cannot-be':
+      return answer.reading ? `Take ${answer.reading} again` : 'These readings fit no fault'
+    case 'two-faults':
+      return 'Two faults'
+    default: {
+      if (!first) return ''
+      const mode = likeliestMode(first)
+      const words = mode ? modeWords[mode.mode] : 'faulty'
+      return `${words.charAt(0).toUpperCase()}${words.slice(1)} at ${siteTitle(circuit, first.site)
+        .replace(/^Wire /, 'wire ')
+        .replace(/^Contact /, 'contact ')}`
+    }
+  }
+}
+
+export function likeliestMode(site: SiteAnswer) {
+  return site.modes.toSorted((one, other) => other.probability - one.probability)[0]
+}
+
+function pointOfSite(site: string): string | null {
+  const [kind, rest = ''] = site.split(':')
+  if (kind === 'contact') return rest.includes('.') ? rest : `${rest}.a`
+  return kind === 'pin' ? rest : null
+}
+
+function nameOf(circuit: Circuit, id: string): string {
+  const node = circuit.nodes.find((one) => one.id === id)
+  return node ? nodeName(node) : id
+}

@@ -1,0 +1,56 @@
+import { useEffect, useMemo, useRef, useState } from 'react'
+import type { Circuit } from '@/diagrams/document/circuit-schema'
+import type { Reading } from '@/diagrams/document/reading-schema'
+import type { Answer } from '@/diagrams/faults/answer'
+import { Evaluator, type Thread } from './evaluator'
+import type { Question } from './messages'
+import { numberedReadings } from './numbered-readings'
+
+export interface AnswerState {
+  /** The last answer given; stays while a newer one is being worked out, so that the drawing does not blink. */
+  answer: Answer | null
+  /** True once the answer belongs to the readings shown. */
+  current: boolean
+  failed: string | null
+}
+
+const startThread = (): Thread =>
+  new Worker(new URL('./evaluator-worker.ts', import.meta.url), { type: 'module' })
+
+/** The evaluator's answer to these readings, worked out in a thread of its own. */
+export function useAnswer(
+  circuit: Circuit,
+  readings: readonly Reading[],
+  codes: readonly string[],
+): AnswerState {
+  const question = useMemo<Question>(
+    () => ({ circuit, readings: numberedReadings(readings), codes: [...codes], priors: 'trade' }),
+    [circuit, readings, codes],
+  )
+  const [given, setGiven] = useState<{ question: Question; answer: Answer } | null>(null)
+  const [failure, setFailure] = useState<{ question: Question; message: string } | null>(null)
+  const evaluator = useRef<Evaluator | null>(null)
+
+  useEffect(() => {
+    const opened = new Evaluator(startThread, {
+      answered: (answer, asked) => setGiven({ question: asked, answer }),
+      failed: (message, asked) => setFailure({ question: asked, message }),
+    })
+    evaluator.current = opened
+    return () => {
+      opened.close()
+      evaluator.current = null
+    }
+  }, [])
+
+  useEffect(() => {
+    evaluator.current?.ask(question)
+  }, [question])
+
+  const sameCircuit = given?.question.circuit === circuit
+  return {
+    answer: given && sameCircuit ? given.answer : null,
+    current: given?.question === question,
+    failed: failure?.question === question ? failure.message : null,
+  }
+}
