@@ -46,12 +46,12 @@ export const coolingFan: SampleDocument = {
     {
       id: 's3',
       controls: { key: 'on', coolant: 'warm' },
-      text: 'Pin 18 falls to 0 V and K1 pulls in. About 12 A flows through R1 and the fan: slow.',
+      text: 'Pin 18 falls to 0 V and K1 pulls in. About 11 A flows through R1 and the fan: slow.',
     },
     {
       id: 's4',
       controls: { key: 'on', coolant: 'hot' },
-      text: 'Pin 19 falls to 0 V and K2 pulls in. About 19 A flows through the fan: fast.',
+      text: 'Pin 19 falls to 0 V and K2 pulls in. About 18 A flows through the fan: fast.',
     },
   ],
   controls: [

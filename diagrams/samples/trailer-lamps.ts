@@ -40,7 +40,7 @@ export const trailerLamps: SampleDocument = {
     {
       id: 's2',
       controls: { lights: 'on', brake: 'held' },
-      text: 'All four lamps light. About 4.4 A returns through cavity 4: the moment to measure the ground.',
+      text: 'All four lamps light. About 4.2 A returns through cavity 4: the moment to measure the ground.',
     },
   ],
   controls: [

@@ -43,7 +43,7 @@ export const windowMotor: SampleDocument = {
     {
       id: 's2',
       controls: { key: 'on', window: 'up' },
-      text: 'K8 pulls in. About 9 A flows from C61 cavity 1 through the motor to cavity 2.',
+      text: 'K8 pulls in. About 8.5 A flows from C61 cavity 1 through the motor to cavity 2.',
     },
     {
       id: 's3',
