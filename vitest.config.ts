@@ -41,6 +41,7 @@ export default defineConfig({
           // One browser and one server at a time: pages are timed and pictured, and the machine may have two cores.
           fileParallelism: false,
           maxWorkers: 1,
+          sequence: { groupOrder: 1 },
           testTimeout: 120_000,
           hookTimeout: 300_000,
         },

@@ -42,7 +42,7 @@ async function bringUp(mode, begun) {
     mustSucceed('seed.ts', settings, 'The demo scenario could not be laid'),
   )
   if (mode === 'start') await ensureBuild()
-  const child = await step('Web server', () => startWebServer(mode, ports.web, settings))
+  const child = await step('Web server', () => startWebServer(mode, ports.web, settings, { ownGroup: true }))
   undo.push(() => stopChild(child))
   child.once('exit', (code) => leave(1, `The web server ended by itself (code ${code}).`))
   if (leaving) return

@@ -27,8 +27,9 @@ export async function startWebServer(
     DEMO_PASSWORD: '',
   }
   const args = ['node_modules/next/dist/bin/next', mode, '-H', '127.0.0.1', '-p', String(port)]
-  // A group of its own: Ctrl-C reaches the starting script alone, which stops the web server first and the database after.
-  const child = spawn(process.execPath, args, { cwd: projectFolder, env, stdio, detached: true })
+  const stdio = /** @type {const} */ (['ignore', process.stderr, process.stderr])
+  const child = spawn(process.execPath, args, { cwd: projectFolder, env, stdio, detached: ownGroup })
+  process.once('exit', () => child.kill())
   for (let waitedMs = 0; waitedMs < 60_000; waitedMs += 100) {
     if (child.exitCode !== null) throw new Refusal('The web server did not start; see its message above.')
     if (await accepts(port)) return child
