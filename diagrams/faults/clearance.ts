@@ -20,7 +20,7 @@ export function clearances(
   sites: readonly string[],
 ): Map<string, Clearance> {
   const cellsOf = new Map<string, CellEvidence[]>(sites.map((site) => [site, []]))
-  model.hypotheses.forEach((hypothesis, h) => cellsOf.get(hypothesis.site)!.push(...evidence.cells[h]!))
+  model.hypotheses.forEach((hypothesis, h) => cellsOf.get(hypothesis.site)?.push(...evidence.cells[h]!))
   return new Map(sites.map((site) => [site, clearanceOf(cellsOf.get(site)!, readings)]))
 }
 

@@ -14,9 +14,20 @@ export class FaultModel {
   private readonly tables = new Map<string, PredictionTable>()
   private readonly studies = new Map<string, Study>()
 
-  constructor(readonly circuit: Circuit) {
-    this.network = buildNetwork(circuit)
-    this.hypotheses = hypothesesOf(circuit, this.network)
+  constructor(
+    readonly circuit: Circuit,
+    parts?: { network: Network; hypotheses: readonly Hypothesis[] },
+  ) {
+    this.network = parts?.network ?? buildNetwork(circuit)
+    this.hypotheses = parts?.hypotheses ?? hypothesesOf(circuit, this.network)
+  }
+
+  /** The same circuit, suspecting one site only. */
+  only(site: string): FaultModel {
+    return new FaultModel(this.circuit, {
+      network: this.network,
+      hypotheses: this.hypotheses.filter((hypothesis) => hypothesis.site === site),
+    })
   }
 
   table(reading: Reading | Probe): PredictionTable {

@@ -11,11 +11,11 @@ const mostOutcomes = 4
 
 /** What each outcome of a reading would be about, between which figures, how likely, and which sites it leaves. */
 export function outcomesOf(planned: PlannedReading, particles: readonly Particle[]): NextOutcome[] {
-  const { probe, bins } = planned
+  const { probe, bins, row } = planned
   let covered = 0
   for (const bin of bins) covered += massOf(bin, particles)
   return mergeSlivers(bins, particles)
-    .map((bin) => outcomeOf(probe, bin, particles, covered))
+    .map((bin) => outcomeOf(probe, bin, particles, row, covered))
     .filter((outcome) => outcome.probability >= leastProbability)
 }
 
@@ -41,30 +41,30 @@ function mergeSlivers(bins: readonly Bin[], particles: readonly Particle[]): Bin
   return merged
 }
 
-function outcomeOf(probe: Probe, bin: Bin, particles: readonly Particle[], covered: number): NextOutcome {
+function outcomeOf(
+  probe: Probe,
+  bin: Bin,
+  particles: readonly Particle[],
+  row: Float64Array,
+  covered: number,
+): NextOutcome {
   const bySite = new Map<string, number>()
-  let heaviest = 0
   const mass = massOf(bin, particles)
   for (const i of bin.members) {
     const particle = particles[i]!
-    heaviest = Math.max(heaviest, particle.weight)
     if (particle.site !== '') bySite.set(particle.site, (bySite.get(particle.site) ?? 0) + particle.weight)
   }
   const leaves = [...bySite]
-    .filter(([, weight]) => weight > 0.002 * mass)
+    .filter(([, weight]) => weight > 0.005 * mass)
     .toSorted((a, b) => b[1] - a[1])
     .map(([site]) => site)
   const probability = covered > 0 ? mass / covered : 0
   if (probe.kind === 'works') return { about: bin.high >= 0.5 ? 'works' : 'does not', probability, leaves }
   if (bin.low === Infinity) return { about: 'OL', probability, leaves }
   const high = bin.high === Infinity ? bin.low : bin.high
-  const typical = bin.low === 0 ? 0 : (bin.low + high) / 2
   const slack = resolution(probe.kind, high)
   return {
-    about:
-      high - bin.low > 2 * slack
-        ? `${figure(probe.kind, bin.low)} to ${figure(probe.kind, high)}`
-        : figure(probe.kind, typical),
+    about: figure(probe.kind, typicalOf(bin, particles, row)),
     low: probe.kind === 'ohms' ? Math.max(0, bin.low - slack) : bin.low - slack,
     high: high + slack,
     probability,
@@ -76,4 +76,16 @@ function massOf(bin: Bin, particles: readonly Particle[]): number {
   let mass = 0
   for (const i of bin.members) mass += particles[i]!.weight
   return mass
+}
+
+/** The figure in the middle of an outcome's probability. */
+function typicalOf(bin: Bin, particles: readonly Particle[], row: Float64Array): number {
+  const order = bin.members.toSorted((a, b) => row[a]! - row[b]!)
+  const half = massOf(bin, particles) / 2
+  let before = 0
+  for (const i of order) {
+    before += particles[i]!.weight
+    if (before >= half) return row[i]!
+  }
+  return bin.low
 }

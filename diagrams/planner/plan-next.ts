@@ -14,6 +14,8 @@ export interface PlannedReading {
   bits: number
   minutes: number
   bins: Bin[]
+  /** What each particle foretells. */
+  row: Float64Array
 }
 
 export interface Plan {
@@ -62,17 +64,25 @@ export function planNext(model: FaultModel, posterior: Posterior, readings: read
       if (bits < leastBits) return
       mostBits = Math.max(mostBits, bits)
       const minutes = minutesFor(circuit, probe, workplace)
-      found.push({ probe, bits, minutes, bins, rate: bits / minutes, partition: partitionKey(bins) })
+      found.push({
+        probe,
+        bits,
+        minutes,
+        bins,
+        row: rows[i]!,
+        rate: bits / minutes,
+        partition: partitionKey(bins),
+      })
     })
   }
   found.sort((a, b) => b.rate - a.rate)
   const partitions = new Set<string>()
   const next: PlannedReading[] = []
-  for (const { probe, bits, minutes, bins, partition } of found) {
+  for (const { probe, bits, minutes, bins, row, partition } of found) {
     // The same split at a higher price is no alternative.
     if (partitions.has(partition)) continue
     partitions.add(partition)
-    next.push({ probe, bits, minutes, bins })
+    next.push({ probe, bits, minutes, bins, row })
     if (next.length === offered) break
   }
   return { particles, next, mostBits, inseparable: alike.groups() }
