@@ -9,14 +9,9 @@ import { Refusal } from './refusal.mjs'
  * @param {'start' | 'dev'} mode
  * @param {number} port
  * @param {Record<string, string>} settings
- * @param {import('node:child_process').StdioOptions} [stdio]
+ * @param {{ ownGroup?: boolean }} [options] whether Ctrl-C passes it by, because the caller stops it in its own order
  */
-export async function startWebServer(
-  mode,
-  port,
-  settings,
-  stdio = ['ignore', process.stderr, process.stderr],
-) {
+export async function startWebServer(mode, port, settings, { ownGroup = false } = {}) {
   const env = {
     ...process.env,
     ...settings,
