@@ -25,7 +25,8 @@ export function SignInForm({ email = '', onSignedIn }: { email?: string; onSigne
   }
 
   return (
-    <form onSubmit={send} noValidate className="flex flex-col gap-4">
+    // Sent before the page has woken up, a form must not put a password into the address: hence post.
+    <form method="post" onSubmit={send} noValidate className="flex flex-col gap-4">
       {failure && <Band title={failure} />}
       <Field
         label="E-mail"

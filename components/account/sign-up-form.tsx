@@ -58,7 +58,8 @@ export function SignUpForm({ action }: { action: (input: SignUp) => Promise<Resu
   }
 
   return (
-    <form onSubmit={send} noValidate className="flex flex-col gap-4">
+    // Sent before the page has woken up, a form must not put a password into the address: hence post.
+    <form method="post" onSubmit={send} noValidate className="flex flex-col gap-4">
       {failure && <Band title={failure} />}
       <Choice label="What it is" options={kinds} value={kind} onChange={setKind} fill size="bay" />
       <Field

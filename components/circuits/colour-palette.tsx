@@ -21,7 +21,7 @@ export function ColourPalette({ colour, onChange }: { colour: string; onChange: 
           <button
             type="button"
             onClick={() => onChange('')}
-            className={classNames(swatchClass, 'border-edge gap-2.5 px-3 text-body')}
+            className={classNames(swatchClass, plainClass, 'border-edge gap-2.5 px-3 text-body')}
             aria-label={`Base ${base}, change it`}
           >
             Base <WireSwatch colour={base} width={32} height={14} /> {base}
@@ -42,7 +42,11 @@ export function ColourPalette({ colour, onChange }: { colour: string; onChange: 
             type="button"
             aria-pressed={stripe === ''}
             onClick={() => onChange(stripe === '' ? base : `${base}/`)}
-            className={classNames(swatchClass, 'px-4 text-body', stripe === '' ? pickedClass : 'border-edge')}
+            className={classNames(
+              swatchClass,
+              'px-4 text-body',
+              stripe === '' ? pickedClass : `${plainClass} border-edge`,
+            )}
           >
             None
           </button>
@@ -53,7 +57,8 @@ export function ColourPalette({ colour, onChange }: { colour: string; onChange: 
 }
 
 const swatchClass =
-  'inline-flex min-h-12 min-w-target items-center justify-center rounded-field border-control bg-window font-bold transition-colors duration-press hover:border-ink'
+  'inline-flex min-h-12 min-w-target items-center justify-center rounded-field bg-window font-bold transition-colors duration-press hover:border-ink'
+const plainClass = 'border-control'
 const pickedClass = 'border-area border-ink'
 
 function Swatch({
@@ -73,7 +78,11 @@ function Swatch({
       aria-label={spoken}
       aria-pressed={picked}
       onClick={onPick}
-      className={classNames(swatchClass, 'flex-col gap-0.5 text-note', picked ? pickedClass : 'border-line')}
+      className={classNames(
+        swatchClass,
+        'flex-col gap-0.5 text-note',
+        picked ? pickedClass : `${plainClass} border-line`,
+      )}
     >
       <WireSwatch colour={code} width={28} height={15} />
       {code}

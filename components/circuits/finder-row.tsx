@@ -47,6 +47,7 @@ export function FinderRow({
           autoCapitalize="characters"
           spellCheck={false}
           used={finders.code !== ''}
+          tall
           inputClassName={big}
           value={finders.code}
           onChange={(event) => onChange({ ...finders, code: event.target.value.toUpperCase() })}
@@ -56,6 +57,7 @@ export function FinderRow({
           placeholder="any"
           spellCheck={false}
           used={finders.connector !== ''}
+          tall
           inputClassName={big}
           value={finders.connector}
           onChange={set('connector')}
@@ -65,6 +67,7 @@ export function FinderRow({
           placeholder="any"
           inputMode="numeric"
           used={finders.cavity !== ''}
+          tall
           inputClassName={big}
           value={finders.cavity}
           error={cavityProblem(finders.cavity) ?? undefined}
@@ -81,7 +84,7 @@ export function FinderRow({
             setPaletteOpen(false)
           }}
           disabled={!anyFinder(finders)}
-          className="m-px min-h-[3.875rem]"
+          className="m-px min-h-[3.875rem]!"
         >
           Clear
         </Button>

@@ -48,6 +48,12 @@ export function OpenTraces({ rows }: { rows: TraceRow[] }) {
 
 function nextWords(row: TraceRow): string {
   if (!row.progress) return row.complaint
-  if (row.progress.outcome === 'narrowed' && row.progress.next) return `Next: ${row.progress.next}`
-  return row.progress.says
+  if (row.progress.outcome === 'narrowed' && row.progress.next)
+    return `Next: ${firstSentence(row.progress.next)}`
+  return firstSentence(row.progress.says)
+}
+
+/** The place stands first in every sentence of the evaluator; the rest is for the trace itself. */
+function firstSentence(text: string): string {
+  return text.split('. ')[0]?.replace(/\.$/, '') ?? ''
 }

@@ -67,6 +67,7 @@ export function PhoneFinder({
               inputMode={kind === 'cavity' ? 'numeric' : undefined}
               autoCapitalize={kind === 'code' ? 'characters' : undefined}
               used={finders[kind] !== ''}
+              tall
               inputClassName="text-[1.375rem] leading-tight placeholder:text-[1.375rem]"
               value={finders[kind]}
               error={kind === 'cavity' ? (cavityProblem(finders.cavity) ?? undefined) : undefined}
@@ -79,7 +80,7 @@ export function PhoneFinder({
             />
           )}
         </div>
-        <Button onClick={onClear} disabled={!anyFinder(finders)} className="m-px min-h-[3.875rem]">
+        <Button onClick={onClear} disabled={!anyFinder(finders)} className="m-px min-h-[3.875rem]!">
           Clear
         </Button>
       </div>

@@ -85,7 +85,7 @@ export function ThumbSheet(props: ThumbIndexProps) {
   const [open, setOpen] = useState(false)
   return (
     <div className="tablet:hidden mt-2">
-      <Button className="w-full justify-between" onClick={() => setOpen(true)}>
+      <Button className="w-full justify-between!" onClick={() => setOpen(true)}>
         <span>
           <span className="font-semibold text-ink-2">System </span>
           {props.picked || 'All'}

@@ -59,8 +59,13 @@ export function RunningHead({
             </Link>
           </>
         ) : (
-          <Link href="/circuits" className="flex min-h-target items-center no-underline">
-            <Wordmark />
+          <Link
+            href="/circuits"
+            aria-label="Halfsplit"
+            className="flex min-h-target items-center no-underline"
+          >
+            <Mark size={30} className="tablet:hidden" />
+            <Wordmark className="hidden! tablet:inline-flex!" />
           </Link>
         )}
         <nav
@@ -73,10 +78,11 @@ export function RunningHead({
               href={entry.href}
               aria-current={place === entry.id ? (circuit ? 'true' : 'page') : undefined}
               className={classNames(
-                'flex items-center px-1 text-body tablet:text-[1.0625rem] no-underline border-b-[5px]',
+                'flex items-center px-1 text-body tablet:text-[1.0625rem] no-underline',
+                // The bar of the place one is in lies on the rule below.
                 place === entry.id
-                  ? 'border-ink font-bold text-ink'
-                  : 'border-transparent text-ink-2 hover:border-edge',
+                  ? 'font-bold text-ink shadow-[inset_0_-5px_0_var(--ink)]'
+                  : 'text-ink-2 hover:shadow-[inset_0_-3px_0_var(--edge)]',
               )}
             >
               {entry.label}

@@ -11,6 +11,7 @@ export function FieldBox({
   unit,
   used = false,
   wrong = false,
+  tall = false,
   children,
 }: {
   label: ReactNode
@@ -19,12 +20,15 @@ export function FieldBox({
   /** A finder in use: 2 px ink border. */
   used?: boolean
   wrong?: boolean
+  /** For a large value, as in a finder: 62 px. */
+  tall?: boolean
   children: ReactNode
 }) {
   return (
     <div
       className={classNames(
-        'focus-ring relative flex min-h-bay flex-col justify-center rounded-field bg-window px-3 pt-1.5 pb-1.5',
+        'focus-ring relative flex flex-col justify-center rounded-field bg-window px-3 py-1.5',
+        tall ? 'min-h-[3.875rem]' : 'min-h-bay',
         used || wrong
           ? 'border-area border-ink'
           : 'border-control border-edge m-px hover:border-ink transition-colors duration-press',
@@ -60,6 +64,7 @@ export function Field({
   error,
   unit,
   used,
+  tall,
   figures = false,
   className,
   inputClassName,
@@ -71,17 +76,18 @@ export function Field({
   error?: ReactNode
   unit?: ReactNode
   used?: boolean
+  tall?: boolean
   figures?: boolean
   inputClassName?: string
 }) {
   const own = useId()
   const inputId = id ?? own
-  const describedBy = [error ? `${inputId}-error` : '', hint ? `${inputId}-hint` : '']
+  const describedBy = [error ? `${inputId}-error` : '', hint && !error ? `${inputId}-hint` : '']
     .filter(Boolean)
     .join(' ')
   return (
     <div className={className}>
-      <FieldBox label={label} htmlFor={inputId} unit={unit} used={used} wrong={Boolean(error)}>
+      <FieldBox label={label} htmlFor={inputId} unit={unit} used={used} tall={tall} wrong={Boolean(error)}>
         <input
           id={inputId}
           aria-invalid={error ? true : undefined}
@@ -91,7 +97,7 @@ export function Field({
         />
       </FieldBox>
       {error && <FieldMessage id={`${inputId}-error`}>{error}</FieldMessage>}
-      {hint && (
+      {hint && !error && (
         <p id={`${inputId}-hint`} className="mt-1.5 text-small text-ink-2">
           {hint}
         </p>
@@ -116,7 +122,7 @@ export function TextArea({
 }) {
   const own = useId()
   const inputId = id ?? own
-  const describedBy = [error ? `${inputId}-error` : '', hint ? `${inputId}-hint` : '']
+  const describedBy = [error ? `${inputId}-error` : '', hint && !error ? `${inputId}-hint` : '']
     .filter(Boolean)
     .join(' ')
   return (
@@ -131,7 +137,7 @@ export function TextArea({
         />
       </FieldBox>
       {error && <FieldMessage id={`${inputId}-error`}>{error}</FieldMessage>}
-      {hint && (
+      {hint && !error && (
         <p id={`${inputId}-hint`} className="mt-1.5 text-small text-ink-2">
           {hint}
         </p>

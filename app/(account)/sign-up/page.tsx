@@ -13,7 +13,7 @@ export default function SignUpPage() {
       title="Make an account"
       caption={
         <>
-          For a shop or a school; its maker is its owner. Already there? <Link href="/sign-in">Sign in</Link>.
+          For a shop or a school. Already there? <Link href="/sign-in">Sign in</Link>.
         </>
       }
     >
