@@ -51,5 +51,19 @@ function checkFault(circuit: Circuit, fault: PlantedFault): Problem | undefined 
     }
   if (fault.other !== undefined && !neighbourWires(circuit, fault.site.slice(5)).includes(fault.other))
     return { path: 'fault.other', message: `wire "${fault.other}" does not lie beside ${fault.site}` }
+  if (fault.wire !== undefined) {
+    const end = `${fault.site.slice('part:'.length)}.s`
+    const wire = circuit.wires.find((w) => w.id === fault.wire)
+    if (wire?.from !== end && wire?.to !== end)
+      return { path: 'fault.wire', message: `wire "${fault.wire}" does not end at splice ${fault.site}` }
+  }
+  // A short of no ohms at all, or a negative resistance, has no solution.
+  if (fault.ohms !== undefined && !(isShort(fault.mode) ? fault.ohms > 0 : fault.ohms >= 0))
+    return {
+      path: 'fault.ohms',
+      message: `${fault.ohms} ohm, expected ${isShort(fault.mode) ? 'more than 0' : '0 or more'}`,
+    }
+  if (fault.volts !== undefined && !(fault.volts >= 0))
+    return { path: 'fault.volts', message: `${fault.volts} V, expected 0 or more` }
   return undefined
 }
