@@ -13,7 +13,7 @@ import { readingFlags } from './reading-flag'
 import { shortTail } from './short-tail'
 import { escapeXml, primitivesToSvg } from './svg-text'
 import { darkInks, lightInks } from './theme-inks'
-import { placeMark, ringStrokes, verdictGlyph } from './verdict-mark'
+import { isInside, placeMark, ringStrokes, verdictGlyph } from './verdict-mark'
 import { voltsPlates } from './volts-plate'
 import { wireLabelSize } from './wire-label'
 import { wireStack, type VerdictMark } from './wire-stroke'
@@ -60,35 +60,35 @@ export function circuitPrimitives(circuit: Circuit, overlay: Overlay): Primitive
   const obstacles = labelObstacles(circuit)
   const bare = [...drawWires(circuit, verdicts).values()]
   const flags = readingFlags(circuit, overlay.flags ?? [], [...obstacles, ...runBoxes(bare)])
-  const plates = voltsPlates(circuit, overlay.volts ?? new Map(), [
-    ...obstacles,
-    ...runBoxes(bare),
-    ...flags.map((flag) => flag.box),
-  ])
+  // Labels give way to flags; the plates take what is left.
   const wires = [
     ...drawWires(
       circuit,
       verdicts,
-      [...flags, ...plates].map((one) => grow(one.box, 2)),
+      flags.map((flag) => grow(flag.box, 2)),
     ).values(),
   ]
+  const plates = voltsPlates(circuit, overlay.volts ?? new Map(), [
+    ...obstacles,
+    ...runBoxes(bare),
+    ...wires.flatMap(({ label }) => (label ? [label.plate] : [])),
+    ...flags.map((flag) => flag.box),
+  ])
   return [
     ...connectorOutlines(circuit).flatMap((outline) => outline.primitives),
     ...wires.flatMap((wire) => wirePrimitives(wire, verdicts.get(`wire:${wire.wire.id}`) ?? null)),
     ...(overlay.tails ?? []).flatMap((tail) => shortTail(circuit, tail)),
-    ...[...verdicts].flatMap(([site, verdict]) => {
-      const mark = placeMark(circuit, site)
-      return mark ? ringStrokes(mark, verdict) : []
-    }),
+    ...rings(circuit, verdicts, false),
     ...circuit.nodes.flatMap((node) => {
       const state = partState(circuit, node, moment)
       return [...partSymbol(node, state), ...partLabels(circuit, node, state)].map((one) =>
         moved(one, node.x, node.y),
       )
     }),
+    ...rings(circuit, verdicts, true),
     ...wires.flatMap(labelPrimitives),
-    ...wires.flatMap(({ wire, route }) =>
-      currentChevrons(route, wire.mm2, overlay.wireAmps?.get(wire.id) ?? 0),
+    ...wires.flatMap(({ wire, route, crossings }) =>
+      currentChevrons(route, wire.mm2, overlay.wireAmps?.get(wire.id) ?? 0, crossings),
     ),
     ...drawNotes(circuit),
     ...glyphs(circuit, verdicts),
@@ -128,6 +128,13 @@ function labelPrimitives({ label }: DrawnWire): Primitive[] {
       fill: 'ink-2',
     },
   ]
+}
+
+function rings(circuit: Circuit, verdicts: ReadonlyMap<string, VerdictMark>, inside: boolean): Primitive[] {
+  return [...verdicts].flatMap(([site, verdict]) => {
+    const mark = isInside(site) === inside ? placeMark(circuit, site) : null
+    return mark ? ringStrokes(mark, verdict) : []
+  })
 }
 
 /** Glyphs where they can be told apart: on faulty and in-question places; a tick for what is proved good. */

@@ -8,7 +8,7 @@ import { grow, type Box, type Place } from './primitive'
 import { wireLabels, type WireLabel } from './wire-label'
 import { wirePath } from './wire-path'
 import { wireRoute } from './wire-route'
-import { stackWidth, type VerdictMark } from './wire-stroke'
+import { bandStrokes, stackWidth, wireWidth, type VerdictMark } from './wire-stroke'
 
 export interface DrawnWire {
   wire: Wire
@@ -16,6 +16,8 @@ export interface DrawnWire {
   /** What shows: the route less the gaps where it passes under another wire. Stroke each piece with `wireStack`. */
   pieces: (Piece & { d: string })[]
   label: WireLabel | null
+  /** Where it meets others, over or under. */
+  crossings: Place[]
 }
 
 /** Every wire of a circuit ready to be stroked: where it runs, where it dives under another, where its label goes. */
@@ -32,7 +34,11 @@ export function drawWires(
   const crossed = crossings(routed)
   const labels = new Map(
     wireLabels(
-      circuit.wires.map((wire, at) => ({ wire, route: routed[at]?.route ?? [] })),
+      circuit.wires.map((wire, at) => ({
+        wire,
+        route: routed[at]?.route ?? [],
+        reachPixels: reach(wire, verdicts),
+      })),
       [...labelObstacles(circuit), ...moreObstacles],
     ).map((label) => [label.wire, label]),
   )
@@ -40,9 +46,27 @@ export function drawWires(
     circuit.wires.map((wire, at) => {
       const own = routed[at] as (typeof routed)[number]
       const pieces = visiblePieces(own, crossed).map((piece) => ({ ...piece, d: wirePath(piece.points) }))
-      return [wire.id, { wire, route: own.route, pieces, label: labels.get(wire.id) ?? null }]
+      return [
+        wire.id,
+        {
+          wire,
+          route: own.route,
+          pieces,
+          label: labels.get(wire.id) ?? null,
+          crossings: crossed
+            .filter((one) => one.over === wire.id || one.under === wire.id)
+            .map((one) => one.at),
+        },
+      ]
     }),
   )
+}
+
+/** Half of what a wire covers across: itself with a little air, or its band. */
+function reach(wire: Wire, verdicts: ReadonlyMap<string, VerdictMark>): number {
+  const width = wireWidth(wire.mm2)
+  const bands = bandStrokes(width, verdicts.get(`wire:${wire.id}`) ?? null).map((stroke) => stroke.width)
+  return Math.max(width + 4, ...bands) / 2
 }
 
 const restMoment: Moment = { positions: {}, unplugged: [] }

@@ -20,7 +20,7 @@ export function partLabels(circuit: Circuit, node: Node, state: PartState = rest
     case 'feed':
       return [ink(0, 54, name, 'start'), ...(state.liveWords ? [note(0, 71, state.liveWords, 'start')] : [])]
     case 'ground':
-      return [ink(42, 28, name, 'start')]
+      return [ink(46, 28, name, 'start')]
     case 'fuse':
       return [
         ink(width / 2, below(-0.3), name, 'middle'),
@@ -66,11 +66,11 @@ function spliceLabel(circuit: Circuit, node: Node, name: string): Text {
     if (next.y < here.y) taken.up = true
     if (next.y > here.y) taken.down = true
   }
-  if (!taken.right) return ink(35, 25, name, 'start')
-  if (!taken.left) return ink(5, 25, name, 'end')
-  if (!taken.up) return ink(20, 4, name, 'middle')
-  if (!taken.down) return ink(20, 46, name, 'middle')
-  return ink(32, 42, name, 'start')
+  if (!taken.right) return ink(38, 25, name, 'start')
+  if (!taken.left) return ink(2, 25, name, 'end')
+  if (!taken.up) return ink(20, 2, name, 'middle')
+  if (!taken.down) return ink(20, 49, name, 'middle')
+  return ink(34, 44, name, 'start')
 }
 
 /** The box a text fills, in the coordinates it is given in. */

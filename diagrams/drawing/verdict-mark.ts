@@ -1,7 +1,7 @@
 import type { Circuit } from '../document/circuit-schema'
 import { moduleLayout } from './module-layout'
 import { endPlace, nodesById, partBox, relaySize } from './part-geometry'
-import type { Box, Place, Primitive } from './primitive'
+import { textWidth, type Box, type Place, type Primitive } from './primitive'
 import { inkPath } from './symbol-pen'
 import { switchLayout } from './switch-layout'
 import { alongRoute, routeLength } from './wire-path'
@@ -51,7 +51,16 @@ export function placeMark(circuit: Circuit, site: string): PlaceMark | null {
     case 'cavity':
       return at({ x: -4, y: 1, width: 68, height: 38 }, 19)
     case 'splice':
-      return at({ x: 6, y: 6, width: 28, height: 28 }, 14)
+      return at({ x: 9, y: 9, width: 22, height: 22 }, 11)
+    case 'ground':
+      return {
+        ring: { x: node.x + 2, y: node.y + 9, width: 36, height: 25, radius: 4 },
+        glyph: { x: node.x - 14, y: node.y + 22 },
+      }
+    case 'fuse':
+      return at({ x: 5, y: 7, width: 50, height: 26 }, 4)
+    case 'feed':
+      return at({ x: -1, y: 3, width: 60, height: 34 }, 4)
     case 'switch': {
       const row = switchLayout(node).contacts.find((one) => one.contact.id === tail)
       return at({ x: 30, y: (row?.y ?? 40) - 14, width: 60, height: 22 }, 4)
@@ -61,14 +70,26 @@ export function placeMark(circuit: Circuit, site: string): PlaceMark | null {
         ? at({ x: 34, y: 23, width: 52, height: 34 }, 4)
         : at({ x: 24, y: 90, width: relaySize.width - 48, height: 40 }, 4)
     case 'module': {
-      if (kind !== 'pin') return at({ x: -4, y: -4, width: width + 8, height: height + 8 }, 4)
+      if (kind !== 'pin')
+        return {
+          ring: { x: node.x - 4, y: node.y - 4, width: width + 8, height: height + 8, radius: 4 },
+          glyph: { x: node.x + width - 14, y: node.y - 18 },
+        }
       const row = moduleLayout(node).rows.find((one) => one.pin.pin === tail)
       if (!row) return null
       const wide = 10 + 8.4 * tail.length
-      return at(
-        { x: row.side === 'left' ? 11 : width - 11 - wide, y: row.y - 11, width: wide, height: 22 },
-        4,
-      )
+      const words = wide + 20 + Math.max(textWidth(row.pin.name, 13), textWidth(row.circuit, 13))
+      const left = row.side === 'left'
+      return {
+        ring: {
+          x: node.x + (left ? 11 : width - 11 - wide),
+          y: node.y + row.y - 11,
+          width: wide,
+          height: 22,
+          radius: 4,
+        },
+        glyph: { x: node.x + (left ? 11 + words : width - 11 - words), y: node.y + row.y },
+      }
     }
     case 'load':
       return at(
@@ -78,6 +99,11 @@ export function placeMark(circuit: Circuit, site: string): PlaceMark | null {
     default:
       return at({ x: -3, y: 0, width: width + 6, height }, 4)
   }
+}
+
+/** True for a place inside a part's box: its ring goes over the part, or the part would hide it. */
+export function isInside(site: string): boolean {
+  return site.startsWith('pin:') || (site.startsWith('part:') && site.includes('.'))
 }
 
 /** Band, rungs or thin ring round a cavity, contact or part; drawn under the part so that its ink stays whole. */

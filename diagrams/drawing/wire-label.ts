@@ -1,7 +1,6 @@
 import type { Wire } from '../document/circuit-schema'
 import { boxesMeet, textWidth, type Box, type Place } from './primitive'
 import { distance } from './wire-path'
-import { wireWidth } from './wire-stroke'
 
 export interface WireLabel {
   wire: string
@@ -25,23 +24,23 @@ export function wireLabelText(wire: Pick<Wire, 'colour' | 'mm2'>): string {
  * or further along when something stands there. Wires with the least choice, the short ones, choose first.
  */
 export function wireLabels(
-  wires: readonly { wire: Wire; route: readonly Place[] }[],
+  wires: readonly { wire: Wire; route: readonly Place[]; reachPixels: number }[],
   obstacles: readonly Box[],
 ): WireLabel[] {
-  const runs = wires.flatMap(({ wire, route }) =>
-    route.slice(1).map((to, at) => runBox(route[at] as Place, to, wire)),
+  const runs = wires.flatMap(({ route, reachPixels }) =>
+    route.slice(1).map((to, at) => runBox(route[at] as Place, to, reachPixels)),
   )
   const taken: Box[] = []
   const labels = new Map<string, WireLabel>()
   const longest = (route: readonly Place[]) =>
     Math.max(0, ...route.slice(1).map((to, at) => distance(route[at] as Place, to)))
   const order = wires.toSorted((one, other) => longest(one.route) - longest(other.route))
-  for (const { wire, route } of order) {
+  for (const { wire, route, reachPixels } of order) {
     if (route.length < 2) continue
     const text = wireLabelText(wire)
     const size = { width: textWidth(text, wireLabelSize) + 6, height: 17 }
     let best: { plate: Box; cost: number } | null = null
-    for (const [rank, plate] of candidates(route, wireWidth(wire.mm2), size).entries()) {
+    for (const [rank, plate] of candidates(route, reachPixels, size).entries()) {
       const cost =
         rank * 0.01 +
         obstacles.reduce((sum, box) => sum + overlap(plate, box), 0) +
@@ -64,12 +63,16 @@ export function wireLabels(
 }
 
 /** Plates beside a route, best first. */
-function candidates(route: readonly Place[], width: number, size: { width: number; height: number }): Box[] {
+function candidates(
+  route: readonly Place[],
+  reachPixels: number,
+  size: { width: number; height: number },
+): Box[] {
   const runs = route
     .slice(1)
     .map((to, at) => ({ from: route[at] as Place, to, long: distance(route[at] as Place, to) }))
     .toSorted((one, other) => other.long - one.long)
-  const off = width / 2 + 5
+  const off = reachPixels + 3
   const shifts = [0, -0.12, 0.12, -0.24, 0.24, -0.34, 0.34, -0.42, 0.42]
   return runs.flatMap(({ from, to, long }) => {
     const level = from.y === to.y
@@ -94,8 +97,7 @@ function candidates(route: readonly Place[], width: number, size: { width: numbe
   })
 }
 
-function runBox(from: Place, to: Place, wire: Wire): Box {
-  const half = wireWidth(wire.mm2) / 2 + 2
+function runBox(from: Place, to: Place, half: number): Box {
   return {
     x: Math.min(from.x, to.x) - half,
     y: Math.min(from.y, to.y) - half,
