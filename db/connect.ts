@@ -14,5 +14,7 @@ export function connect(url: string, { most = 10 }: { most?: number } = {}): Dat
   })
   // A connection that breaks while idle is simply dropped; the next query reports what is wrong.
   pool.on('error', () => {})
+  // One that breaks while a transaction holds it between two queries would otherwise end the process.
+  pool.on('connect', (client) => client.on('error', () => {}))
   return new Kysely<Tables>({ dialect: new PostgresDialect({ pool }) })
 }

@@ -8,7 +8,7 @@ export function isDatabaseAway(error: unknown): boolean {
   if (typeof code === 'string')
     // 08: connection; 57P: shutdown or crash; 53300: no connection left (PostgreSQL, appendix A).
     return network.has(code) || code.startsWith('08') || code.startsWith('57P') || code === '53300'
-  return /Connection terminated|timeout exceeded when trying to connect|Query read timeout/.test(
+  return /Connection terminated|connection error and is not queryable|timeout exceeded when trying to connect|Query read timeout/.test(
     error.message,
   )
 }

@@ -31,12 +31,8 @@ function problemsOfIssue(issue: z.core.$ZodIssue, before: PropertyKey[]): Proble
     const deepest = branches.toSorted((x, y) => depth(y) - depth(x))[0]
     if (deepest && depth(deepest) > 0) return deepest.flatMap((inner) => problemsOfIssue(inner, at))
     if (issue.discriminator)
-      return [
-        {
-          path: [path, issue.discriminator].filter(Boolean).join('.'),
-          message: `unknown ${issue.discriminator}`,
-        },
-      ]
+      // zod's path already ends with the discriminator.
+      return [{ path, message: `unknown ${issue.discriminator}` }]
     return [{ path, message: 'none of the allowed forms fits' }]
   }
   return [{ path, message: issue.message }]

@@ -158,7 +158,7 @@ export const arbitraryCircuit = fc
     fc.array(fc.tuple(setting, text(4000)), { maxLength: 3 }),
   )
   .map(([head, ids, parts, connectors, wires, codes, steps]) => {
-    const nodes = ids.map((id, i) => {
+    const nodes = ids.map((id, i): { id: string; kind?: unknown; [field: string]: unknown } => {
       const [particular, name, place, access, notes] = parts[i] as (typeof parts)[number]
       const common = { id: `n${id.slice(0, 38)}`, label: name, x: place, y: 0 - place, notes, ...access }
       // Every third part sits in a connector, every fourth is a cavity of one.

@@ -99,7 +99,8 @@ describe('the plans of the searches', () => {
   }
   const search = (finders: Record<string, string>) => (context: Shop['people']['owner']['context']) =>
     searchCircuits(context, finders)
-  const cases: [string, ReturnType<typeof search>, RegExp, RegExp][] = [
+  type Work = (context: Shop['people']['owner']['context']) => Promise<unknown>
+  const cases: [string, Work, RegExp, RegExp][] = [
     ['name', search({ name: 'request17' }), /limit/, /circuit_words_pkey.*\n.*Index Cond: .*word >= /],
     ['code', search({ code: 'U1234' }), /limit/, /circuit_codes_by_code.*\n.*Index Cond: .*code_key >= /],
     ['system', search({ system: 'System 7' }), /limit/, /circuits_by_system.*\n.*Index Cond: .*system = /],

@@ -27,14 +27,18 @@ export interface Shop {
 }
 
 /** Settings as the server reads them, pointing at the database of this test file. */
-export function useSettings(appUrl: string): void {
+function useSettings(appUrl: string): void {
   process.env.DATABASE_URL = appUrl
   process.env.NEXTAUTH_SECRET = secret
   process.env.NEXTAUTH_URL = 'http://127.0.0.1:3210'
 }
 
-export async function makeShop(database: TestDatabase<Tables>, name: string): Promise<Shop> {
-  useSettings(database.appUrl)
+export async function makeShop(
+  database: TestDatabase<Tables>,
+  name: string,
+  { appUrl = database.appUrl }: { appUrl?: string } = {},
+): Promise<Shop> {
+  useSettings(appUrl)
   const db = database.app
   const mark = randomUUID().slice(0, 8)
   const email = (role: Role) => `${role}-${mark}@alderlane.example`
