@@ -71,8 +71,13 @@ export function CircuitsScreen({
   const noneAtAll = first !== undefined && first.circuits === 0
 
   return (
-    <main className="flex flex-1 flex-col laptop:grid laptop:grid-cols-[minmax(0,1fr)_11rem]">
-      <div className="flex min-w-0 flex-col">
+    <main
+      className={classNames(
+        'flex flex-1 flex-col',
+        !noneAtAll && 'laptop:grid laptop:grid-cols-[minmax(0,1fr)_11rem]',
+      )}
+    >
+      <div className="flex min-w-0 flex-1 flex-col">
         {!noneAtAll && (
           <section aria-label="Finders" className="bg-tray border-b-2 border-ink px-4 tablet:px-5 py-4">
             <FinderRow finders={finders} onChange={setFinders} onClear={clear} nameRef={nameField} />
@@ -158,9 +163,11 @@ export function CircuitsScreen({
         )}
         {traces.data && <OpenTraces rows={traces.data.rows} />}
       </div>
-      <div className="hidden laptop:block border-l border-edge bg-tray">
-        {!noneAtAll && <ThumbIndex {...index} />}
-      </div>
+      {!noneAtAll && (
+        <div className="hidden laptop:block border-l border-edge bg-tray">
+          <ThumbIndex {...index} />
+        </div>
+      )}
     </main>
   )
 }

@@ -1,13 +1,13 @@
 import type { ReactNode } from 'react'
 
-/** The sheet with a finished circuit drawn faintly behind one sentence and one button. */
+/** The sheet with a finished circuit drawn faintly over one sentence and one button. */
 export function EmptySheet({ title, children }: { title: string; children?: ReactNode }) {
   return (
-    <div className="relative flex min-h-80 items-center justify-center overflow-hidden bg-sheet px-5 py-16">
+    <div className="flex flex-1 flex-col items-center justify-center overflow-hidden bg-sheet px-5 py-10">
       <svg
         viewBox="0 0 900 260"
         aria-hidden="true"
-        className="absolute inset-0 m-auto h-auto w-[min(56rem,94%)]"
+        className="h-auto w-full max-w-4xl"
         fill="none"
         style={{ stroke: 'var(--line)' }}
         strokeWidth="3"
@@ -21,7 +21,7 @@ export function EmptySheet({ title, children }: { title: string; children?: Reac
         <path d="M762 216h36M769 224h22M776 232h8" />
         <circle cx="360" cy="124" r="6" style={{ fill: 'var(--line)' }} />
       </svg>
-      <div className="relative max-w-lg bg-sheet p-5 text-center">
+      <div className="mt-8 max-w-lg text-center">
         <p className="text-title">{title}</p>
         {children && <div className="mt-4 flex flex-wrap justify-center gap-2 text-body">{children}</div>}
       </div>
