@@ -24,18 +24,20 @@ export async function ensureBuild() {
   await withLock(path.join(dataFolder, 'build-lock'), async () => {
     const sources = hashSources()
     if (isCurrent(sources)) return
-    await step('Building for production, about half a minute', async () => {
-      const env = { ...process.env, NODE_ENV: 'production', NEXT_TELEMETRY_DISABLED: '1' }
-      const stdio = /** @type {const} */ (['ignore', process.stderr, process.stderr])
-      const code = await run(process.execPath, ['node_modules/next/dist/bin/next', 'build'], {
-        cwd: projectFolder,
-        env,
-        stdio,
-      })
-      if (code !== 0) throw new Refusal('The production build failed; see its message above.')
-      writeFileSync(record, JSON.stringify({ sources, buildId: buildId() }))
-    })
+    await step('Production build', () => build(sources), 'about half a minute')
   })
+}
+
+async function build(sources) {
+  const env = { ...process.env, NODE_ENV: 'production', NEXT_TELEMETRY_DISABLED: '1' }
+  const stdio = /** @type {const} */ (['ignore', process.stderr, process.stderr])
+  const code = await run(process.execPath, ['node_modules/next/dist/bin/next', 'build'], {
+    cwd: projectFolder,
+    env,
+    stdio,
+  })
+  if (code !== 0) throw new Refusal('The production build failed; see its message above.')
+  writeFileSync(record, JSON.stringify({ sources, buildId: buildId() }))
 }
 
 function isCurrent(sources) {

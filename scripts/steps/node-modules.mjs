@@ -8,14 +8,16 @@ import { step } from './say.mjs'
 /** Installs the locked packages when node_modules is missing or differs from the lock. */
 export async function ensureNodeModules() {
   if (matchesLock()) return
-  await step('Installing the locked packages (npm ci), a minute or two', async () => {
-    const args = ['ci', '--include=dev', '--no-audit', '--no-fund', '--loglevel=error']
-    const code = await run('npm', args, {
-      cwd: projectFolder,
-      stdio: ['ignore', process.stderr, process.stderr],
-    })
-    if (code !== 0) throw new Refusal('npm ci failed; see its message above. It needs the network once.')
+  await step('Locked packages (npm ci)', install, 'a minute or two')
+}
+
+async function install() {
+  const args = ['ci', '--include=dev', '--no-audit', '--no-fund', '--loglevel=error']
+  const code = await run('npm', args, {
+    cwd: projectFolder,
+    stdio: ['ignore', process.stderr, process.stderr],
   })
+  if (code !== 0) throw new Refusal('npm ci failed; see its message above. It needs the network once.')
 }
 
 /** npm leaves a lock of what it really installed; packages for other machines may be absent from it. */

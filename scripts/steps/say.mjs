@@ -8,11 +8,12 @@ export function say(text) {
  * @template T
  * @param {string} title
  * @param {() => T | Promise<T>} work
+ * @param {string} [hint] how long it may take
  * @returns {Promise<T>}
  */
-export async function step(title, work) {
+export async function step(title, work, hint) {
   const begun = Date.now()
-  process.stderr.write(`· ${title} …\n`)
+  process.stderr.write(`· ${title}${hint ? ` (${hint})` : ''} …\n`)
   const result = await work()
   process.stderr.write(`  ${title}: done in ${seconds(Date.now() - begun)}\n`)
   return result
