@@ -59,6 +59,9 @@ export function placeMark(circuit: Circuit, site: string): PlaceMark | null {
       }
     case 'fuse':
       return at({ x: 5, y: 7, width: 50, height: 26 }, 4)
+    case 'resistor':
+    case 'diode':
+      return at({ x: 16, y: 8, width: 48, height: 24 }, 4)
     case 'feed':
       return at({ x: -1, y: 3, width: 60, height: 34 }, 4)
     case 'switch': {

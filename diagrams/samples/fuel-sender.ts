@@ -84,7 +84,7 @@ export const fuelSender: SampleDocument = {
       y: 40,
       pins: [
         { pin: '1', name: 'feed', circuit: { type: 'supply', ohms: 60 } },
-        { pin: '22', name: 'sender reference', circuit: { type: 'source', volts: 5, ohms: 10 } },
+        { pin: '22', name: 'sender reference', circuit: { type: 'source', volts: 5, ohms: 2 } },
         {
           pin: '23',
           name: 'fuel level',

@@ -1,7 +1,7 @@
 import type { SampleDocument } from './sample-document'
 import { tarnmoor } from './tarnmoor-connectors'
 
-/** Four lamps that share one ground through the trailer socket: lose it and they feed one another. */
+/** Four lamps that share one ground through the trailer socket: lose it and all four go out. */
 export const trailerLamps: SampleDocument = {
   format: 'halfsplit-circuit',
   version: 1,
@@ -11,7 +11,7 @@ export const trailerLamps: SampleDocument = {
   operation:
     'Stop lamps are fed through F30 and stop switch SW1, tail lamps through F31 with the lights on. Each feed crosses the trailer socket ' +
     'and splits to the left and right lamp. All four lamps return through S9 and socket cavity 4 to one ground, G9. ' +
-    'With that ground lost, current from one feed looks for a way back through the lamps of the other: dim lamps, and the wrong ones.',
+    'With that ground lost all four go out together, and S9 rises to battery voltage: 12 V where 0 V should be. A bad joint there dims all four, most of all with the brake held.',
   codes: [
     {
       code: 'B1C20',
