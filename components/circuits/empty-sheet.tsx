@@ -22,7 +22,7 @@ export function EmptySheet({ title, children }: { title: string; children?: Reac
         <circle cx="360" cy="124" r="6" style={{ fill: 'var(--line)' }} />
       </svg>
       <div className="mt-8 max-w-lg text-center">
-        <p className="text-title">{title}</p>
+        <h1 className="text-title">{title}</h1>
         {children && <div className="mt-4 flex flex-wrap justify-center gap-2 text-body">{children}</div>}
       </div>
     </div>

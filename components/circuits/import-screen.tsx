@@ -35,7 +35,7 @@ export function ImportScreen() {
       if (called.ok) {
         setStored(called.value)
         setFailure(null)
-        queries.invalidateQueries({ queryKey: ['circuits'] })
+        void queries.invalidateQueries({ queryKey: ['circuits'] })
       } else setFailure(called.failure)
     },
   })

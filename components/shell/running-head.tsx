@@ -62,7 +62,7 @@ export function RunningHead({
           <Link
             href="/circuits"
             aria-label="Halfsplit"
-            className="flex min-h-target items-center no-underline"
+            className="-ml-1.5 flex min-h-target min-w-target items-center justify-center no-underline tablet:ml-0"
           >
             <Mark size={30} className="tablet:hidden" />
             <Wordmark className="hidden! tablet:inline-flex!" />

@@ -43,7 +43,7 @@ export function SessionEnded() {
         email={actor?.email}
         onSignedIn={() => {
           reportSessionEnded(false)
-          queries.invalidateQueries()
+          void queries.invalidateQueries()
           router.refresh()
         }}
       />
