@@ -1,12 +1,13 @@
 import type { z } from 'zod'
 import { checkCircuit, type Problem } from './check-circuit'
 import { circuitSchema, type Circuit } from './circuit-schema'
+import { plainMessage } from './plain-message'
 
 export type Opened<T> = { ok: true; value: T } | { ok: false; problems: Problem[] }
 
 /** The one door for a document: shape, defaults and every cross reference. Never throws on bad input. */
 export function openCircuit(input: unknown): Opened<Circuit> {
-  const parsed = circuitSchema.safeParse(input)
+  const parsed = circuitSchema.safeParse(input, { reportInput: true })
   if (!parsed.success) return { ok: false, problems: problemsOf(parsed.error) }
   const problems = checkCircuit(parsed.data)
   return problems.length === 0 ? { ok: true, value: parsed.data } : { ok: false, problems }
@@ -30,12 +31,8 @@ function problemsOfIssue(issue: z.core.$ZodIssue, before: PropertyKey[]): Proble
     const branches = issue.errors.filter((errors) => errors.length > 0)
     const deepest = branches.toSorted((x, y) => depth(y) - depth(x))[0]
     if (deepest && depth(deepest) > 0) return deepest.flatMap((inner) => problemsOfIssue(inner, at))
-    if (issue.discriminator)
-      // zod's path already ends with the discriminator.
-      return [{ path, message: `unknown ${issue.discriminator}` }]
-    return [{ path, message: 'none of the allowed forms fits' }]
   }
-  return [{ path, message: issue.message }]
+  return [{ path, message: plainMessage(issue) }]
 }
 
 function depth(issues: z.core.$ZodIssue[]): number {
