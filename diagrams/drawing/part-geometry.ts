@@ -115,6 +115,13 @@ export function endPlace(nodes: ReadonlyMap<string, Node>, end: string): PortPla
   return { x: node.x + place.x, y: node.y + place.y, side: place.side }
 }
 
-export function nodesById(nodes: readonly Node[]): Map<string, Node> {
-  return new Map(nodes.map((node) => [node.id, node]))
+const known = new WeakMap<readonly Node[], Map<string, Node>>()
+
+/** Parts by id. Kept for as long as the list lives: a drawing asks once a wire, and documents are never changed in place. */
+export function nodesById(nodes: readonly Node[]): ReadonlyMap<string, Node> {
+  const before = known.get(nodes)
+  if (before) return before
+  const byId = new Map(nodes.map((node) => [node.id, node]))
+  known.set(nodes, byId)
+  return byId
 }

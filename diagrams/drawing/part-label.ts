@@ -57,6 +57,7 @@ function spliceLabel(circuit: Circuit, node: Node, name: string): Text {
   const end = `${node.id}.s`
   const taken = { left: false, right: false, up: false, down: false }
   for (const wire of circuit.wires) {
+    if (wire.from !== end && wire.to !== end) continue
     const route = wireRoute(circuit, wire)
     const way = wire.from === end ? route : wire.to === end ? route.toReversed() : []
     const [here, next] = way

@@ -1,5 +1,5 @@
 import type { Wire } from '../document/circuit-schema'
-import { boxesMeet, textWidth, type Box, type Place } from './primitive'
+import { boxesMeet, grow, textWidth, type Box, type Place } from './primitive'
 import { distance } from './wire-path'
 
 export interface WireLabel {
@@ -39,13 +39,17 @@ export function wireLabels(
     if (route.length < 2) continue
     const text = wireLabelText(wire)
     const size = { width: textWidth(text, wireLabelSize) + 6, height: 17 }
+    // Only what stands near this wire can be in its label's way.
+    const around = grow(boundsOf(route), size.width + 20)
+    const near = (boxes: readonly Box[]) => boxes.filter((box) => boxesMeet(box, around))
+    const [nearObstacles, nearTaken, nearRuns] = [near(obstacles), near(taken), near(runs)]
     let best: { plate: Box; cost: number } | null = null
     for (const [rank, plate] of candidates(route, reachPixels, size).entries()) {
       const cost =
         rank * 0.01 +
-        obstacles.reduce((sum, box) => sum + overlap(plate, box), 0) +
-        taken.reduce((sum, box) => sum + 2 * overlap(plate, box), 0) +
-        runs.reduce((sum, box) => sum + overlap(plate, box), 0)
+        nearObstacles.reduce((sum, box) => sum + overlap(plate, box), 0) +
+        nearTaken.reduce((sum, box) => sum + 2 * overlap(plate, box), 0) +
+        nearRuns.reduce((sum, box) => sum + overlap(plate, box), 0)
       if (best === null || cost < best.cost) best = { plate, cost }
       if (cost < 1 && cost === rank * 0.01) break
     }
@@ -104,6 +108,12 @@ function runBox(from: Place, to: Place, half: number): Box {
     width: Math.abs(from.x - to.x) + 2 * half,
     height: Math.abs(from.y - to.y) + 2 * half,
   }
+}
+
+function boundsOf(route: readonly Place[]): Box {
+  const [xs, ys] = [route.map((place) => place.x), route.map((place) => place.y)]
+  const [x, y] = [Math.min(...xs), Math.min(...ys)]
+  return { x, y, width: Math.max(...xs) - x, height: Math.max(...ys) - y }
 }
 
 /** Shared area of two boxes, square pixels. */
