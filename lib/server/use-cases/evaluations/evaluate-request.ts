@@ -1,5 +1,5 @@
 import type { Answer } from '@/diagrams/faults/answer'
-import { evaluate } from '@/diagrams/faults/evaluate'
+import { evaluate } from '@/diagrams/evaluate'
 import { openEvaluationRequest } from '@/diagrams/faults/request'
 import { can } from '@/lib/shared/permissions'
 import { fail, type Result, succeed } from '@/lib/shared/result'

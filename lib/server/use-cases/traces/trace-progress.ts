@@ -1,4 +1,4 @@
-import { evaluate } from '@/diagrams/faults/evaluate'
+import { evaluate } from '@/diagrams/evaluate'
 import type { EvaluationRequest } from '@/diagrams/faults/request'
 import type { TraceRow } from '@/lib/shared/api/traces'
 
