@@ -69,7 +69,7 @@ function Sheet({
   leads,
   onPick,
   legend,
-  first = 'whole',
+  first = 'auto',
   fitAgain = '',
   label,
 }: CircuitSheetProps) {
@@ -80,12 +80,13 @@ function Sheet({
   const view = useSheetView(scene, first)
   const { screenToFlowPosition, getZoom } = useReactFlow()
 
+  const { settle } = view
   const asked = useRef(fitAgain)
   useEffect(() => {
     if (asked.current === fitAgain) return
     asked.current = fitAgain
-    view.fit(first)
-  }, [fitAgain, first, view])
+    settle()
+  }, [fitAgain, settle])
 
   useKeyCommands({
     f: () => view.fit('left'),

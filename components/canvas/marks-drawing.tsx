@@ -15,6 +15,7 @@ const labelsFrom = 0.7
 export function MarksDrawing({ scene, zoom = 1 }: { scene: Scene; zoom?: number }) {
   const { verdicts, wireAmps, tails } = scene.overlay
   const wires = [...scene.wires.values()]
+  const manyLeft = scene.marks.filter((mark) => mark.verdict === 'in-question').length > 12
   return (
     <g>
       {wires
@@ -36,9 +37,11 @@ export function MarksDrawing({ scene, zoom = 1 }: { scene: Scene; zoom?: number 
         <Primitives key={tail.wire} of={shortTail(scene.circuit, tail)} />
       ))}
       <Primitives of={drawNotes(scene.circuit)} />
-      {scene.marks.filter(hasGlyph).map((mark) => (
-        <Primitives key={mark.site} of={verdictGlyph(mark.verdict, mark.glyph)} />
-      ))}
+      {scene.marks
+        .filter((mark) => hasGlyph(mark, manyLeft))
+        .map((mark) => (
+          <Primitives key={mark.site} of={verdictGlyph(mark.verdict, mark.glyph)} />
+        ))}
       {scene.plates.map((plate) => (
         <Primitives key={plate.point} of={plate.primitives} />
       ))}
@@ -49,7 +52,13 @@ export function MarksDrawing({ scene, zoom = 1 }: { scene: Scene; zoom?: number 
   )
 }
 
-/** Rails and rings say it for wires and contacts that are proved: a tick on each would hide the drawing. */
-function hasGlyph({ site, verdict }: PlacedMark): boolean {
-  return verdict !== 'proved-good' || !(site.startsWith('wire:') || site.startsWith('contact:'))
+/**
+ * Rails, rungs and rings say it for wires and contacts: a glyph on each would hide the drawing. So a tick goes on parts
+ * only, and while much is left a question mark goes on parts only, too.
+ */
+function hasGlyph({ site, verdict }: PlacedMark, manyLeft: boolean): boolean {
+  if (verdict === 'faulty') return true
+  const inner = site.startsWith('contact:') && site.includes('.')
+  if (verdict === 'proved-good') return !site.startsWith('wire:') && !site.startsWith('contact:')
+  return !inner && !site.startsWith('pin:') && !(manyLeft && site.startsWith('wire:'))
 }

@@ -6,14 +6,20 @@ import type { Scene } from './scene'
 
 export const leastZoom = 0.15
 export const mostZoom = 3
+/** On a phone a whole circuit would be too small to read: what is left is shown at this size at least. */
+const leastPhoneZoom = 0.55
+const laptopPixels = 1000
 /** Fitting never makes the drawing larger than this, however little is left of it. */
 const mostFitZoom = 1.3
 /** Room for what stands over the sheet: counts at the left, buttons at the right. */
 const headPixels = 52
 
-export type Fit = 'whole' | 'left'
+/** `auto`: the whole on a wide sheet, what is left on a narrow one. */
+export type Fit = 'whole' | 'left' | 'auto'
 
 export interface SheetView {
+  /** Fits anew unless the person has moved the sheet. */
+  settle: () => void
   fit: (fit: Fit) => void
   zoomBy: (factor: number) => void
   panBy: (x: number, y: number) => void
@@ -35,9 +41,18 @@ export function useSheetView(scene: Scene, first: Fit): SheetView {
     (fit: Fit) => {
       const { width, height } = store.getState()
       if (width === 0 || height === 0) return
-      const box: Box = (fit === 'left' ? leftBounds(latest.current) : null) ?? wholeBounds(latest.current)
+      const narrow = fit === 'auto' && width < laptopPixels
+      const box: Box =
+        (fit === 'left' || narrow ? leftBounds(latest.current) : null) ?? wholeBounds(latest.current)
       const head = height > 300 ? headPixels : 0
-      const view = getViewportForBounds(box, width, height - head, leastZoom, mostFitZoom, 0.02)
+      const view = getViewportForBounds(
+        box,
+        width,
+        height - head,
+        narrow && width < 600 ? leastPhoneZoom : leastZoom,
+        mostFitZoom,
+        0.02,
+      )
       void flow.setViewport({ x: view.x, y: view.y + head, zoom: view.zoom })
     },
     [flow, store],
@@ -63,6 +78,9 @@ export function useSheetView(scene: Scene, first: Fit): SheetView {
   )
   return {
     fit,
+    settle: useCallback(() => {
+      if (wanted.current) show(wanted.current)
+    }, [show]),
     zoomBy: useCallback(
       (factor) => {
         wanted.current = null

@@ -1,5 +1,5 @@
 import type { Circuit } from '@/diagrams/document/circuit-schema'
-import { nodeName } from '@/diagrams/document/points'
+import { nodeName, pointName } from '@/diagrams/document/points'
 import { splitEnd } from '@/diagrams/document/ports'
 import type { OperatingPoint } from '@/diagrams/solver/operating-point'
 
@@ -25,8 +25,10 @@ export function whatHappens(circuit: Circuit, point: OperatingPoint): Happening 
     ...(pulled.length > 0 ? [`${listed(pulled)} ${pulled.length === 1 ? 'pulls' : 'pull'} in`] : []),
     ...(working.length > 0 ? [`${listed(working)} ${working.length === 1 ? 'works' : 'work'}`] : []),
   ]
-  const nothing = point.loads.size + point.relays.size > 0 ? 'Nothing works' : 'No load is drawn'
-  return { does: parts.join('; ') || nothing, draws: draws(circuit, point) }
+  if (parts.length > 0 || point.loads.size > 0)
+    return { does: parts.join('; ') || 'Nothing works', draws: draws(circuit, point) }
+  const inputs = [...point.sees].map(([pin, level]) => `${pointName(circuit, pin)} sees ${level}`)
+  return { does: listed(inputs) || 'Nothing to see work', draws: draws(circuit, point) }
 }
 
 function draws(circuit: Circuit, point: OperatingPoint): string {

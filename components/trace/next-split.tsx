@@ -32,7 +32,7 @@ export function NextSplit({
     <section aria-labelledby="next-split" className="flex min-h-full flex-col gap-2">
       <div className="flex gap-3">
         <div className="min-w-0 flex-1">
-          <p className="text-small leading-tight">
+          <p className="truncate text-small leading-tight" title={nextEffort(circuit, next)}>
             <span id="next-split" className="text-body font-bold">
               Next split
             </span>{' '}

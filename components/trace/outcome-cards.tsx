@@ -23,7 +23,7 @@ export function OutcomeCards({
   const shown = outcomes
     .toSorted((one, other) => other.probability - one.probability)
     .slice(0, look === 'cards' ? 3 : 4)
-  const between = outcomes.some((outcome) => outcome.low !== undefined)
+  const between = shown.length < 3 && outcomes.some((outcome) => outcome.low !== undefined)
   return (
     <ul
       aria-label="What each outcome leaves"
@@ -77,17 +77,22 @@ function Outcome({
       data-lit={lit}
       className={classNames(
         'flex items-center gap-x-3 gap-y-1 rounded-field px-3 py-2 transition-colors duration-press',
-        look === 'cards' && 'laptop:flex-col laptop:items-start laptop:py-2',
+        look === 'cards' && 'laptop:flex-col laptop:items-start laptop:py-1.5',
         dashed && !lit ? 'border-control border-dashed border-edge' : 'border-control',
         lit ? 'border-ink bg-ink text-on-ink' : 'border-edge bg-panel',
       )}
     >
-      <span className={classNames('w-24 flex-none text-lead leading-tight', dashed ? '' : 'figures')}>
+      <span
+        className={classNames(
+          'w-24 flex-none text-lead leading-tight laptop:w-auto laptop:whitespace-nowrap',
+          dashed ? '' : 'figures',
+        )}
+      >
         {about}
       </span>
       <span className={classNames('min-w-0 leading-tight', look === 'rows' && 'flex flex-wrap gap-x-2')}>
         <b className="block text-dense">{leaves}</b>
-        <span className={classNames('block text-small', !lit && 'text-ink-2')}>{what}</span>
+        <span className={classNames('line-clamp-2 text-small', !lit && 'text-ink-2')}>{what}</span>
       </span>
     </li>
   )

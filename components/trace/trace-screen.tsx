@@ -1,6 +1,6 @@
 'use client'
 
-import { useEffect, useMemo, useRef, useState } from 'react'
+import { useMemo, useRef, useState } from 'react'
 import { pathOrder } from '@/diagrams/drawing/path-order'
 import type { NextReading } from '@/diagrams/faults/answer'
 import { useAnswer } from '@/lib/client/evaluator/use-answer'
@@ -29,6 +29,7 @@ import { TraceBands } from './trace-bands'
 import { TraceResult } from './trace-result'
 import { useMeter } from './use-meter'
 import { useTrace } from './use-trace'
+import { useTypingIntoMeter } from './use-typing-into-meter'
 import { verdictCounts } from './verdict-counts'
 
 /** A trace from the first reading to the proof: sheet, split rule, tray. */
@@ -147,6 +148,7 @@ export function TraceScreen({ initial }: { initial: Trace }) {
                 : undefined
             }
             onPick={onPick}
+            fitAgain={`${readings.length} ${current} ${answer?.outcome}`}
             label="Sheet: tap two points to set the leads"
             legend={
               <div className="flex flex-wrap items-center gap-3">
@@ -180,8 +182,8 @@ export function TraceScreen({ initial }: { initial: Trace }) {
             onPlace={setSite}
           />
         </div>
-        <div className="z-rule grid min-h-0 border-t-2 border-ink bg-tray tablet:h-[34.5rem] tablet:flex-none tablet:grid-cols-2 tablet:grid-rows-[minmax(0,3fr)_minmax(0,2fr)] laptop:h-[16.5rem] laptop:grid-cols-[24.125rem_25.75rem_minmax(0,1fr)] laptop:grid-rows-1">
-          <div className="min-h-0 overflow-y-auto px-3 py-2.5 tablet:px-4 tablet:row-start-1 laptop:col-start-3 laptop:border-l laptop:border-line">
+        <div className="z-rule grid min-h-0 border-t-2 border-ink bg-tray tablet:h-[38.5rem] tablet:flex-none tablet:grid-cols-2 tablet:grid-rows-[minmax(0,3fr)_minmax(0,2fr)] laptop:h-[17rem] laptop:grid-cols-[24.125rem_25.75rem_minmax(0,1fr)] laptop:grid-rows-1">
+          <div className="min-h-0 min-w-0 overflow-y-auto px-3 py-2.5 tablet:px-4 tablet:row-start-1 laptop:col-start-3 laptop:border-l laptop:border-line">
             <TraceResult
               circuit={circuit}
               work={work}
@@ -194,7 +196,7 @@ export function TraceScreen({ initial }: { initial: Trace }) {
               onFinish={() => setFinishing(true)}
             />
           </div>
-          <div className="hidden min-h-0 overflow-y-auto px-4 py-2.5 tablet:flex tablet:col-start-2 tablet:row-span-2 tablet:row-start-1 tablet:border-l tablet:border-line laptop:row-span-1">
+          <div className="hidden min-h-0 min-w-0 overflow-y-auto px-4 py-2.5 tablet:flex tablet:col-start-2 tablet:row-span-2 tablet:row-start-1 tablet:border-l tablet:border-line laptop:row-span-1">
             {done ? (
               <p className="text-ink-2">
                 This trace is closed: its repair is proved. Start another one to take more readings.
@@ -203,7 +205,7 @@ export function TraceScreen({ initial }: { initial: Trace }) {
               <MeterPanel circuit={circuit} meter={meter} field={field} layout="tray" />
             )}
           </div>
-          <div className="flex min-h-0 flex-col border-t border-line tablet:col-start-1 tablet:row-start-2 laptop:row-start-1 laptop:border-t-0">
+          <div className="flex min-h-0 min-w-0 flex-col border-t border-line tablet:col-start-1 tablet:row-start-2 laptop:row-start-1 laptop:border-t-0">
             <ReadingsList
               circuit={circuit}
               readings={readings}
@@ -273,31 +275,4 @@ function placeOf(sites: readonly string[], node: string): string | null {
     return !site.startsWith('wire:') && (rest === node || rest.startsWith(`${node}.`))
   })
   return own.find((site) => site === `part:${node}` || site === `contact:${node}`) ?? own[0] ?? null
-}
-
-/** Digits typed anywhere go to the window at once. */
-function useTypingIntoMeter(
-  field: React.RefObject<HTMLInputElement | null>,
-  act: ReturnType<typeof useMeter>['act'],
-  enabled: boolean,
-) {
-  const latest = useRef(act)
-  useEffect(() => {
-    latest.current = act
-  })
-  useEffect(() => {
-    if (!enabled) return
-    const type = (event: KeyboardEvent) => {
-      if (event.ctrlKey || event.metaKey || event.altKey || !/^[0-9.,]$/.test(event.key)) return
-      const target = event.target
-      if (!(target instanceof HTMLElement) || document.querySelector('dialog[open]')) return
-      const other = target.closest('input, textarea, select')
-      if (other instanceof HTMLInputElement ? !['radio', 'checkbox'].includes(other.type) : other) return
-      event.preventDefault()
-      latest.current({ do: 'press', key: event.key === ',' ? '.' : event.key })
-      field.current?.focus()
-    }
-    document.addEventListener('keydown', type, true)
-    return () => document.removeEventListener('keydown', type, true)
-  }, [enabled, field])
 }

@@ -7,7 +7,7 @@ import type { Answer, SiteAnswer } from '@/diagrams/faults/answer'
 import { VerdictGlyph } from '../ui/verdict-glyph'
 import { ConnectorFace } from './connector-face'
 import { connectorOf } from './next-words'
-import { lookFor, modeWords, siteTitle } from './site-words'
+import { lookFor, siteTitle } from './site-words'
 
 /** What was found: place first, then what, then why; what it cleared, and under which assumption. */
 export function VerdictCard({
@@ -27,6 +27,7 @@ export function VerdictCard({
   const point = first && pointOfSite(first.site)
   const face = point ? connectorOf(circuit, point) : null
   const blown = mode?.blows ?? []
+  const [head, rest] = headAndRest(answer.says)
   return (
     <section
       aria-labelledby="verdict"
@@ -37,9 +38,9 @@ export function VerdictCard({
         {first && answer.outcome !== 'no-fault' && <VerdictGlyph verdict="faulty" size={40} />}
         <div className="min-w-0 flex-1" role="status">
           <h3 id="verdict" className="text-title">
-            {heading(circuit, answer, first)}
+            {head}
           </h3>
-          <p className="mt-1 text-dense text-ink-2">{answer.says}</p>
+          {rest && <p className="mt-1 text-dense text-ink-2">{rest}</p>}
         </div>
         {face && (
           <ConnectorFace circuit={circuit} connector={face.connector} cavity={face.cavity} width={124} />
@@ -75,23 +76,10 @@ export function VerdictCard({
   )
 }
 
-function heading(circuit: Circuit, answer: Answer, first: SiteAnswer | undefined): string {
-  switch (answer.outcome) {
-    case 'no-fault':
-      return 'Nothing wrong in the conditions tried'
-    case 'cannot-be':
-      return answer.reading ? `Take ${answer.reading} again` : 'These readings fit no fault'
-    case 'two-faults':
-      return 'Two faults'
-    default: {
-      if (!first) return ''
-      const mode = likeliestMode(first)
-      const words = mode ? modeWords[mode.mode] : 'faulty'
-      return `${words.charAt(0).toUpperCase()}${words.slice(1)} at ${siteTitle(circuit, first.site)
-        .replace(/^Wire /, 'wire ')
-        .replace(/^Contact /, 'contact ')}`
-    }
-  }
+/** The first sentence says place and what; the others say why. */
+function headAndRest(says: string): [string, string] {
+  const end = says.search(/[.](?=\s)/)
+  return end < 0 ? [says.replace(/[.]$/, ''), ''] : [says.slice(0, end), says.slice(end + 1).trim()]
 }
 
 export function likeliestMode(site: SiteAnswer) {

@@ -2,22 +2,18 @@
 
 import { type Ref, useMemo } from 'react'
 import type { Circuit } from '@/diagrams/document/circuit-schema'
-import { siteName } from '@/diagrams/document/sites'
 import type { Reading } from '@/diagrams/document/reading-schema'
-import { verdictGlyph } from '@/diagrams/drawing/verdict-mark'
-import type { VerdictMark } from '@/diagrams/drawing/wire-stroke'
-import { bandStrokes } from '@/diagrams/drawing/wire-stroke'
 import type { Answer } from '@/diagrams/faults/answer'
 import { conditionWords, valueWords } from '@/lib/client/meter/reading-words'
 import { readingNumber } from '@/lib/client/evaluator/numbered-readings'
 import type { Trace } from '@/lib/shared/api/traces'
-import { InksContext, printInks } from '../../canvas/inks'
-import { Primitives } from '../../canvas/primitives'
+import { printInks } from '../../canvas/inks'
 import { StaticDrawing } from '../../canvas/static-drawing'
 import { Mark } from '../../ui/wordmark'
 import { cautionWords, makerFirst, meterRules } from '../caution-words'
-import { modeWords, siteTitle } from '../site-words'
 import { traceOverlay } from '../trace-overlay'
+import { HandoutFindings } from './handout-findings'
+import { HandoutKey } from './handout-key'
 import { HandoutReadings } from './handout-readings'
 
 const widthPixels = 1400
@@ -96,10 +92,10 @@ export function HandoutSheet({
       <div style={{ padding: '12px 0' }}>
         <StaticDrawing circuit={circuit} overlay={overlay} width={widthPixels - 80} mostHeight={620} />
       </div>
-      <KeyStrip />
+      <HandoutKey />
       <div style={{ display: 'flex', gap: '36px', marginTop: '16px' }}>
         <div style={{ width: '38%' }}>
-          <Findings circuit={circuit} trace={trace} answer={answer} started={readings.length > 0} />
+          <HandoutFindings circuit={circuit} trace={trace} answer={answer} started={readings.length > 0} />
           <div
             style={{
               border: `2px solid ${paint('ink')}`,
@@ -149,108 +145,6 @@ export function HandoutSheet({
         </span>
       </div>
     </div>
-  )
-}
-
-function Findings({
-  circuit,
-  trace,
-  answer,
-  started,
-}: {
-  circuit: Circuit
-  trace: Trace
-  answer: Answer | null
-  started: boolean
-}) {
-  const faulty = answer?.sites.filter((site) => site.verdict === 'faulty') ?? []
-  const good = answer?.sites.filter((site) => site.verdict === 'proved-good') ?? []
-  const firm = good.filter((site) => site.firm)
-  const left = answer?.sites.filter((site) => site.verdict === 'in-question') ?? []
-  const { finding } = trace
-  return (
-    <div style={{ fontSize: '15.5px' }}>
-      <div style={{ fontSize: '23px', fontWeight: 800, lineHeight: 1.15 }}>
-        {!started
-          ? 'No reading yet'
-          : faulty.length > 0
-            ? faulty.map((site) => siteTitle(circuit, site.site)).join(', ')
-            : answer?.outcome === 'no-fault'
-              ? 'Nothing wrong in the conditions tried'
-              : `${left.length} places in question`}
-      </div>
-      {started && answer && <div style={{ marginTop: '6px' }}>{answer.says}</div>}
-      {started && left.length > 0 && left.length <= 12 && (
-        <div style={{ marginTop: '6px' }}>
-          <b>In question:</b> {left.map((site) => siteName(circuit, site.site)).join(', ')}.
-        </div>
-      )}
-      {started && good.length > 0 && (
-        <div style={{ marginTop: '6px' }}>
-          {good.length} places cleared if there is one fault: {firm.length} of them by two independent
-          readings, {good.length - firm.length} only while every reading is right.
-        </div>
-      )}
-      {finding && (
-        <div style={{ marginTop: '10px' }}>
-          <b>Found:</b>{' '}
-          {finding.site && finding.mode
-            ? `${siteName(circuit, finding.site)}, ${modeWords[finding.mode]}`
-            : 'nothing wrong'}
-          . {finding.repaired ? 'Repaired.' : 'Not repaired yet.'} {finding.note}
-        </div>
-      )}
-    </div>
-  )
-}
-
-const patterns: readonly [VerdictMark, string][] = [
-  ['faulty', 'faulty'],
-  ['in-question', 'in question'],
-  ['proved-good', 'proved good'],
-]
-
-/** What the three patterns and the wire labels mean. */
-function KeyStrip() {
-  const { paint } = printInks
-  return (
-    <InksContext.Provider value={printInks}>
-      <div
-        style={{
-          borderTop: `1.5px solid ${paint('ink')}`,
-          borderBottom: `1.5px solid ${paint('ink')}`,
-          padding: '8px 0',
-          display: 'flex',
-          alignItems: 'center',
-          gap: '28px',
-          fontSize: '15px',
-        }}
-      >
-        {patterns.map(([verdict, words]) => (
-          <span key={verdict} style={{ display: 'flex', alignItems: 'center', gap: '8px' }}>
-            <svg width="92" height="30" viewBox="0 0 92 30" aria-hidden="true" focusable="false">
-              <Primitives
-                of={[
-                  ...bandStrokes(5, verdict).map((stroke) => ({
-                    kind: 'path' as const,
-                    d: 'M0 15H58',
-                    stroke: stroke.stroke,
-                    strokeWidth: stroke.width,
-                    dash: stroke.dash,
-                  })),
-                  { kind: 'path', d: 'M0 15H58', stroke: 'ink', strokeWidth: 5 },
-                  ...verdictGlyph(verdict, { x: 76, y: 15 }),
-                ]}
-              />
-            </svg>
-            <b>{words}</b>
-          </span>
-        ))}
-        <span style={{ marginLeft: 'auto' }}>
-          Wire labels: insulation colour, base / stripe (IEC 60757), then mm²
-        </span>
-      </div>
-    </InksContext.Provider>
   )
 }
 

@@ -22,8 +22,13 @@ export function ConditionChips({
   const { condition } = state
   const positions = positionsIn(circuit, condition.controls)
   const out = condition.unplugged.map((id) => unpluggedName(circuit, id))
+  const battery = !condition.battery ? 'off' : condition.charging ? 'charging' : 'connected'
   return (
-    <div role="group" aria-label="Conditions" className="flex flex-wrap gap-2">
+    <div
+      role="group"
+      aria-label="Conditions"
+      className="flex flex-wrap gap-2 laptop:-mx-1 laptop:flex-nowrap laptop:overflow-x-auto laptop:px-1 laptop:py-1 laptop:*:flex-none"
+    >
       {circuit.controls.map((control) => {
         const position = positions[control.id] ?? control.rest
         const next = control.positions[(control.positions.indexOf(position) + 1) % control.positions.length]
@@ -45,18 +50,15 @@ export function ConditionChips({
       />
       <Chip
         name="Battery"
-        position={condition.battery ? 'connected' : 'off'}
+        position={battery}
         data-control="battery"
-        onClick={() => act({ do: 'battery', connected: !condition.battery })}
+        onClick={() => {
+          // Connected, charging, off, and round again.
+          if (battery === 'connected') act({ do: 'charging', charging: true })
+          else if (battery === 'charging') act({ do: 'battery', connected: false })
+          else act({ do: 'battery', connected: true })
+        }}
       />
-      {condition.battery && (
-        <Chip
-          name="Charging"
-          position={condition.charging ? 'yes' : 'no'}
-          data-control="charging"
-          onClick={() => act({ do: 'charging', charging: !condition.charging })}
-        />
-      )}
       <UnplugDialog
         circuit={circuit}
         unplugged={condition.unplugged}

@@ -1,13 +1,12 @@
 'use client'
 
-import { type ReactNode, type RefObject, useId, useMemo, useState } from 'react'
+import { type ReactNode, type RefObject, useId, useState } from 'react'
 import type { Circuit } from '@/diagrams/document/circuit-schema'
 import { pointName } from '@/diagrams/document/points'
 import { siteName } from '@/diagrams/document/sites'
 import { type MeterAction, type MeterKind, meterKinds, type MeterState } from '@/lib/client/meter/meter-state'
 import { kindWords } from '@/lib/client/meter/reading-words'
 import { mostVolts, typedValue } from '@/lib/client/meter/typed-value'
-import { pointPlaces } from '../../canvas/point-place'
 import { Button } from '../../ui/button'
 import { Choice } from '../../ui/choice'
 import { classNames } from '../../ui/class-names'
@@ -16,9 +15,9 @@ import type { MeterWork } from '../use-meter'
 import { ConditionChips } from './condition-chips'
 import { Keypad } from './keypad'
 import { LeadField } from './lead-field'
+import { type Listing, MeterLists } from './meter-lists'
 import { MeterScale } from './meter-scale'
 import { MeterWindow } from './meter-window'
-import { PickDialog } from './pick-dialog'
 import { PickField } from './pick-field'
 
 const kinds = meterKinds.map((kind) => ({ value: kind, label: kindWords[kind] }))
@@ -26,8 +25,6 @@ const worksChoices = [
   { value: 'yes', label: 'Works' },
   { value: 'no', label: 'Does not' },
 ] as const
-
-type Listing = 'red' | 'black' | 'wire' | 'node' | null
 
 /** Entry of a reading: kind, leads, conditions, the figure, and one key that logs it. */
 export function MeterPanel({
@@ -51,7 +48,7 @@ export function MeterPanel({
   const value = typedValue(state)
   const takesFigure = state.kind !== 'works'
   return (
-    <div className="flex min-h-0 flex-1 flex-col gap-2">
+    <div className="flex min-h-0 w-full min-w-0 flex-1 flex-col gap-2">
       <div className="flex items-center gap-3">
         {layout === 'tray' && <h2 className="hidden text-body font-bold laptop:block">Meter</h2>}
         <Choice
@@ -115,12 +112,7 @@ export function MeterPanel({
             }
           />
           {layout === 'tray' && (
-            <Button
-              look="filled"
-              size="bay"
-              onClick={enter}
-              className="hidden w-28 leading-tight laptop:flex"
-            >
+            <Button look="filled" size="bay" onClick={enter} className="w-28 leading-tight max-laptop:hidden">
               Enter reading
             </Button>
           )}
@@ -156,7 +148,13 @@ export function MeterPanel({
           <Keypad onPress={(key) => act({ do: 'press', key })} onEnter={enter} />
         </div>
       )}
-      <Lists circuit={circuit} state={state} act={act} listing={listing} onClose={() => setListing(null)} />
+      <MeterLists
+        circuit={circuit}
+        state={state}
+        act={act}
+        listing={listing}
+        onClose={() => setListing(null)}
+      />
     </div>
   )
 }
@@ -164,60 +162,4 @@ export function MeterPanel({
 function leadWords(circuit: Circuit, state: MeterState, lead: 'red' | 'black'): string | null {
   const point = lead === 'red' ? state.red : state.black
   return point === null ? null : pointName(circuit, point)
-}
-
-function Lists({
-  circuit,
-  state,
-  act,
-  listing,
-  onClose,
-}: {
-  circuit: Circuit
-  state: MeterState
-  act: (action: MeterAction) => void
-  listing: Listing
-  onClose: () => void
-}) {
-  const points = useMemo(
-    () => [
-      { id: 'chassis', name: 'chassis', about: '0 V' },
-      ...pointPlaces(circuit, state.condition.unplugged).map(({ point }) => ({
-        id: point,
-        name: pointName(circuit, point),
-      })),
-    ],
-    [circuit, state.condition.unplugged],
-  )
-  return (
-    <>
-      <PickDialog
-        title={listing === 'black' ? 'Black lead' : 'Red lead'}
-        choices={points}
-        open={listing === 'red' || listing === 'black'}
-        onPick={(point) => act({ do: 'put-lead', lead: listing === 'black' ? 'black' : 'red', point })}
-        onClose={onClose}
-      />
-      <PickDialog
-        title="Clamp round which wire"
-        choices={circuit.wires.map((wire) => ({
-          id: wire.id,
-          name: siteName(circuit, `wire:${wire.id}`),
-          about: wire.colour,
-        }))}
-        open={listing === 'wire'}
-        onPick={(wire) => act({ do: 'tap-wire', wire })}
-        onClose={onClose}
-      />
-      <PickDialog
-        title="Which load"
-        choices={circuit.nodes
-          .filter((node) => node.kind === 'load')
-          .map((node) => ({ id: node.id, name: siteName(circuit, `part:${node.id}`) }))}
-        open={listing === 'node'}
-        onPick={(node) => act({ do: 'tap-load', node })}
-        onClose={onClose}
-      />
-    </>
-  )
 }

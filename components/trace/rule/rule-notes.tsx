@@ -31,12 +31,12 @@ export function LegNote({
   leg,
   cut,
   cells,
-  started,
+  judged,
 }: {
   leg: RuleLegLayout
   cut: RuleCut | null
   cells: readonly string[]
-  started: boolean
+  judged: boolean
 }) {
   const own = leg.entries.filter((entry) => entry.kind === 'cell')
   if (cut && own.length > 0) {
@@ -62,7 +62,7 @@ export function LegNote({
       </div>
     )
   }
-  const words = !started ? leg.name : leg.left === 0 ? `${leg.name}: proved good` : leg.name
+  const words = !judged ? leg.name : leg.left === 0 ? `${leg.name}: proved good` : leg.name
   return (
     <Bracket width={leg.width} strong={leg.left > 0}>
       {words}

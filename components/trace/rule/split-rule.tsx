@@ -3,16 +3,15 @@
 import { useMemo, useState } from 'react'
 import type { Circuit } from '@/diagrams/document/circuit-schema'
 import { siteName } from '@/diagrams/document/sites'
-import type { Answer, NextReading, SiteAnswer } from '@/diagrams/faults/answer'
-import { classNames } from '../../ui/class-names'
+import type { Answer, NextReading } from '@/diagrams/faults/answer'
 import { Dialog } from '../../ui/dialog'
-import { Tick } from '../../ui/glyphs'
 import { VerdictGlyph, verdictWords } from '../../ui/verdict-glyph'
-import { modeWords, shortSiteName } from '../site-words'
 import { useWidth } from '../use-width'
 import { CutMark, LegNote } from './rule-notes'
 import { ruleCut } from './rule-cut'
+import { RuleCell } from './rule-cell'
 import { layRule, type RuleEntry, type RuleLeg } from './rule-layout'
+import { RuleRun } from './rule-run'
 
 /** Every place in path order: those left drawn wide, those proved good narrow, and where the next reading cuts. */
 export function SplitRule({
@@ -73,7 +72,7 @@ export function SplitRule({
                 </li>
               ))}
             </ol>
-            <LegNote leg={leg} cut={cut} cells={cells} started={started} />
+            <LegNote leg={leg} cut={cut} cells={cells} judged={places !== null} />
           </li>
         ))}
         {layout.more.length > 0 && (
@@ -129,98 +128,4 @@ export function SplitRule({
 
 function entryKey(entry: RuleEntry): string {
   return entry.kind === 'cell' ? entry.site : `${entry.kind} ${entry.sites[0]}`
-}
-
-function RuleCell({
-  circuit,
-  site,
-  id,
-  onPlace,
-}: {
-  circuit: Circuit
-  site: SiteAnswer | undefined
-  id: string
-  onPlace: (site: string) => void
-}) {
-  const faulty = site?.verdict === 'faulty'
-  const mode = site?.modes.toSorted((one, other) => other.probability - one.probability)[0]?.mode
-  const name = shortSiteName(circuit, id)
-  const spoken = `${siteName(circuit, id)}, ${verdictWords[site?.verdict ?? 'in-question']}${faulty && mode ? `, ${modeWords[mode]}` : ''}`
-  return (
-    <button
-      type="button"
-      aria-label={spoken}
-      title={spoken}
-      data-site={id}
-      onClick={() => onPlace(id)}
-      className={classNames(
-        'relative flex h-11 w-full flex-col items-stretch overflow-hidden bg-window text-center',
-        faulty ? 'border-area border-ink p-[3px] bg-faulty-band' : 'border-control border-ink',
-      )}
-    >
-      <span
-        className={classNames(
-          'flex min-h-0 flex-1 items-center justify-center gap-2 truncate px-1 text-small font-bold',
-          faulty && 'bg-window',
-        )}
-      >
-        {faulty && <VerdictGlyph verdict="faulty" size={20} />}
-        <span className="truncate">{faulty && mode ? `${name}: ${modeWords[mode]}` : name}</span>
-      </span>
-      {!faulty && (
-        <span
-          aria-hidden="true"
-          className="block h-2.5 flex-none"
-          style={{
-            backgroundImage:
-              'repeating-linear-gradient(90deg, var(--question-band) 0 3.2px, transparent 3.2px 7.4px)',
-          }}
-        />
-      )}
-    </button>
-  )
-}
-
-/** A run of places proved good: two rails, a scale stroke for each, one tick for all; or places not yet judged. */
-function RuleRun({ entry, onList }: { entry: Exclude<RuleEntry, { kind: 'cell' }>; onList: () => void }) {
-  const count = entry.sites.length
-  const each = entry.width / count
-  const good = entry.kind === 'good'
-  return (
-    <button
-      type="button"
-      onClick={onList}
-      aria-label={good ? `${count} proved good` : `${count} places, not judged yet`}
-      className="relative block h-11 w-full"
-    >
-      <svg width="100%" height="44" aria-hidden="true" focusable="false" style={{ display: 'block' }}>
-        {each >= 3 &&
-          Array.from({ length: count + 1 }, (_, at) => (
-            <line
-              key={at * each}
-              x1={Math.min(Math.max(at * each, 0.5), entry.width - 0.5)}
-              x2={Math.min(Math.max(at * each, 0.5), entry.width - 0.5)}
-              y1={good ? 8 : 6}
-              y2={good ? 16 : 38}
-              style={{ stroke: good ? 'var(--edge)' : 'var(--line)', strokeWidth: 1.2 }}
-            />
-          ))}
-        {good ? (
-          <>
-            <line x1="0" x2="100%" y1="22" y2="22" style={{ stroke: 'var(--good-band)', strokeWidth: 2 }} />
-            <line x1="0" x2="100%" y1="32" y2="32" style={{ stroke: 'var(--good-band)', strokeWidth: 2 }} />
-          </>
-        ) : (
-          <line x1="0" x2="100%" y1="38" y2="38" style={{ stroke: 'var(--edge)', strokeWidth: 1.5 }} />
-        )}
-      </svg>
-      {good && entry.width >= 26 && (
-        <span className="absolute inset-0 flex items-center justify-center pt-2.5 text-good">
-          <span className="bg-panel px-0.5">
-            <Tick size={14} />
-          </span>
-        </span>
-      )}
-    </button>
-  )
 }

@@ -85,7 +85,7 @@ export function meterReducer(state: MeterState, action: MeterAction): MeterState
     case 'battery':
       return withCondition(state, {
         battery: action.connected,
-        charging: action.connected && state.condition.charging,
+        charging: false,
       })
     case 'charging':
       return withCondition(state, { charging: action.charging })

@@ -1,22 +1,7 @@
-import { z } from 'zod'
-import { type Reading, readingSchema } from '@/diagrams/document/reading-schema'
+import type { Reading } from '@/diagrams/document/reading-schema'
 import type { Trace } from '@/lib/shared/api/traces'
 import type { Called } from '../api/call-api'
-
-const changeSchema = z.discriminatedUnion('kind', [
-  z.object({ kind: z.literal('put'), reading: readingSchema }),
-  z.object({ kind: z.literal('remove'), readingId: z.string() }),
-  z.object({ kind: z.literal('answer-cautions') }),
-])
-/** Something entered into a trace that the server has not confirmed yet. */
-export type Change = z.infer<typeof changeSchema>
-
-/** What the queue needs of `localStorage`. */
-export interface Store {
-  getItem(key: string): string | null
-  setItem(key: string, value: string): void
-  removeItem(key: string): void
-}
+import { type Change, readChanges, type Store } from './kept-changes'
 
 export interface Sender {
   put(traceId: string, reading: Reading): Promise<Called<Trace>>
@@ -199,20 +184,4 @@ function keyOf(traceId: string): string {
 
 function idle(savedAt: number | null): QueueState {
   return { kind: 'idle', waiting: 0, savedAt }
-}
-
-function readChanges(store: Store, key: string): Change[] {
-  const text = store.getItem(key)
-  if (text === null) return []
-  try {
-    const parsed = z.array(z.unknown()).safeParse(JSON.parse(text))
-    if (!parsed.success) return []
-    // One spoilt entry must not take the others with it.
-    return parsed.data.flatMap((entry) => {
-      const change = changeSchema.safeParse(entry)
-      return change.success ? [change.data] : []
-    })
-  } catch {
-    return []
-  }
 }

@@ -1,5 +1,5 @@
 import type { Reading } from '@/diagrams/document/reading-schema'
-import type { Change } from './offline-queue'
+import type { Change } from './kept-changes'
 
 /** The readings as the person entered them: the server's, with what still waits on this tablet put on top. */
 export function readingsWithChanges(stored: readonly Reading[], changes: readonly Change[]): Reading[] {

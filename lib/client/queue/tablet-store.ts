@@ -1,4 +1,4 @@
-import type { Store } from './offline-queue'
+import type { Store } from './kept-changes'
 
 /** `localStorage`, or memory where the browser refuses it (then a reload may lose what was not sent). */
 export function tabletStore(): Store {
