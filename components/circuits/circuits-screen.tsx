@@ -122,7 +122,11 @@ export function CircuitsScreen({
               <>
                 <p role="status" className={classNames(found.isPlaceholderData && 'text-ink-3')}>
                   <span className="text-lead">{countWords(first, rows)}</span>
-                  <span className="ml-3 text-body text-ink-2">{captionWords(first, rows, finders)}</span>
+                  <span className="ml-3 text-body text-ink-2">
+                    {found.isPlaceholderData
+                      ? `${online ? 'Looking for' : 'Waiting for the network to look for'} ${findersWords(finders) || 'all circuits'}`
+                      : captionWords(first, rows, finders)}
+                  </span>
                 </p>
                 {rows.length > 0 ? (
                   <div className="mt-2">
