@@ -52,7 +52,7 @@ export function partState(circuit: Circuit, node: Node, moment: Moment): PartSta
   )
   const open = new Set(moment.unplugged)
   const ports = portsOf(node)
-  const wiredEnds = new Set(circuit.wires.flatMap((wire) => [wire.from, wire.to]))
+  const wired = wiredEnds(circuit)
   return {
     closed: new Set(
       node.kind === 'switch'
@@ -67,9 +67,20 @@ export function partState(circuit: Circuit, node: Node, moment: Moment): PartSta
     pulled: open.has(node.id),
     blown: moment.blown?.includes(node.id) ?? false,
     dead: node.kind === 'feed' && !holds(node.live, positions),
-    wired: new Set(ports.filter((port) => wiredEnds.has(`${node.id}.${port.name}`)).map((port) => port.name)),
+    wired: new Set(ports.filter((port) => wired.has(`${node.id}.${port.name}`)).map((port) => port.name)),
     liveWords: node.kind === 'feed' ? liveWords(circuit, node.live) : '',
   }
+}
+
+const knownEnds = new WeakMap<Circuit['wires'], ReadonlySet<string>>()
+
+/** Every end that has a wire; kept with the list of wires, because every part asks. */
+function wiredEnds(circuit: Circuit): ReadonlySet<string> {
+  const before = knownEnds.get(circuit.wires)
+  if (before) return before
+  const ends = new Set(circuit.wires.flatMap((wire) => [wire.from, wire.to]))
+  knownEnds.set(circuit.wires, ends)
+  return ends
 }
 
 function liveWords(circuit: Circuit, live: Extract<Node, { kind: 'feed' }>['live']): string {
