@@ -28,43 +28,53 @@ export interface Site {
 
 /** Wires that lie beside a wire in a connector or part, so that the two can touch. */
 export function neighbourWires(circuit: Circuit, wireId: string): string[] {
-  const wire = circuit.wires.find((w) => w.id === wireId)
-  if (!wire) return []
-  const byEnd = wiresByEnd(circuit)
-  const beside = new Set<string>()
-  for (const end of [wire.from, wire.to])
-    for (const other of endsBeside(circuit, end)) for (const id of byEnd.get(other) ?? []) beside.add(id)
-  beside.delete(wireId)
-  return [...beside]
+  let known = neighboursByCircuit.get(circuit)
+  if (!known) neighboursByCircuit.set(circuit, (known = findNeighbours(circuit)))
+  return known.get(wireId) ?? []
 }
 
-/** The ends next to one end: neighbouring cavity of its connector on the same side, or neighbouring port of its part. */
-function endsBeside(circuit: Circuit, end: string): string[] {
-  const places = circuit.nodes.flatMap((node) =>
-    portsOf(node).map((port, index) => ({
-      end: `${node.id}.${port.name}`,
-      node: node.id,
-      index,
-      // An inline connector has two harness sides, a part's connector has one.
-      face:
-        port.connector === null ? null : `${port.connector}/${node.kind === 'cavity' ? port.name : 'part'}`,
-      cavity: port.cavity,
-      inline: node.kind === 'cavity',
-    })),
-  )
-  const here = places.find((place) => place.end === end)
-  if (!here) return []
-  return places
-    .filter(
-      (place) =>
-        (here.face !== null &&
-          place.face === here.face &&
-          here.cavity !== null &&
-          place.cavity !== null &&
-          Math.abs(place.cavity - here.cavity) === 1) ||
-        (!here.inline && place.node === here.node && Math.abs(place.index - here.index) === 1),
-    )
-    .map((place) => place.end)
+/** Asked for every wire, again and again, of a document that does not change. */
+const neighboursByCircuit = new WeakMap<Circuit, Map<string, string[]>>()
+
+/**
+ * Two ends lie beside each other in neighbouring cavities of one connector on the same side (an
+ * inline connector has two harness sides, a part's connector one), or in neighbouring ports of a part.
+ */
+function findNeighbours(circuit: Circuit): Map<string, string[]> {
+  const byEnd = wiresByEnd(circuit)
+  const beside = new Map<string, Set<string>>(circuit.wires.map((wire) => [wire.id, new Set()]))
+  const touch = (a: string | undefined, b: string | undefined) => {
+    for (const x of byEnd.get(a ?? '') ?? [])
+      for (const y of byEnd.get(b ?? '') ?? [])
+        if (x !== y) {
+          beside.get(x)!.add(y)
+          beside.get(y)!.add(x)
+        }
+  }
+  const endAt = new Map<string, string>()
+  for (const node of circuit.nodes)
+    for (const port of portsOf(node))
+      if (port.connector !== null && port.cavity !== null)
+        endAt.set(
+          cavityKey(port.connector, node.kind === 'cavity' ? port.name : 'part', port.cavity),
+          `${node.id}.${port.name}`,
+        )
+  for (const node of circuit.nodes)
+    portsOf(node).forEach((port, index, ports) => {
+      const end = `${node.id}.${port.name}`
+      if (port.connector !== null && port.cavity !== null)
+        touch(
+          end,
+          endAt.get(cavityKey(port.connector, node.kind === 'cavity' ? port.name : 'part', port.cavity + 1)),
+        )
+      const next = ports[index + 1]
+      if (next && node.kind !== 'cavity') touch(end, `${node.id}.${next.name}`)
+    })
+  return new Map(circuit.wires.map((wire) => [wire.id, [...beside.get(wire.id)!]]))
+}
+
+function cavityKey(connector: string, face: string, cavity: number): string {
+  return `${connector}/${face}/${cavity}`
 }
 
 /** Every site of a circuit with its modes, in the order of the document. Only ports that have a wire are sites. */

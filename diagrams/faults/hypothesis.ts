@@ -101,13 +101,22 @@ function variants(
     entry.possible[index] = true
     if (certain) entry.certain[index] = true
   }
+  const blown = (severity: number, times: number) =>
+    blownFuses(network, studies, plain, severity, blowsAtRatingTimes * times, cache)
+  const alwaysSame = (): string[] | null => {
+    if (!isShort(kind.mode) || network.fuses.length === 0) return []
+    // The milder the short, the less a fuse carries: the same at both ends and between is the same throughout.
+    const some = [grid[0]!, grid[grid.length >> 1]!, grid.at(-1)!]
+    const sets = some.flatMap((severity) => [blown(severity, fuseSlack.low), blown(severity, fuseSlack.high)])
+    const key = (set: string[]) => set.toSorted().join(',')
+    return sets.every((set) => key(set) === key(sets[0]!)) ? sets[0]! : null
+  }
+  const same = alwaysSame()
   grid.forEach((severity, index) => {
-    if (!isShort(kind.mode) || network.fuses.length === 0) return mark(index, [], true)
-    const blown = (times: number) =>
-      blownFuses(network, studies, plain, severity, blowsAtRatingTimes * times, cache)
-    mark(index, blown(1), true)
-    mark(index, blown(fuseSlack.low), false)
-    mark(index, blown(fuseSlack.high), false)
+    if (same) return mark(index, same, true)
+    mark(index, blown(severity, 1), true)
+    mark(index, blown(severity, fuseSlack.low), false)
+    mark(index, blown(severity, fuseSlack.high), false)
   })
   return [...found.values()].flatMap(({ blows, certain, possible }) => {
     const alteration = withBlown(plain, blows.map(fuseBranch))

@@ -6,13 +6,13 @@ import type { CellPrediction } from './prediction-table'
 import { loadThreshold, type ReadingScope } from './reading-scope'
 import { accuracyOf } from './tolerance-rule'
 
-/** One reading in a hundred is taken at the wrong place or in the wrong condition. */
-export const slipShare = 0.01
+/** One reading in two hundred is taken at the wrong place or in the wrong condition (a guess). */
+export const slipShare = 0.005
 
 /**
  * Likelihood of one reading under one cell, as a function of the battery scale. The severity is
  * taken as even across the cell, the meter's error as normal with half its limit for sigma, and a
- * hundredth of all readings as slips that may show anything.
+ * small share of all readings as slips that may show anything.
  */
 export type LikelihoodAt = (scale: number) => number
 

@@ -1,7 +1,7 @@
 import type { Probe } from '../document/reading-schema'
 import { noAlteration, type Alteration } from '../solver/alteration'
 import { buildNetwork } from '../solver/build-network'
-import { Case, type Settled } from '../solver/case'
+import { Case, coilVolts, elementVolts, voltsBetween, type Settled } from '../solver/case'
 import type { Network } from '../solver/network'
 import { stateKey, Study, type States } from '../solver/study'
 import { chargingRange, restingRange, weakRange, type ScaleRange } from './battery-range'
@@ -96,7 +96,10 @@ function settleEnd(given: Case, severity: number, range: ScaleRange): EndStates 
   if (!settled) return null
   const possible = new Map([[stateKey(settled.states), settled.states]])
   const { relays, modules, diodes } = given.study.network
-  if (relays.length + modules.length + diodes.length > 0)
+  if (
+    relays.length + modules.length + diodes.length > 0 &&
+    !given.passed.every((state) => isCertain(given, state))
+  )
     for (const [scale, reluctance] of [
       [range.high, eager],
       [range.low, reluctant],
@@ -106,6 +109,24 @@ function settleEnd(given: Case, severity: number, range: ScaleRange): EndStates 
       possible.set(stateKey(other.states), other.states)
     }
   return { settled, possible }
+}
+
+/**
+ * True when neither battery nor tolerances can turn a relay, module or diode: far from where it
+ * changes, by more than what `eager` and `reluctant` allow together with the battery's range.
+ */
+function isCertain(given: Case, settled: Settled): boolean {
+  // A weak battery ranges too widely to say.
+  if (given.alteration.weak) return false
+  const { relays, modules, diodes } = given.study.network
+  const far = (part: number) => part < 0.85 || part > 1.22
+  return (
+    relays.every((relay, i) => far(coilVolts(given, settled, i) / relay.pullIn)) &&
+    modules.every((module) =>
+      module.supplies.every((pin) => far(voltsBetween(settled, pin, module.innerGround) / module.runsFrom)),
+    ) &&
+    diodes.every((diode) => elementVolts(given, settled, diode.branch) < diode.volts / 2)
+  )
 }
 
 /** A study for a probe's condition, with the leads it adds. */

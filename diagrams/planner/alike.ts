@@ -22,8 +22,12 @@ export function groupsAlike(
   const sites = suspects.filter((site) => probabilityOf.get(site)! >= leastProbability).slice(0, mostSites)
   const indexOf = new Map(sites.map((site, i) => [site, i]))
   const apart = sites.map(() => sites.map(() => false))
+  let together: [number, number][] = sites.flatMap((_, x) =>
+    sites.slice(x + 1).map((_, i): [number, number] => [x, x + 1 + i]),
+  )
   return {
     see(bins, particles) {
+      if (together.length === 0) return
       // Share of each site's probability per outcome.
       const shares = bins.map(() => new Float64Array(sites.length))
       const whole = new Float64Array(sites.length)
@@ -35,13 +39,13 @@ export function groupsAlike(
           whole[index]! += particles[i]!.weight
         }
       })
-      for (let x = 0; x < sites.length; x++)
-        for (let y = x + 1; y < sites.length; y++) {
-          if (apart[x]![y] || whole[x] === 0 || whole[y] === 0) continue
-          let distance = 0
-          for (const share of shares) distance += Math.abs(share[x]! / whole[x]! - share[y]! / whole[y]!) / 2
-          if (distance > alikeOverlap) apart[x]![y] = true
-        }
+      for (const [x, y] of together) {
+        if (whole[x] === 0 || whole[y] === 0) continue
+        let distance = 0
+        for (const share of shares) distance += Math.abs(share[x]! / whole[x]! - share[y]! / whole[y]!) / 2
+        if (distance > alikeOverlap) apart[x]![y] = true
+      }
+      together = together.filter(([x, y]) => !apart[x]![y])
     },
     groups() {
       const groupOf = sites.map((_, i) => i)

@@ -17,10 +17,10 @@ export const noFaultUnit = ''
 /** Hypotheses under this probability are left out of planning. */
 const least = 2e-5
 
-/**
- * At most three severities for each hypothesis, at a sixth, a half and five sixths of its
- * probability. Weights sum to nearly 1.
- */
+/** Parts of a hypothesis's probability at which it is represented: the likelier it is, the more finely. */
+const marksOf = [[1 / 2], [1 / 4, 3 / 4], [1 / 6, 1 / 2, 5 / 6]] as const
+
+/** One to three severities for each hypothesis. Weights sum to nearly 1. */
 export function particlesOf(model: FaultModel, posterior: Posterior): Particle[] {
   const particles: Particle[] = [
     { hypothesis: null, site: noFaultUnit, severity: 0, weight: posterior.noFault },
@@ -30,7 +30,7 @@ export function particlesOf(model: FaultModel, posterior: Posterior): Particle[]
     let mass = 0
     for (const cell of cells) mass += cell
     if (mass < least) return
-    const marks = cells.length > 1 && mass > 20 * least ? [1 / 6, 1 / 2, 5 / 6] : [1 / 2]
+    const marks = cells.length === 1 || mass < 0.0005 ? marksOf[0] : mass < 0.01 ? marksOf[1] : marksOf[2]
     const chosen = new Map<number, number>()
     let before = 0
     let next = 0

@@ -51,7 +51,7 @@ export function planNext(model: FaultModel, posterior: Posterior, readings: read
   const taken = new Set(readings.map((reading) => probeKey(circuit, reading)))
   const alike = groupsAlike(suspects, bySite)
 
-  const found: (PlannedReading & { rate: number; partition: string })[] = []
+  const found: (PlannedReading & { rate: number })[] = []
   let mostBits = 0
   for (const set of candidateReadings(circuit, suspects, workplace.condition)) {
     const rows = forecast(model, set, particles)
@@ -71,15 +71,15 @@ export function planNext(model: FaultModel, posterior: Posterior, readings: read
         bins,
         row: rows[i]!,
         rate: bits / minutes,
-        partition: partitionKey(bins),
       })
     })
   }
   found.sort((a, b) => b.rate - a.rate)
   const partitions = new Set<string>()
   const next: PlannedReading[] = []
-  for (const { probe, bits, minutes, bins, row, partition } of found) {
+  for (const { probe, bits, minutes, bins, row } of found) {
     // The same split at a higher price is no alternative.
+    const partition = partitionKey(bins)
     if (partitions.has(partition)) continue
     partitions.add(partition)
     next.push({ probe, bits, minutes, bins, row })

@@ -26,15 +26,23 @@ export function resolution(kind: Probe['kind'], value: number): number {
 
 /** Sorts particles into what the meter can tell apart. Particles that foretell nothing (NaN) are left out. */
 export function binsOf(kind: Probe['kind'], row: Float64Array): Bin[] {
+  const shown = kind === 'ohms' ? row.map((value) => (value > ohmmeterLimitOhms ? Infinity : value)) : row
+  let least = Infinity
+  let most = -Infinity
+  for (const value of shown) {
+    if (value < least) least = value
+    if (value > most) most = value
+  }
+  // Most readings of most conditions show one thing whatever is wrong: no need to sort those.
+  if (!(most - least > resolution(kind, least))) return []
   const order: number[] = []
-  for (let i = 0; i < row.length; i++) if (!Number.isNaN(row[i]!)) order.push(i)
-  const shown = (i: number) => (kind === 'ohms' && row[i]! > ohmmeterLimitOhms ? Infinity : row[i]!)
-  order.sort((x, y) => (shown(x) === shown(y) ? 0 : shown(x) - shown(y)))
+  for (let i = 0; i < shown.length; i++) if (!Number.isNaN(shown[i]!)) order.push(i)
+  order.sort((x, y) => (shown[x]! === shown[y]! ? 0 : shown[x]! < shown[y]! ? -1 : 1))
   const bins: Bin[] = []
   let bin: Bin | undefined
   let before = 0
   for (const i of order) {
-    const value = shown(i)
+    const value = shown[i]!
     // A gap parts bins; a long stretch without one is cut as well.
     if (
       !bin ||

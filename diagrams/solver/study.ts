@@ -16,7 +16,6 @@ export interface States {
 
 /** A network in one condition with its parts in one state: factored, and solved for its own sources. */
 export interface Base {
-  setting: Setting
   /** Siemens per branch; 0 where it does not conduct. */
   conductance: Float64Array
   /** Source volts per branch that follow the battery, and those that do not. */
@@ -31,6 +30,7 @@ export interface Base {
 /** One circuit in one condition; factorisations are made once per state and kept. */
 export class Study {
   private readonly bases = new Map<string, Base>()
+  private readonly different: Base[] = []
   private readonly positions
   private readonly unplugged
   /** What the battery's volts are multiplied by when nothing is known of it. */
@@ -130,9 +130,16 @@ export class Study {
       if (branch.supply === 'battery') emfBattery[i] = branch.emf(setting)
       else emfFixed[i] = branch.emf(setting)
     }
+    // Much of what a fault forces changes nothing in this condition: share the factorisation.
+    const same = this.different.find(
+      (base) =>
+        sameFigures(base.conductance, conductance) &&
+        sameFigures(base.emfBattery, emfBattery) &&
+        sameFigures(base.emfFixed, emfFixed),
+    )
+    if (same) return same
     const factor = this.factorWithout(conductance, -1)
-    return {
-      setting,
+    const base: Base = {
       conductance,
       emfBattery,
       emfFixed,
@@ -140,7 +147,14 @@ export class Study {
       voltsBattery: this.solveSources(factor, conductance, emfBattery, -1),
       voltsFixed: this.solveSources(factor, conductance, emfFixed, -1),
     }
+    this.different.push(base)
+    return base
   }
+}
+
+function sameFigures(a: Float64Array, b: Float64Array): boolean {
+  for (let i = 0; i < a.length; i++) if (a[i] !== b[i]) return false
+  return true
 }
 
 export function stateKey(states: States): string {
