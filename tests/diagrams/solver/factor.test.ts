@@ -69,18 +69,18 @@ describe('the factor against exact fractions', () => {
   })
 
   it('keeps them on a floating harness, held by its leaks alone', () => {
-    const edges: Grid['edges'] = Array.from({ length: 29 }, (_, i) => [i, i + 1, i % 3 === 0 ? 1e7 : 200])
-    const grid: Grid = { size: 30, leak: 1e-11, edges }
-    expect(worstError(grid, into(30, 17))).toBeLessThan(5e-15)
-    // All 30 unknowns stand where 30 leaks of 1e-11 siemens put one ampere.
-    expect(here(grid, into(30, 17))[0]! / (1 / 30e-11)).toBeCloseTo(1, 9)
+    const edges: Grid['edges'] = Array.from({ length: 19 }, (_, i) => [i, i + 1, i % 3 === 0 ? 1e7 : 200])
+    const grid: Grid = { size: 20, leak: 1e-11, edges }
+    expect(worstError(grid, into(20, 17))).toBeLessThan(5e-15)
+    // All 20 unknowns stand where 20 leaks of 1e-11 siemens put one ampere.
+    expect(here(grid, into(20, 17))[0]! / (1 / 20e-11)).toBeCloseTo(1, 9)
   })
 
   it('keeps them on 40 random networks, eighteen decades of conductance mixed', () => {
     let worst = 0
     for (let seed = 1; seed <= 40; seed++) {
       const random = seededRandom(seed)
-      const size = random.whole(4, 16)
+      const size = random.whole(4, 11)
       const edges: Grid['edges'] = []
       for (let i = 1; i < size; i++) edges.push([i, random.whole(0, i - 1), random.logUniform(1e-12, 1e7)])
       for (let k = random.whole(0, 6); k > 0; k--) {
