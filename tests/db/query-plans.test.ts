@@ -1,4 +1,3 @@
-import { randomUUID } from 'node:crypto'
 import { Kysely, PostgresDialect, sql } from 'kysely'
 import pg from 'pg'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
