@@ -23,7 +23,7 @@ export const addresses: Record<string, () => Promise<Module>> = {
 
 export interface Answer {
   status: number
-  // biome-ignore lint/suspicious/noExplicitAny: tests look into answers of every shape
+  // eslint-disable-next-line @typescript-eslint/no-explicit-any -- tests look into answers of every shape
   body: any
   headers: Headers
 }

@@ -27,7 +27,7 @@ export interface Shop {
 }
 
 /** Settings as the server reads them, pointing at the database of this test file. */
-function useSettings(appUrl: string): void {
+function pointSettingsAt(appUrl: string): void {
   process.env.DATABASE_URL = appUrl
   process.env.NEXTAUTH_SECRET = secret
   process.env.NEXTAUTH_URL = 'http://127.0.0.1:3210'
@@ -38,7 +38,7 @@ export async function makeShop(
   name: string,
   { appUrl = database.appUrl }: { appUrl?: string } = {},
 ): Promise<Shop> {
-  useSettings(appUrl)
+  pointSettingsAt(appUrl)
   const db = database.app
   const mark = randomUUID().slice(0, 8)
   const email = (role: Role) => `${role}-${mark}@alderlane.example`

@@ -44,7 +44,17 @@ export async function listTraces(context: Context, input: unknown): Promise<Resu
   })
   if (!found.ok) return found
   // Evaluated after the transaction: arithmetic is no reason to hold a connection.
-  const rows: TraceRow[] = found.value.map(({ head, work }) => ({
+  const progress = await traceProgress(
+    found.value.map(({ head, work }) =>
+      work
+        ? {
+            key: `${head.organisation_id} ${head.id} ${head.updated_at.toISOString()}`,
+            request: { ...work, codes: head.codes, priors: 'trade' },
+          }
+        : null,
+    ),
+  )
+  const rows: TraceRow[] = found.value.map(({ head }, index) => ({
     id: head.id,
     circuitId: head.circuit_id,
     title: head.title,
@@ -55,13 +65,7 @@ export async function listTraces(context: Context, input: unknown): Promise<Resu
     state: head.state,
     by: head.starter ?? '',
     updatedAt: head.updated_at.toISOString(),
-    progress: work
-      ? traceProgress(`${head.organisation_id} ${head.id} ${head.updated_at.toISOString()}`, {
-          ...work,
-          codes: head.codes,
-          priors: 'trade',
-        })
-      : null,
+    progress: progress[index] ?? null,
   }))
   return succeed({ rows })
 }
