@@ -5,7 +5,6 @@ import example from '@/tests/fixtures/example-circuit.json'
 import { randomCircuit } from '@/tests/support/random-circuit'
 
 /** A document to spoil, loosely typed on purpose. */
-// eslint-disable-next-line @typescript-eslint/no-explicit-any
 type Loose = any
 
 const whole = {
