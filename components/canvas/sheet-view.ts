@@ -13,6 +13,8 @@ const laptopPixels = 1000
 const mostFitZoom = 1.3
 /** Room for what stands over the sheet: counts at the left, buttons at the right. */
 const headPixels = 52
+/** On smaller sheets the buttons stand at the foot. */
+const footPixels = 56
 
 /** `auto`: the whole on a wide sheet, what is left on a narrow one. */
 export type Fit = 'whole' | 'left' | 'auto'
@@ -45,10 +47,11 @@ export function useSheetView(scene: Scene, first: Fit): SheetView {
       const box: Box =
         (fit === 'left' || narrow ? leftBounds(latest.current) : null) ?? wholeBounds(latest.current)
       const head = height > 300 ? headPixels : 0
+      const foot = width < laptopPixels ? footPixels : 0
       const view = getViewportForBounds(
         box,
         width,
-        height - head,
+        height - head - foot,
         narrow && width < 600 ? leastPhoneZoom : leastZoom,
         mostFitZoom,
         0.02,

@@ -3,6 +3,7 @@
 import type { ReactNode } from 'react'
 import type { Circuit } from '@/diagrams/document/circuit-schema'
 import type { NextReading } from '@/diagrams/faults/answer'
+import { Button } from '../ui/button'
 import { Chevron } from '../ui/glyphs'
 import { Plate } from '../ui/plate'
 import { ConnectorFace } from './connector-face'
@@ -61,13 +62,18 @@ export function EntryScreen({
           {next && (
             <>
               <h2 className="text-title">{nextTitle(circuit, next)}</h2>
-              <p className="text-small text-ink-2">
+              <p className="text-small leading-tight text-ink-2">
                 {face?.location ? `${face.location}. ` : ''}
                 {nextHow(circuit, next)}
               </p>
             </>
           )}
           <div className="text-small text-ink-2">{saved}</div>
+          {next && !meter.setForNext && (
+            <Button look="text" onClick={() => meter.act({ do: 'set-for', next })}>
+              Set the meter for this
+            </Button>
+          )}
         </div>
         {face && (
           <ConnectorFace circuit={circuit} connector={face.connector} cavity={face.cavity} width={130} />

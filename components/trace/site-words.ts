@@ -78,3 +78,9 @@ export function siteTitle(circuit: Circuit, site: string): string {
   const name = siteName(circuit, site)
   return name.charAt(0).toUpperCase() + name.slice(1)
 }
+
+/** The first sentence of a verdict says place and what; the others say why. */
+export function headAndRest(says: string): [string, string] {
+  const end = says.search(/[.](?=\s)/)
+  return end < 0 ? [says.replace(/[.]$/, ''), ''] : [says.slice(0, end), says.slice(end + 1).trim()]
+}

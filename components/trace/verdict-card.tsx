@@ -7,7 +7,7 @@ import type { Answer, SiteAnswer } from '@/diagrams/faults/answer'
 import { VerdictGlyph } from '../ui/verdict-glyph'
 import { ConnectorFace } from './connector-face'
 import { connectorOf } from './next-words'
-import { lookFor, siteTitle } from './site-words'
+import { headAndRest, lookFor, siteTitle } from './site-words'
 
 /** What was found: place first, then what, then why; what it cleared, and under which assumption. */
 export function VerdictCard({
@@ -74,12 +74,6 @@ export function VerdictCard({
       {actions && <div className="mt-auto flex flex-wrap gap-2">{actions}</div>}
     </section>
   )
-}
-
-/** The first sentence says place and what; the others say why. */
-function headAndRest(says: string): [string, string] {
-  const end = says.search(/[.](?=\s)/)
-  return end < 0 ? [says.replace(/[.]$/, ''), ''] : [says.slice(0, end), says.slice(end + 1).trim()]
 }
 
 export function likeliestMode(site: SiteAnswer) {

@@ -4,7 +4,7 @@ import type { Circuit } from '@/diagrams/document/circuit-schema'
 import { siteName } from '@/diagrams/document/sites'
 import type { Answer } from '@/diagrams/faults/answer'
 import type { Trace } from '@/lib/shared/api/traces'
-import { modeWords, siteTitle } from '../site-words'
+import { headAndRest, modeWords } from '../site-words'
 
 /** Verdict, what is left, what was cleared and under which assumption, what was found and repaired. */
 export function HandoutFindings({
@@ -18,7 +18,7 @@ export function HandoutFindings({
   answer: Answer | null
   started: boolean
 }) {
-  const faulty = answer?.sites.filter((site) => site.verdict === 'faulty') ?? []
+  const [head, rest] = headAndRest(answer?.says ?? '')
   const good = answer?.sites.filter((site) => site.verdict === 'proved-good') ?? []
   const firm = good.filter((site) => site.firm)
   const left = answer?.sites.filter((site) => site.verdict === 'in-question') ?? []
@@ -26,15 +26,9 @@ export function HandoutFindings({
   return (
     <div style={{ fontSize: '15.5px' }}>
       <div style={{ fontSize: '23px', fontWeight: 800, lineHeight: 1.15 }}>
-        {!started
-          ? 'No reading yet'
-          : faulty.length > 0
-            ? faulty.map((site) => siteTitle(circuit, site.site)).join(', ')
-            : answer?.outcome === 'no-fault'
-              ? 'Nothing wrong in the conditions tried'
-              : `${left.length} places in question`}
+        {started && answer ? head : 'No reading yet'}
       </div>
-      {started && answer && <div style={{ marginTop: '6px' }}>{answer.says}</div>}
+      {started && rest && <div style={{ marginTop: '6px' }}>{rest}</div>}
       {started && left.length > 0 && left.length <= 12 && (
         <div style={{ marginTop: '6px' }}>
           <b>In question:</b> {left.map((site) => siteName(circuit, site.site)).join(', ')}.
