@@ -1,14 +1,19 @@
+import { headers } from 'next/headers'
+import { redirect } from 'next/navigation'
 import type { ReactNode } from 'react'
 import { ActorProvider } from '@/components/shell/actor-context'
 import { SessionEnded } from '@/components/shell/session-ended'
-import { SignInFirst } from '@/components/shell/sign-in-first'
 import { chooseMembershipAction } from '@/lib/server/http/form-actions'
 import { currentSession } from '@/lib/server/http/session'
+import { askedPathHeader, wayBack } from '@/lib/shared/way-back'
 
 /** Everything behind the sign-in. Each page draws its own running head, since each has something else to put there. */
 export default async function WorkspaceLayout({ children }: { children: ReactNode }) {
   const session = await currentSession()
-  if (!session) return <SignInFirst />
+  if (!session) {
+    const asked = (await headers()).get(askedPathHeader)
+    redirect(`/sign-in?ended=1&to=${encodeURIComponent(wayBack(asked))}`)
+  }
   const { actor, memberships } = session
   return (
     <ActorProvider

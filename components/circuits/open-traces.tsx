@@ -21,7 +21,7 @@ export function OpenTraces({ rows }: { rows: TraceRow[] }) {
           <li key={row.id} className="border-t border-line">
             <Link
               href={`/circuits/${row.circuitId}/traces/${row.id}`}
-              className="grid min-h-[3.125rem] grid-cols-[minmax(0,1fr)_auto] items-center gap-x-5 gap-y-1.5 py-2 no-underline hover:bg-window tablet:grid-cols-[minmax(0,1.1fr)_7.5rem_minmax(0,1.2fr)_minmax(0,1.4fr)_3.5rem] laptop:grid-cols-[minmax(0,1.1fr)_8rem_minmax(0,2fr)_8rem_minmax(0,1.8fr)_4rem]"
+              className="grid min-h-[3.125rem] grid-cols-[minmax(0,1fr)_auto] items-center gap-x-5 gap-y-1.5 py-2 no-underline hover:bg-window tablet:grid-cols-[minmax(0,1.4fr)_7rem_8rem_minmax(0,1.4fr)_3.5rem] laptop:grid-cols-[minmax(0,1.1fr)_8rem_minmax(0,2fr)_8rem_minmax(0,1.8fr)_4rem]"
             >
               <span className="min-w-0">
                 <span className="font-bold">{row.title}</span>

@@ -49,7 +49,7 @@ export function ShopMenu({ actor }: { actor: ActorView }) {
         aria-expanded={open}
         aria-controls={panelId}
         onClick={() => setOpen(!open)}
-        className="max-w-44 laptop:max-w-56"
+        className="max-w-44 tablet:max-w-60"
       >
         <span className="truncate">{actor.organisation.name}</span>
         <Chevron direction={open ? 'up' : 'down'} size={14} />

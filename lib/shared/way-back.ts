@@ -1,3 +1,6 @@
+/** Set by the proxy on requests for pages behind the sign-in: the path and query that were asked for. */
+export const askedPathHeader = 'x-halfsplit-asked-path'
+
 const home = '/circuits'
 
 /** Where to go after signing in: a page of this product, whatever the address asked for. */
