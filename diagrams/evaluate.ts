@@ -25,7 +25,7 @@ export function evaluate(request: EvaluationRequest): Answer {
   const { circuit, readings, priors } = request
   const model = faultModelOf(circuit)
   const full = weighReadings(model, readings)
-  const fits = [full.good, ...full.cells.flat()].some((cell) => fitsAll(cell, readings))
+  const fits = [full.good, ...full.cells.flat()].some((cell) => fitsAll(full, cell, readings))
   const aside = readingToSetAside(model, readings, full, fits, priors)
   const evidence = aside === null ? full : weighReadings(model, readings, new Set([aside]))
   const posterior = posteriorOf(model, evidence, priors)

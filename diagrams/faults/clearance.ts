@@ -21,12 +21,16 @@ export function clearances(
 ): Map<string, Clearance> {
   const cellsOf = new Map<string, CellEvidence[]>(sites.map((site) => [site, []]))
   model.hypotheses.forEach((hypothesis, h) => cellsOf.get(hypothesis.site)?.push(...evidence.cells[h]!))
-  return new Map(sites.map((site) => [site, clearanceOf(cellsOf.get(site)!, readings)]))
+  return new Map(sites.map((site) => [site, clearanceOf(evidence, cellsOf.get(site)!, readings)]))
 }
 
-function clearanceOf(cells: readonly CellEvidence[], readings: readonly Reading[]): Clearance {
+function clearanceOf(
+  evidence: Evidence,
+  cells: readonly CellEvidence[],
+  readings: readonly Reading[],
+): Clearance {
   const clearedWith = (included: (index: number) => boolean) =>
-    cells.every((cell) => !fitsAll(cell, readings, included))
+    cells.every((cell) => !fitsAll(evidence, cell, readings, included))
   // Without any reading nothing is proved, also not what could never show.
   if (readings.length === 0 || !clearedWith(() => true)) return { cleared: false, firm: false, clearedBy: [] }
   const firm = readings.every((_, out) => clearedWith((r) => r !== out))

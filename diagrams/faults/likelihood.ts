@@ -2,7 +2,6 @@ import type { Reading } from '../document/reading-schema'
 import { ohmmeterLimitOhms } from '../solver/constants'
 import { normalBelow, smearedDensity } from './normal'
 import type { Prediction } from './prediction'
-import type { CellPrediction } from './prediction-table'
 import { loadThreshold, type ReadingScope } from './reading-scope'
 import { accuracyOf } from './tolerance-rule'
 
@@ -10,15 +9,18 @@ import { accuracyOf } from './tolerance-rule'
 export const slipShare = 0.005
 
 /**
- * Likelihood of one reading under one cell, as a function of the battery scale. The severity is
+ * Likelihood of one reading under one cell in one state, as a function of the battery scale. The severity is
  * taken as even across the cell, the meter's error as normal with half its limit for sigma, and a
  * small share of all readings as slips that may show anything.
  */
 export type LikelihoodAt = (scale: number) => number
 
-export function likelihoodOf(reading: Reading, cell: CellPrediction, scope: ReadingScope): LikelihoodAt {
+export function likelihoodOf(
+  reading: Reading,
+  ends: readonly [Prediction, Prediction] | null,
+  scope: ReadingScope,
+): LikelihoodAt {
   const slip = slipShare * slipDensity(reading)
-  const { ends } = cell
   if (!ends || ends.some((end) => end.live)) {
     const flat = slipDensity(reading)
     return () => flat

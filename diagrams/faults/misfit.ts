@@ -23,7 +23,9 @@ export function readingToSetAside(
   if (above >= 0) return above
   if (fits || readings.length === 0) return null
   const all = [evidence.good, ...evidence.cells.flat()]
-  const mends = readings.map((_, out) => all.some((cell) => fitsAll(cell, readings, (r) => r !== out)))
+  const mends = readings.map((_, out) =>
+    all.some((cell) => fitsAll(evidence, cell, readings, (r) => r !== out)),
+  )
   const candidates = readings.flatMap((_, r) => (mends.includes(true) && !mends[r] ? [] : [r]))
   let best = candidates[0]!
   let bestLog = -Infinity

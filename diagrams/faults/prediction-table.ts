@@ -11,12 +11,15 @@ import { predict, type Prediction } from './prediction'
 /** What one cell foretells for one reading. */
 export interface CellPrediction {
   /**
-   * Predictions that enclose the cell: both of its ends in every state its parts may be in. Null
-   * when the circuit may not come to rest, which foretells nothing.
+   * Both ends of the cell in every state its parts may be in, by state: within one state a reading
+   * lies between the ends. Null when the circuit may not come to rest, which foretells nothing.
    */
-  bounds: Prediction[] | null
-  /** The two ends in the state they settle in; null when one does not settle. */
-  ends: readonly [Prediction, Prediction] | null
+  bounds: ReadonlyMap<string, readonly Prediction[]> | null
+  /**
+   * The two ends in the state they settle in; twice when the ends settle differently, once for each
+   * state. Null when one does not settle.
+   */
+  ends: readonly (readonly [Prediction, Prediction])[] | null
 }
 
 /** Relays and modules are looked at a little eager and a little reluctant: all that tolerances can do to them. */
@@ -71,12 +74,19 @@ export function predictCells(
     const [a, b] = [endOf(low), endOf(high)]
     if (!a || !b) return { bounds: null, ends: null }
     const states = new Map([...a.possible, ...b.possible])
-    const bounds: Prediction[] = []
-    for (const state of states.values()) {
-      bounds.push(predicted(state, low))
-      if (high !== low) bounds.push(predicted(state, high))
+    const settled = new Map([
+      [stateKey(a.settled.states), a.settled.states],
+      [stateKey(b.settled.states), b.settled.states],
+    ])
+    return {
+      bounds: new Map(
+        [...states].map(([key, state]) => [
+          key,
+          high === low ? [predicted(state, low)] : [predicted(state, low), predicted(state, high)],
+        ]),
+      ),
+      ends: [...settled.values()].map((state) => [predicted(state, low), predicted(state, high)] as const),
     }
-    return { bounds, ends: [predicted(a.settled.states, low), predicted(b.settled.states, high)] as const }
   })
 }
 

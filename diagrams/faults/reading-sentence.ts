@@ -6,11 +6,9 @@ import { noAlteration } from '../solver/alteration'
 import { Case } from '../solver/case'
 import { readMeter } from '../solver/meter'
 import type { ReadingAnswer } from './answer'
-import { chargingRange, restingRange } from './battery-range'
 import type { Evidence } from './evidence'
 import type { FaultModel } from './fault-model'
 import { isAboveSources } from './misfit'
-import { scalesThatFit, windowsOf } from './tolerance-rule'
 
 /** Each reading beside what the good circuit would show, with a sentence. */
 export function judgeReadings(
@@ -22,10 +20,7 @@ export function judgeReadings(
     const settled = new Case(model.study(reading), noAlteration)
     const point = settled.settle(0)
     const expected = point ? readMeter(settled, point, reading) : null
-    const range = reading.condition.charging ? chargingRange : restingRange
-    const agrees =
-      evidence.good.fits[r] !== null &&
-      scalesThatFit(model.table(reading).good, windowsOf(reading, { network: model.network }), range) !== null
+    const agrees = evidence.good.fits[r]!.size > 0
     return { id: reading.id, expected, agrees, says: sentence(model, reading, expected, agrees) }
   })
 }

@@ -26,7 +26,7 @@ export type EvaluationRequest = z.infer<typeof evaluationRequestSchema>
 
 /** The one door for a request: shapes, references, and readings that cannot be taken. */
 export function openEvaluationRequest(input: unknown): Opened<EvaluationRequest> {
-  const parsed = evaluationRequestSchema.safeParse(input)
+  const parsed = evaluationRequestSchema.safeParse(input, { reportInput: true })
   if (!parsed.success) return { ok: false, problems: problemsOf(parsed.error) }
   const request = parsed.data
   const problems = checkCircuit(request.circuit).map((problem) => ({

@@ -54,15 +54,33 @@ export function accuracyOf(reading: Reading): { percent: number; floor: number }
   }
 }
 
+/** Battery scales that fit a reading, by the state the parts are in; a state that never fits is left out. */
+export type Fits = ReadonlyMap<string, ScaleRange>
+
+/** Key for a circuit that may be in any state at all. */
+export const anyState = 'any'
+
 /**
- * Battery scales at which a cell may give the reading, as the smallest range that holds them all;
- * null when none does. Ranges are only ever widened, so a fault that fits is never excluded: for a
- * fixed battery and fixed parts a reading is monotone in the severity, hence lies between the
- * cell's ends, each within its reach.
+ * Battery scales at which a cell may give the reading, for each state its parts may be in. Ranges
+ * are only ever widened, so a fault that fits is never excluded: for a fixed battery, fixed parts
+ * and a fixed state a reading is monotone in the severity, hence lies between the cell's ends, each
+ * within its reach.
  */
-export function scalesThatFit(cell: CellPrediction, windows: Windows, range: ScaleRange): ScaleRange | null {
-  const { bounds } = cell
-  if (bounds === null || bounds.some((prediction) => prediction.live)) return range
+export function scalesThatFit(cell: CellPrediction, windows: Windows, range: ScaleRange): Fits {
+  if (cell.bounds === null) return new Map([[anyState, range]])
+  const fits = new Map<string, ScaleRange>()
+  for (const [state, bounds] of cell.bounds) {
+    const found = bounds.some((prediction) => prediction.live) ? range : scalesBetween(bounds, windows, range)
+    if (found) fits.set(state, found)
+  }
+  return fits
+}
+
+function scalesBetween(
+  bounds: readonly Prediction[],
+  windows: Windows,
+  range: ScaleRange,
+): ScaleRange | null {
   let found: ScaleRange | null = null
   for (const window of windows) {
     // Some bound must reach down to the window's top, and some bound up to its foot.
@@ -72,13 +90,14 @@ export function scalesThatFit(cell: CellPrediction, windows: Windows, range: Sca
     const above = widest(bounds, (p) =>
       half(-p.battery - p.reachBattery, -p.fixed - p.reachFixed, -window.low, range),
     )
-    const both = below && above && overlap(below, above)
-    found =
-      found && both
-        ? { low: Math.min(found.low, both.low), high: Math.max(found.high, both.high) }
-        : (both ?? found)
+    found = hull(found, below && above && overlap(below, above))
   }
   return found
+}
+
+/** The smallest range that holds both; null stands for none. */
+export function hull(a: ScaleRange | null, b: ScaleRange | null): ScaleRange | null {
+  return a && b ? { low: Math.min(a.low, b.low), high: Math.max(a.high, b.high) } : (a ?? b)
 }
 
 /** Scales s in the range with s·slope + start ≤ limit. */
@@ -99,11 +118,7 @@ function widest(
   rangeOf: (p: Prediction) => ScaleRange | null,
 ): ScaleRange | null {
   let found: ScaleRange | null = null
-  for (const prediction of bounds) {
-    const range = rangeOf(prediction)
-    if (range)
-      found = found ? { low: Math.min(found.low, range.low), high: Math.max(found.high, range.high) } : range
-  }
+  for (const prediction of bounds) found = hull(found, rangeOf(prediction))
   return found
 }
 

@@ -19,11 +19,13 @@ const conditionLimit = 48
  * Conditions and readings a person would think of: every combination of controls with everything
  * plugged in; the battery off; one connector opened, live and dead; both ends of a suspect wire
  * opened. `suspects` are site ids, most probable first; they decide what is kept when there are many.
+ * `deadControls`: where the controls stand while a connector is open and the battery off.
  */
 export function candidateReadings(
   circuit: Circuit,
   suspects: readonly string[],
   present: Condition,
+  deadControls: Condition['controls'] = {},
 ): CandidateSet[] {
   const combinations = controlCombinations(circuit, combinationLimit)
   const controlSets = [positionsIn(circuit, present.controls), ...combinations]
@@ -42,9 +44,9 @@ export function candidateReadings(
   for (const controls of controlSets) conditions.push(live(controls))
   for (const controls of combinations) conditions.push(dead([], controls))
   const opened = connectorsNear(circuit, suspects)
-  for (const pair of opened) conditions.push(dead(pair))
+  for (const pair of opened) conditions.push(dead(pair, deadControls))
   const singles = [...new Set(opened.flat())]
-  for (const id of singles) conditions.push(dead([id]))
+  for (const id of singles) conditions.push(dead([id], deadControls))
   // A circuit is in use in one of its last combinations, controls moved from rest.
   for (const id of singles)
     for (const controls of [combinations.at(-1)!, combinations[0]!]) conditions.push(live(controls, [id]))

@@ -1,6 +1,7 @@
+import type { Circuit, ControlsSetting } from '../document/circuit-schema'
 import type { Probe, Reading } from '../document/reading-schema'
 import { probeKey, type FaultModel } from '../faults/fault-model'
-import { candidateReadings } from './candidates'
+import { candidateReadings, type CandidateSet } from './candidates'
 import { minutesFor, workplaceAfter } from './cost'
 import { forecast } from './forecast'
 import { groupsAlike } from './alike'
@@ -53,7 +54,7 @@ export function planNext(model: FaultModel, posterior: Posterior, readings: read
 
   const found: (PlannedReading & { rate: number })[] = []
   let mostBits = 0
-  for (const set of candidateReadings(circuit, suspects, workplace.condition)) {
+  const weigh = (set: CandidateSet) => {
     const rows = forecast(model, set, particles)
     set.probes.forEach((probe, i) => {
       const bins = binsOf(probe.kind, rows[i]!)
@@ -74,6 +75,11 @@ export function planNext(model: FaultModel, posterior: Posterior, readings: read
       })
     })
   }
+  for (const set of candidateReadings(circuit, suspects, workplace.condition)) weigh(set)
+  // Where all is read that tells suspects apart, the same leads with the controls moved count as a second look.
+  if (found.length === 0 && readings.length > 0)
+    for (const set of candidateReadings(circuit, suspects, workplace.condition, movedControls(circuit)))
+      weigh(set)
   found.sort((a, b) => b.rate - a.rate)
   const partitions = new Set<string>()
   const next: PlannedReading[] = []
@@ -93,4 +99,14 @@ function partitionKey(bins: readonly Bin[]): string {
     .map((bin) => bin.members.toSorted((a, b) => a - b).join(','))
     .toSorted()
     .join('|')
+}
+
+/** The combination of controls furthest from rest. */
+function movedControls(circuit: Circuit): ControlsSetting {
+  return Object.fromEntries(
+    circuit.controls.map((control) => [
+      control.id,
+      control.positions.findLast((p) => p !== control.rest) ?? control.rest,
+    ]),
+  )
 }
