@@ -12,11 +12,18 @@ const loopback = new Set(['127.0.0.1', 'localhost', '[::1]'])
 /** Makes `.env` from `.env.example` with secrets of this install's own; answers whether it had to. */
 export function ensureSettingsFile() {
   if (existsSync(settingsFile)) return false
-  const filled = readFileSync(exampleFile, 'utf8')
+  writeFileSync(settingsFile, fillExample(readFileSync(exampleFile, 'utf8')), { mode: 0o600, flag: 'wx' })
+  return true
+}
+
+/**
+ * The example with a new secret or password wherever it asks for one; its comments stay.
+ * @param {string} text
+ */
+export function fillExample(text) {
+  return text
     .replace(/^(?!#)(.*)<secret>/gm, (_, before) => before + randomBytes(24).toString('hex'))
     .replace(/^(?!#)(.*)<password>/gm, (_, before) => before + typeablePassword())
-  writeFileSync(settingsFile, filled, { mode: 0o600, flag: 'wx' })
-  return true
 }
 
 /** Twelve letters and digits that are not mistaken for one another when read aloud. */
