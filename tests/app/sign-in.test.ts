@@ -87,20 +87,19 @@ describe('signing up, in and out of reach', () => {
     const unknown = await enter('nobody@alderlane.example', 'not the password')
     expect(unknown).toEqual(wrong)
     expect(codeOf(wrong)).toBe('wrong-sign-in')
-    const time = async (address: string) => {
-      const times: number[] = []
-      for (let i = 0; i < 7; i++) {
+    const times: Record<string, number[]> = { [email]: [], 'nobody@alderlane.example': [] }
+    // By turns, so that a busy machine slows both alike.
+    for (let i = 0; i < 9; i++)
+      for (const [address, taken] of Object.entries(times)) {
         later(60)
         const start = performance.now()
         await enter(address, 'not the password')
-        times.push(performance.now() - start)
+        taken.push(performance.now() - start)
       }
-      return times.sort((a, b) => a - b)[3] ?? 0
-    }
-    const [known, nobody] = [await time(email), await time('nobody@alderlane.example')]
-    // One password check is some 20 ms; without it the unknown address would answer in a tenth of the time.
-    expect(nobody / known).toBeGreaterThan(0.4)
-    expect(nobody / known).toBeLessThan(2.5)
+    const [known = 0, nobody = 0] = Object.values(times).map((taken) => taken.sort((a, b) => a - b)[4] ?? 0)
+    // One password check is most of the time; without it the unknown address would answer in a tenth.
+    expect(nobody / known).toBeGreaterThan(0.35)
+    expect(nobody / known).toBeLessThan(3)
   })
 
   it('stops guessing at one account after ten failures from anywhere, known or not, for a quarter of an hour', async () => {

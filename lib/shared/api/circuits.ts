@@ -66,11 +66,15 @@ const connectors = z
   .enum(connectorChoices, { error: 'connectors: expected refuse, keep or replace' })
   .default('refuse')
 
+const document = z.custom<unknown>((value) => value !== undefined, {
+  error: 'document: missing, expected a circuit document',
+})
+
 /** `POST /api/v1/circuits`. The document is opened by `openCircuit`; its problems come with paths under `document`. */
 export const createCircuitSchema = z.strictObject({
   /** A client that may retry sends an id of its own: the same id again answers with the circuit already there. */
   id: z.uuid({ error: 'id: expected a UUID' }).optional(),
-  document: z.unknown(),
+  document,
   connectors,
 })
 export type CreateCircuit = z.input<typeof createCircuitSchema>
@@ -78,7 +82,7 @@ export type CreateCircuit = z.input<typeof createCircuitSchema>
 /** `PUT /api/v1/circuits/:id`. A stale `baseRevision` answers 409 `stale-revision`. */
 export const saveCircuitSchema = z.strictObject({
   baseRevision: z.int({ error: 'baseRevision: expected a whole number' }).min(1),
-  document: z.unknown(),
+  document,
   connectors,
 })
 export type SaveCircuit = z.input<typeof saveCircuitSchema>
