@@ -1,6 +1,6 @@
 'use client'
 
-import { useMemo, useRef, useState } from 'react'
+import { type CSSProperties, useMemo, useRef, useState } from 'react'
 import { pathOrder } from '@/diagrams/drawing/path-order'
 import type { NextReading } from '@/diagrams/faults/answer'
 import { useAnswer } from '@/lib/client/evaluator/use-answer'
@@ -27,6 +27,7 @@ import { SavedState } from './saved-state'
 import { traceOverlay } from './trace-overlay'
 import { TraceBands } from './trace-bands'
 import { TraceResult } from './trace-result'
+import { TrayHandle, type TrayHeight } from './tray-handle'
 import { useMeter } from './use-meter'
 import { useTrace } from './use-trace'
 import { useTypingIntoMeter } from './use-typing-into-meter'
@@ -57,6 +58,7 @@ export function TraceScreen({ initial }: { initial: Trace }) {
   const [entering, setEntering] = useState(false)
   const [showingKeys, setShowingKeys] = useState(false)
   const [site, setSite] = useState<string | null>(null)
+  const [tray, setTray] = useState<TrayHeight>(276)
   const field = useRef<HTMLInputElement>(null)
 
   const meter = useMeter(circuit, next, {
@@ -87,6 +89,19 @@ export function TraceScreen({ initial }: { initial: Trace }) {
     setSite(picked.site ?? placeOf(answer?.sites.map((one) => one.site) ?? [], picked.node))
   }
 
+  const legs = useMemo(
+    () => pathOrder(circuit, new Map((answer?.sites ?? []).map((one) => [one.site, one.probability]))),
+    [circuit, answer],
+  )
+  /** To the neighbouring place in path order; once something is cleared, among those left. */
+  const walk = (by: number) => {
+    const verdicts = new Map((answer?.sites ?? []).map((one) => [one.site, one.verdict]))
+    const all = legs.flatMap((leg) => leg.sites)
+    const left = all.filter((one) => verdicts.get(one) !== 'proved-good')
+    const among = started && left.length > 0 ? left : all
+    const at = site === null ? (by > 0 ? -1 : among.length) : among.indexOf(site)
+    setSite(among[(at + by + among.length) % among.length] ?? null)
+  }
   useTypingIntoMeter(field, meter.act, !done && meter.state.kind !== 'works')
   useKeyCommands({
     m: () => field.current?.focus(),
@@ -94,6 +109,8 @@ export function TraceScreen({ initial }: { initial: Trace }) {
     'ctrl+z': () => !done && work.undo(),
     'ctrl+shift+z': () => !done && work.redo(),
     Enter: () => !done && meter.enter(),
+    '[': () => walk(-1),
+    ']': () => walk(1),
     Escape: () => setSite(null),
     '?': () => setShowingKeys(true),
     '/': () => location.assign('/circuits'),
@@ -104,16 +121,12 @@ export function TraceScreen({ initial }: { initial: Trace }) {
     () => traceOverlay({ circuit, readings, answer, condition, next: located ? null : next }),
     [circuit, readings, answer, condition, next, located],
   )
-  const legs = useMemo(
-    () => pathOrder(circuit, new Map((answer?.sites ?? []).map((one) => [one.site, one.probability]))),
-    [circuit, answer],
-  )
   const picked = answer?.sites.find((one) => one.site === site) ?? null
   const code = trace.codes[0] ?? null
   const left = counts
     ? `${started ? counts.faulty || counts.inQuestion : counts.all} ${started && counts.faulty > 0 ? 'faulty' : 'in question'}`
     : '-'
-  const foot = `${readings.length} ${readings.length === 1 ? 'reading' : 'readings'}${answer?.inseparable.length ? '' : ''}`
+  const foot = `${readings.length} ${readings.length === 1 ? 'reading' : 'readings'}`
   const saved = <SavedState state={work.state} done={done} />
 
   return (
@@ -182,7 +195,11 @@ export function TraceScreen({ initial }: { initial: Trace }) {
             onPlace={setSite}
           />
         </div>
-        <div className="z-rule grid min-h-0 border-t-2 border-ink bg-tray tablet:h-[38.5rem] tablet:flex-none tablet:grid-cols-2 tablet:grid-rows-[minmax(0,3fr)_minmax(0,2fr)] laptop:h-[17rem] laptop:grid-cols-[24.125rem_25.75rem_minmax(0,1fr)] laptop:grid-rows-1">
+        <div
+          style={{ '--tray-height': `${tray}px` } as CSSProperties}
+          className="relative z-rule grid min-h-0 border-t-2 border-ink bg-tray tablet:h-[38.5rem] tablet:flex-none tablet:grid-cols-2 tablet:grid-rows-[minmax(0,3fr)_minmax(0,2fr)] laptop:h-[var(--tray-height)] laptop:grid-cols-[24.125rem_25.75rem_minmax(0,1fr)] laptop:grid-rows-1"
+        >
+          <TrayHandle height={tray} onPull={setTray} />
           <div className="min-h-0 min-w-0 overflow-y-auto px-3 py-2.5 tablet:px-4 tablet:row-start-1 laptop:col-start-3 laptop:border-l laptop:border-line">
             <TraceResult
               circuit={circuit}

@@ -1,0 +1,183 @@
+import { mkdirSync, readFileSync } from 'node:fs'
+import path from 'node:path'
+import type { Page } from 'playwright-core'
+import { describe, expect, it } from 'vitest'
+import type { Probe, Reading, ReadingValue } from '@/diagrams/document/reading-schema'
+import { evaluate } from '@/diagrams/evaluate'
+import { samples } from '@/diagrams/samples/all-samples'
+import { measure } from '@/diagrams/solver/meter'
+import type { PlantedFault } from '@/diagrams/solver/planted-fault'
+import { probeOf } from '../support/trace-fault'
+import { signIn } from './support/sign-in'
+import { pictureFolder, takePictures } from './support/take-pictures'
+import { withBrowser } from './support/with-browser'
+
+const circuit = samples[0] as (typeof samples)[number]
+const code = circuit.codes[0]
+const codeText = `${code?.code}${code?.failureType ? `-${code.failureType}` : ''}`
+
+describe('a trace from a trouble code to a proved repair', () => {
+  const test = withBrowser()
+
+  async function startTrace(page: Page): Promise<void> {
+    await signIn(page, 'noor@alderlane.example', test.product.password)
+    await page.goto(`/circuits?code=${code?.code}`)
+    await page
+      .getByRole('link', { name: new RegExp(circuit.title) })
+      .first()
+      .click()
+    await page.waitForURL(/\/circuits\/[0-9a-f-]{36}$/)
+    await page.getByRole('link', { name: 'Trace', exact: true }).click()
+    await page.waitForURL(/\/trace$/)
+    await page.getByLabel('Complaint').fill('The load space lamp stays dark.')
+    await page.getByRole('button', { name: new RegExp(codeText) }).click()
+    await page.getByRole('button', { name: 'Start the trace' }).click()
+    await page.waitForURL(/\/traces\//)
+  }
+
+  /** Follows the planner with a fault planted, on the screen, until the evaluator has located it or `most` are taken. */
+  async function trace(page: Page, fault: PlantedFault, most: number): Promise<Reading[]> {
+    const readings: Reading[] = []
+    for (;;) {
+      await page.locator('[data-outcome="narrowed"], [data-outcome="located"]').first().waitFor()
+      const answer = evaluate({ circuit, readings, codes: [codeText], priors: 'trade' })
+      await page.locator(`[data-outcome="${answer.outcome}"]`).first().waitFor()
+      if (answer.outcome === 'located' || readings.length >= most) return readings
+      const [next] = answer.next
+      if (!next) return readings
+      const probe = probeOf(next)
+      const value = shown(probe, fault)
+      await page.getByRole('button', { name: 'Set the meter for this' }).click()
+      await enter(page, value)
+      readings.push({ id: `R${readings.length + 1}`, ...probe, value } as Reading)
+      await page.locator('[data-queue="idle"]').first().waitFor({ state: 'attached' })
+      await page.getByText(`${readings.length}, newest first`).waitFor()
+    }
+  }
+
+  it('locates an open wire in at most four readings, comes back whole, is proved and saved as PNG', async () => {
+    const { page, context } = await test.visit()
+    const failures: string[] = []
+    page.on('pageerror', (error) => failures.push(error.message))
+    await startTrace(page)
+    await page.locator('[data-outcome="narrowed"]').first().waitFor()
+    await takePictures(page, 'trace-before')
+
+    const wire = circuit.wires.find((one) => one.from.startsWith('c12-3') || one.to.startsWith('c12-3'))
+    const fault: PlantedFault = { site: `wire:${wire?.id}`, mode: 'open' }
+    const readings = await trace(page, fault, 8)
+    const cell = page.locator(`[data-site="${fault.site}"]`)
+    await cell.waitFor()
+    expect(await cell.getAttribute('aria-label')).toMatch(/faulty, open$/)
+    await takePictures(page, 'trace-located')
+
+    await page.reload()
+    await page.locator('[data-outcome="located"]').first().waitFor()
+    expect(await page.getByText(`${readings.length}, newest first`).count()).toBe(1)
+    await page.locator(`[data-site="${fault.site}"]`).waitFor()
+
+    await page.getByRole('button', { name: 'Record and prove the repair' }).click()
+    const dialog = page.getByRole('dialog')
+    expect(await dialog.getByLabel('What was found, place').inputValue()).toBe(fault.site)
+    expect(await dialog.getByLabel('How it failed').inputValue()).toBe('open')
+    await dialog.getByText('Yes', { exact: true }).click()
+    await dialog.getByLabel('What was repaired, notes').fill('Chafed through at the sill, spliced and taped.')
+    await dialog.getByRole('button', { name: 'Record what was found' }).click()
+    await dialog.getByRole('heading', { name: 'Prove the repair' }).waitFor()
+    const proving = dialog.getByLabel('The meter shows now')
+    const number = (await dialog.getByLabel('Reading to take again').count())
+      ? await dialog.getByLabel('Reading to take again').inputValue()
+      : 'R1'
+    const again = readings[Number(number.slice(1)) - 1] as Reading
+    const { id: _, value: __, ...probe } = again
+    await proving.fill(String(shown(probe as Probe)))
+    await dialog.getByText('Works', { exact: true }).last().click()
+    await dialog.getByRole('button', { name: 'Record the proof' }).click()
+    await page.getByText('The repair is proved').waitFor()
+
+    const [download] = await Promise.all([
+      page.waitForEvent('download'),
+      page.getByRole('button', { name: 'Save as PNG' }).click(),
+    ])
+    expect(download.suggestedFilename()).toMatch(/^[a-z0-9-]+-B[0-9A-F]{4}-[0-9A-F]{2}-\d{4}-\d\d-\d\d\.png$/)
+    mkdirSync(pictureFolder, { recursive: true })
+    const file = path.join(pictureFolder, 'trace.png')
+    await download.saveAs(file)
+    const picture = await look(page, file)
+    expect(picture.width).toBeGreaterThanOrEqual(2000)
+    expect(picture.height).toBeGreaterThanOrEqual(1000)
+    // A blank picture has one colour; a drawing with marks and words on white has many, and is mostly light.
+    expect(picture.colours).toBeGreaterThan(50)
+    expect(picture.lightShare).toBeGreaterThan(0.8)
+    expect(failures).toEqual([])
+    expect(readings.length).toBeLessThanOrEqual(4)
+    await context.close()
+  })
+
+  it('keeps readings through a lost network and a reload, and sends them when it is back', async () => {
+    const { page, context } = await test.visit()
+    await startTrace(page)
+    await page.locator('[data-outcome="narrowed"]').first().waitFor()
+    await page.route('**/api/v1/traces/**', (route) => route.abort())
+    await page.getByRole('button', { name: 'Set the meter for this' }).click()
+    const [next] = evaluate({ circuit, readings: [], codes: [codeText], priors: 'trade' }).next
+    if (!next) throw new Error('the planner has nothing to ask')
+    await enter(page, shown(probeOf(next)))
+    await page.getByText('Offline, 1 reading kept on this tablet').first().waitFor()
+    await page.reload()
+    await page.getByText('1, newest first').waitFor()
+    await page.unroute('**/api/v1/traces/**')
+    await page.evaluate(() => window.dispatchEvent(new Event('online')))
+    await page.locator('[data-queue="idle"]').first().waitFor({ state: 'attached' })
+    // A device that has never seen it shows it from the server.
+    await page.evaluate(() => localStorage.clear())
+    await page.reload()
+    await page.getByText('1, newest first').waitFor()
+    await context.close()
+  })
+})
+
+/** Size of a picture and what it is painted with, as the browser itself decodes it. */
+async function look(page: Page, file: string) {
+  const address = `data:image/png;base64,${readFileSync(file).toString('base64')}`
+  return page.evaluate(async (source) => {
+    const image = new Image()
+    image.src = source
+    await image.decode()
+    const { naturalWidth: width, naturalHeight: height } = image
+    const canvas = new OffscreenCanvas(width, height)
+    const pen = canvas.getContext('2d')
+    if (!pen) throw new Error('no canvas')
+    pen.drawImage(image, 0, 0)
+    const { data } = pen.getImageData(0, 0, width, height)
+    const colours = new Set<number>()
+    let light = 0
+    for (let at = 0; at < data.length; at += 4) {
+      const [red = 0, green = 0, blue = 0] = data.subarray(at, at + 3)
+      colours.add((red >> 3) * 1024 + (green >> 3) * 32 + (blue >> 3))
+      if (red > 225 && green > 225 && blue > 225) light++
+    }
+    return { width, height, colours: colours.size, lightShare: light / (data.length / 4) }
+  }, address)
+}
+
+/** What the meter shows: of the good circuit when no fault is given, to the digits that can be typed. */
+function shown(probe: Probe, fault?: PlantedFault): ReadingValue {
+  const measured = measure(circuit, probe, fault)
+  if (!measured.ok) throw new Error(measured.problem.message)
+  return typeof measured.value === 'number' ? Number(measured.value.toFixed(3)) : measured.value
+}
+
+async function enter(page: Page, value: ReadingValue): Promise<void> {
+  if (typeof value === 'boolean') {
+    await page
+      .getByRole('group', { name: 'Does it work' })
+      .getByText(value ? 'Works' : 'Does not')
+      .click()
+    await page.getByRole('button', { name: 'Enter reading' }).first().click()
+    return
+  }
+  const meter = page.getByRole('textbox', { name: /^Meter/ })
+  await meter.fill(String(value))
+  await meter.press('Enter')
+}
