@@ -35,14 +35,13 @@ export function binsOf(kind: Probe['kind'], row: Float64Array): Bin[] {
   }
   // Most readings of most conditions show one thing whatever is wrong: no need to sort those.
   if (!(most - least > resolution(kind, least))) return []
-  const order: number[] = []
-  for (let i = 0; i < shown.length; i++) if (!Number.isNaN(shown[i]!)) order.push(i)
-  order.sort((x, y) => (shown[x]! === shown[y]! ? 0 : shown[x]! < shown[y]! ? -1 : 1))
+  const sorted = shown.toSorted()
   const bins: Bin[] = []
   let bin: Bin | undefined
   let before = 0
-  for (const i of order) {
-    const value = shown[i]!
+  for (const value of sorted) {
+    // NaN sorts last.
+    if (Number.isNaN(value)) break
     // A gap parts bins; a long stretch without one is cut as well.
     if (
       !bin ||
@@ -53,8 +52,15 @@ export function binsOf(kind: Probe['kind'], row: Float64Array): Bin[] {
       bins.push(bin)
     }
     bin.high = value
-    bin.members.push(i)
     before = value
+  }
+  for (let i = 0; i < shown.length; i++) {
+    const value = shown[i]!
+    for (const each of bins)
+      if (value <= each.high) {
+        each.members.push(i)
+        break
+      }
   }
   return bins
 }
