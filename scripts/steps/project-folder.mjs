@@ -1,5 +1,5 @@
 import { randomBytes } from 'node:crypto'
-import { existsSync, mkdirSync, readFileSync, writeFileSync } from 'node:fs'
+import { accessSync, constants, existsSync, mkdirSync, readFileSync, writeFileSync } from 'node:fs'
 import path from 'node:path'
 import { Refusal } from './refusal.mjs'
 
@@ -12,9 +12,10 @@ export const dataFolder = path.join(projectFolder, '.data')
 export function ensureDataFolder() {
   try {
     mkdirSync(dataFolder, { recursive: true })
+    accessSync(dataFolder, constants.W_OK)
   } catch (error) {
     throw new Refusal(
-      `Cannot write to ${dataFolder} (${error.code}); give this user the folder and start again.`,
+      `Cannot write to ${dataFolder} (${error.code}): it belongs to another user. Start as that user, or move it away to begin afresh.`,
     )
   }
 }

@@ -4,6 +4,7 @@ import { ensureBuild } from './build.mjs'
 import { bringUpDatabase, runTypeScript } from './database.mjs'
 import { ensureNodeModules } from './node-modules.mjs'
 import { isPortFree } from './port.mjs'
+import { ensureDataFolder } from './project-folder.mjs'
 import { Refusal } from './refusal.mjs'
 import { stopChild, stopRunning } from './run.mjs'
 import { say, seconds, step } from './say.mjs'
@@ -27,6 +28,7 @@ export async function serve(mode) {
 }
 
 async function bringUp(mode, begun) {
+  ensureDataFolder()
   if (ensureSettingsFile()) say('· Settings: wrote .env with secrets of this install’s own')
   const { ports, ...settings } = readSettings()
   if (!(await isPortFree(ports.web))) {
