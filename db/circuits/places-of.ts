@@ -1,4 +1,5 @@
 import type { Circuit, Wire } from '@/diagrams/document/circuit-schema'
+import type { Node, NodeKind } from '@/diagrams/document/node-schema'
 import { connectorName, nodeName, pointName } from '@/diagrams/document/points'
 import { portsOf, splitEnd, wiresByEnd } from '@/diagrams/document/ports'
 import { type ColourKey, colourKey, textKey } from './search-keys'
@@ -40,7 +41,8 @@ export function placesOf(circuit: Circuit): Place[] {
     }
     // The order in which the document draws the line: from first.
     const [first, last] = side === 'from' ? [near, wire.to] : [wire.from, near]
-    const line = `${endName(circuit, first)} to ${endName(circuit, last)}`
+    const [one, other] = [first, last].map((end) => endName(circuit, nodes.get(splitEnd(end).node), end))
+    const line = `${one} to ${other}`
     return wire.signal ? `${line}, ${wire.signal}` : line
   }
   const shown = new Set<string>()
@@ -89,8 +91,17 @@ function keysOf(wire: Wire, side: 'from' | 'to', colour: ColourKey) {
 }
 
 /** Pins and cavities by number; of parts with a plain way in and out, the part's name alone. */
-function endName(circuit: Circuit, end: string): string {
-  const node = circuit.nodes.find((candidate) => candidate.id === splitEnd(end).node)
-  const plain = node && ['battery', 'fuse', 'load', 'resistor', 'diode', 'switch'].includes(node.kind)
-  return plain ? nodeName(node) : pointName(circuit, end).replace(/,.*$/, '')
+function endName(circuit: Circuit, node: Node | undefined, end: string): string {
+  return node && plainKinds.has(node.kind) ? nodeName(node) : pointName(circuit, end).replace(/,.*$/, '')
 }
+const plainKinds = new Set<NodeKind>([
+  'battery',
+  'feed',
+  'ground',
+  'splice',
+  'fuse',
+  'load',
+  'resistor',
+  'diode',
+  'switch',
+])

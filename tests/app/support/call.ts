@@ -23,7 +23,6 @@ export const addresses: Record<string, () => Promise<Module>> = {
 
 export interface Answer {
   status: number
-  // eslint-disable-next-line @typescript-eslint/no-explicit-any -- tests look into answers of every shape
   body: any
   headers: Headers
 }

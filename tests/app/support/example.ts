@@ -4,7 +4,6 @@ import path from 'node:path'
 const fixture = (name: string) =>
   readFileSync(path.join(import.meta.dirname, '..', '..', 'fixtures', name), 'utf8')
 
-// eslint-disable-next-line @typescript-eslint/no-explicit-any -- tests change documents in ways the types forbid
 export type Loose = any
 
 /** A fresh copy of the format page's example document, changed as told. */
