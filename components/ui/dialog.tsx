@@ -24,11 +24,16 @@ export function Dialog({
   className?: string
 }) {
   const ref = useRef<HTMLDialogElement>(null)
+  const heading = useRef<HTMLHeadingElement>(null)
   const titleId = useId()
   useEffect(() => {
     const dialog = ref.current
     if (!dialog) return
-    if (open && !dialog.open) dialog.showModal()
+    if (open && !dialog.open) {
+      dialog.showModal()
+      // Not into the first field: whoever is typing when a dialog comes up must not type into it.
+      heading.current?.focus()
+    }
     if (!open && dialog.open) dialog.close()
   }, [open])
   return (
@@ -44,7 +49,7 @@ export function Dialog({
     >
       {open && (
         <>
-          <h2 id={titleId} className="text-title">
+          <h2 ref={heading} id={titleId} tabIndex={-1} className="focus-quiet text-title">
             {title}
           </h2>
           <div className="mt-3 text-body">{children}</div>

@@ -76,6 +76,7 @@ describe('the library of a shop', () => {
 
   it('asks to sign in again over the page when the session has ended, and goes on from there', async () => {
     const { page, context } = await visitAs('noor@alderlane.example')
+    await page.waitForLoadState('networkidle')
     await context.clearCookies()
     await page.getByLabel('Trouble code').locator('visible=true').fill('B1A31')
     const dialog = page.getByRole('dialog', { name: 'Your session has ended' })
