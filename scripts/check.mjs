@@ -17,7 +17,7 @@ const checks = [
   {
     title: 'Lint',
     commands: [
-      [bin('eslint'), '--max-warnings', '0', '--cache', '--cache-location', '.data/eslint-cache', '.'],
+      [bin('eslint'), '--max-warnings', '0', '.'],
     ],
   },
   {
