@@ -36,7 +36,9 @@ describe('the product as a stranger meets it', () => {
   it('sends a stranger from the workspace to the sign-in page', async () => {
     const { page, context } = await test.visit()
     await page.goto('/circuits')
-    expect(new URL(page.url()).pathname).toBe('/sign-in')
+    // The page may be on its way already when it finds nobody signed in.
+    await page.waitForURL((url) => url.pathname === '/sign-in')
+    expect(await page.getByRole('button', { name: 'Sign in', exact: true }).isVisible()).toBe(true)
     await context.close()
   })
 })
