@@ -18,6 +18,16 @@ export function wholeBounds(scene: Scene): Box {
   ])
 }
 
+/** Where the next lead goes, with what stands around it; null when nothing is flagged. */
+export function flagBounds(scene: Scene): Box | null {
+  return scene.flags.length === 0
+    ? null
+    : unite(
+        scene.flags.map((flag) => flag.box),
+        120,
+      )
+}
+
 /** What is left: faulty places and those in question; null when nothing is marked so. */
 export function leftBounds(scene: Scene): Box | null {
   const left = scene.marks.filter((mark) => mark.verdict !== 'proved-good')

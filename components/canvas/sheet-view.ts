@@ -1,13 +1,14 @@
 import { useCallback, useEffect, useRef } from 'react'
 import { getViewportForBounds, useReactFlow, useStoreApi } from 'reactflow'
 import type { Box } from '@/diagrams/drawing/primitive'
-import { leftBounds, wholeBounds } from './sheet-bounds'
+import { flagBounds, leftBounds, wholeBounds } from './sheet-bounds'
 import type { Scene } from './scene'
 
 export const leastZoom = 0.15
 export const mostZoom = 3
 /** On a phone a whole circuit would be too small to read: what is left is shown at this size at least. */
 const leastPhoneZoom = 0.55
+const phonePixels = 600
 const laptopPixels = 1000
 /** Fitting never makes the drawing larger than this, however little is left of it. */
 const mostFitZoom = 1.3
@@ -45,14 +46,16 @@ export function useSheetView(scene: Scene, first: Fit): SheetView {
       if (width === 0 || height === 0) return
       const narrow = fit === 'auto' && width < laptopPixels
       const box: Box =
-        (fit === 'left' || narrow ? leftBounds(latest.current) : null) ?? wholeBounds(latest.current)
-      const head = height > 300 ? headPixels : 0
+        (fit === 'left' || narrow ? leftBounds(latest.current) : null) ??
+        (narrow && width < phonePixels ? flagBounds(latest.current) : null) ??
+        wholeBounds(latest.current)
+      const head = height > 240 ? headPixels : 0
       const foot = width < laptopPixels ? footPixels : 0
       const view = getViewportForBounds(
         box,
         width,
         height - head - foot,
-        narrow && width < 600 ? leastPhoneZoom : leastZoom,
+        narrow && width < phonePixels ? leastPhoneZoom : leastZoom,
         mostFitZoom,
         0.02,
       )

@@ -10,7 +10,7 @@ import type { Operation } from './use-operation'
 import { whatHappens } from './what-happens'
 
 const batteryChoices = [
-  { value: 'on', label: 'connected' },
+  { value: 'on', label: 'on' },
   { value: 'off', label: 'off' },
 ] as const
 
@@ -32,7 +32,7 @@ export function ControlsBand({
     <section
       aria-label="Controls"
       className={classNames(
-        'flex flex-wrap items-center gap-x-6 gap-y-2 border-t-2 border-ink bg-panel px-3 py-3 tablet:px-5',
+        'flex flex-wrap items-center gap-x-4 gap-y-2 laptop:gap-x-6 border-t-2 border-ink bg-panel px-3 py-3 tablet:px-5',
         className,
       )}
     >
@@ -55,14 +55,23 @@ export function ControlsBand({
         value={condition.battery ? 'on' : 'off'}
         onChange={(value) => act({ do: 'battery', connected: value === 'on' })}
       />
-      <div role="status" className="ml-auto min-w-0 max-w-96 text-right max-tablet:hidden">
+      <div
+        role="status"
+        className="min-w-0 max-tablet:order-first max-tablet:w-full tablet:ml-auto tablet:max-w-96 tablet:text-right"
+      >
         <p className="font-bold leading-tight">
           {happening ? happening.does : now.ok ? '' : now.problem.message}
         </p>
-        <p className="text-small text-ink-2">{happening?.draws}</p>
+        <p className="text-small text-ink-2 max-tablet:hidden">{happening?.draws}</p>
       </div>
       <Button size="bay" onClick={() => setUnplugging(true)}>
-        {out === 0 ? 'Unplug or pull a part' : `${out} unplugged`}
+        {out > 0 ? (
+          `${out} unplugged`
+        ) : (
+          <>
+            Unplug<span className="max-tablet:sr-only"> or pull a part</span>
+          </>
+        )}
       </Button>
       <UnplugDialog
         circuit={circuit}

@@ -9,7 +9,12 @@ export function HowItWorks({ circuit, operation }: { circuit: Circuit; operation
   const fits = (controls: Record<string, string>) =>
     Object.entries(controls).every(([id, position]) => operation.positions[id] === position)
   return (
-    <section aria-labelledby="how-it-works" className="overflow-y-auto px-3 py-3 tablet:px-5">
+    <section
+      aria-labelledby="how-it-works"
+      // Scrolls, and holds nothing that a key could land on.
+      tabIndex={0}
+      className="overflow-y-auto px-3 py-3 tablet:px-5"
+    >
       <h2 id="how-it-works" className="text-body font-bold">
         How it works
       </h2>

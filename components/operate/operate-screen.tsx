@@ -100,7 +100,7 @@ export function OperateScreen({ circuitId, circuit }: { circuitId: string; circu
         <ControlsBand
           circuit={circuit}
           operation={operation}
-          className="max-tablet:fixed max-tablet:inset-x-0 max-tablet:bottom-0 max-tablet:z-rule max-tablet:max-h-[42dvh] max-tablet:overflow-y-auto"
+          className="max-tablet:fixed max-tablet:inset-x-0 max-tablet:bottom-0 max-tablet:z-head max-tablet:max-h-[42dvh] max-tablet:overflow-y-auto"
         />
         <div className="z-rule flex min-h-0 flex-col border-t-2 border-ink bg-tray tablet:h-[22rem] laptop:h-64">
           <div className="border-b border-line p-2 laptop:hidden">

@@ -6,6 +6,9 @@ import { classNames } from '../ui/class-names'
 import type { Operation } from './use-operation'
 import { ampsWords } from './what-happens'
 
+/** Less than this is shown as 0 A. */
+const leastAmps = 0.00005
+
 /** Amps of every wire, largest first, each with a bar; a row picks its wire on the sheet. */
 export function WiresTable({
   circuit,
@@ -22,7 +25,9 @@ export function WiresTable({
   const rows = circuit.wires
     .map((wire) => ({ wire, amps: amps.get(wire.id) ?? 0 }))
     .toSorted((one, other) => Math.abs(other.amps) - Math.abs(one.amps))
+  // A voltmeter's own current is no current: without any, no bar is drawn.
   const most = Math.abs(rows[0]?.amps ?? 0)
+  const carries = most >= leastAmps
   return (
     <section aria-labelledby="wires-amps" className="flex min-h-0 flex-col">
       <div className="flex items-baseline gap-3 px-3 pt-3 pb-2 tablet:px-4">
@@ -51,7 +56,7 @@ export function WiresTable({
                 <span aria-hidden="true" className="h-3 w-24 border-l border-ink">
                   <span
                     className="block h-3 bg-ink"
-                    style={{ width: most > 0 ? `${(Math.abs(carried) / most) * 100}%` : 0 }}
+                    style={{ width: carries ? `${(Math.abs(carried) / most) * 100}%` : 0 }}
                   />
                 </span>
                 <span className="figures w-20 text-right text-body font-bold">

@@ -1,6 +1,6 @@
 'use client'
 
-import type { ReactNode } from 'react'
+import { type ReactNode, useEffect, useRef } from 'react'
 import type { Circuit } from '@/diagrams/document/circuit-schema'
 import type { NextReading } from '@/diagrams/faults/answer'
 import { Button } from '../ui/button'
@@ -33,13 +33,17 @@ export function EntryScreen({
   saved: ReactNode
   onClose: () => void
 }) {
+  const dialog = useRef<HTMLDialogElement>(null)
+  useEffect(() => {
+    if (!dialog.current?.open) dialog.current?.showModal()
+  }, [])
   const face = next ? connectorOf(circuit, next.red ?? '') : null
   return (
-    <div
-      role="dialog"
-      aria-modal="true"
+    <dialog
+      ref={dialog}
       aria-label="Take the reading"
-      className="fixed inset-0 z-dialog flex flex-col overflow-y-auto bg-tray tablet:hidden"
+      onClose={onClose}
+      className="m-0 h-dvh max-h-none w-screen max-w-none flex-col overflow-y-auto bg-tray text-ink open:flex tablet:hidden"
     >
       <header className="double-rule flex min-h-12 flex-none items-center gap-2 bg-panel px-2">
         <button
@@ -97,6 +101,6 @@ export function EntryScreen({
           }
         />
       </div>
-    </div>
+    </dialog>
   )
 }

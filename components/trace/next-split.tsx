@@ -38,7 +38,7 @@ export function NextSplit({
             </span>{' '}
             <span className="text-ink-2">{nextEffort(circuit, next)}</span>
           </p>
-          <h3 className="mt-1 text-title">{nextTitle(circuit, next)}</h3>
+          <h2 className="mt-1 text-title">{nextTitle(circuit, next)}</h2>
           <p className="mt-0.5 text-dense text-ink-2">{nextHow(circuit, next)}</p>
         </div>
         {face && (
@@ -53,7 +53,7 @@ export function NextSplit({
         look="cards"
       />
       <p className="sr-only">{next.says}</p>
-      <div className="mt-auto flex flex-wrap items-center gap-2">
+      <div className="sticky -bottom-2.5 mt-auto flex flex-wrap items-center gap-2 bg-tray py-1.5">
         {meter.setForNext ? (
           <p className="flex flex-1 items-center gap-2 text-dense font-bold">
             <Tick size={18} /> The meter is set for this

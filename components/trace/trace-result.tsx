@@ -78,9 +78,9 @@ function Done({ circuit, work, answer }: { circuit: Circuit; work: TraceWork; an
   const { finding, proof } = work.trace
   return (
     <section aria-labelledby="done" className="flex min-h-full flex-col gap-2" data-testid="trace-done">
-      <h3 id="done" className="text-title">
+      <h2 id="done" className="text-title">
         The repair is proved
-      </h3>
+      </h2>
       {finding && (
         <p>
           <b>Found:</b>{' '}

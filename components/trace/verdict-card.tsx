@@ -37,9 +37,9 @@ export function VerdictCard({
       <div className="flex gap-3">
         {first && answer.outcome !== 'no-fault' && <VerdictGlyph verdict="faulty" size={40} />}
         <div className="min-w-0 flex-1" role="status">
-          <h3 id="verdict" className="text-title">
+          <h2 id="verdict" className="text-title">
             {head}
-          </h3>
+          </h2>
           {rest && <p className="mt-1 text-dense text-ink-2">{rest}</p>}
         </div>
         {face && (
@@ -71,7 +71,9 @@ export function VerdictCard({
           )}
         </div>
       )}
-      {actions && <div className="mt-auto flex flex-wrap gap-2">{actions}</div>}
+      {actions && (
+        <div className="sticky -bottom-2.5 mt-auto flex flex-wrap gap-2 bg-tray py-2">{actions}</div>
+      )}
     </section>
   )
 }

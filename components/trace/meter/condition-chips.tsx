@@ -22,7 +22,7 @@ export function ConditionChips({
   const { condition } = state
   const positions = positionsIn(circuit, condition.controls)
   const out = condition.unplugged.map((id) => unpluggedName(circuit, id))
-  const battery = !condition.battery ? 'off' : condition.charging ? 'charging' : 'connected'
+  const battery = !condition.battery ? 'off' : condition.charging ? 'charging' : 'on'
   return (
     <div
       role="group"
@@ -53,8 +53,8 @@ export function ConditionChips({
         position={battery}
         data-control="battery"
         onClick={() => {
-          // Connected, charging, off, and round again.
-          if (battery === 'connected') act({ do: 'charging', charging: true })
+          // On, charging, off, and round again.
+          if (battery === 'on') act({ do: 'charging', charging: true })
           else if (battery === 'charging') act({ do: 'battery', connected: false })
           else act({ do: 'battery', connected: true })
         }}

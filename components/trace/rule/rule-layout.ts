@@ -32,7 +32,7 @@ export interface RuleLayout {
 
 const cellLeast = 44
 /** Narrower than this a name is cut short too early to help. */
-const cellWished = 84
+const cellWished = 66
 const legGap = 12
 const moreWidth = 96
 
