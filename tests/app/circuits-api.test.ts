@@ -236,6 +236,46 @@ describe('circuits over the API', () => {
       expect(untouched).toEqual({ ...first, mine: false })
     })
 
+    it('survives many replacing it at once: no save hangs or breaks, and all circuits end with the same one', async () => {
+      const vehicle = `van ${randomUUID()}`
+      const circuits: Loose[] = []
+      for (let i = 0; i < 4; i++)
+        circuits.push(
+          (
+            await add(
+              ownVehicle((c) => {
+                c.vehicle = vehicle
+                c.title = `Circuit ${i}`
+              }),
+            )
+          ).body,
+        )
+      const answers = await Promise.all(
+        circuits.flatMap((circuit, i) => {
+          const document = structuredClone(circuit.document)
+          document.connectors[0].location = `place ${i}`
+          return [
+            call(shop.people.owner, 'PUT', `circuits/${circuit.id}`, {
+              baseRevision: 1,
+              document,
+              connectors: 'replace',
+            }),
+            i === 3 ? call(shop.people.owner, 'DELETE', `circuits/${circuit.id}`) : null,
+          ].filter((answer) => answer !== null)
+        }),
+      )
+      // A replacement gives the others a new edition, so all but the first find theirs stale.
+      for (const { status } of answers) expect([200, 204, 404, 409]).toContain(status)
+      expect(answers.filter(({ status }) => status === 200).length).toBeGreaterThanOrEqual(1)
+      const left = await Promise.all(
+        circuits.slice(0, 3).map((circuit) => call(shop.people.owner, 'GET', `circuits/${circuit.id}`)),
+      )
+      expect(left.map(({ status }) => status)).toEqual([200, 200, 200])
+      const locations = left.map(({ body }) => body.document.connectors[0].location)
+      expect(new Set(locations).size).toBe(1)
+      expect(locations[0]).toMatch(/^place [0-3]$/)
+    })
+
     it('changes a connector that no other circuit uses without asking', async () => {
       const made = (await add(ownVehicle())).body
       const document = structuredClone(made.document)

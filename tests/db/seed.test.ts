@@ -89,5 +89,5 @@ describe('the demo scenario', () => {
       expect([row.title, place?.verdict]).not.toEqual([row.title, 'proved-good'])
       if (trace.value.state === 'done') expect([row.title, place?.verdict]).toEqual([row.title, 'faulty'])
     }
-  })
+  }, 120_000)
 })

@@ -28,8 +28,8 @@ export async function saveCircuit(
   const document = opened(openCircuit(parsed.value.document), 'document')
   if (!document.ok) return document
   return inTransaction(context, async (trx) => {
-    const before = await findCircuit(trx, actor.organisationId, id)
-    if (!before) return fail('not-found')
+    // Before the vehicle is locked or even made: there may be nothing to save to.
+    if (!(await findCircuit(trx, actor.organisationId, id))) return fail('not-found')
     const vehicle = await lockVehicle(trx, actor.organisationId, document.value.vehicle, {
       circuitId: id,
       newId: newId(),
@@ -41,11 +41,14 @@ export async function saveCircuit(
       locked.saved_by === actor.userId &&
       isDeepStrictEqual(await loadDocument(trx, locked), document.value)
     if (again) return succeed(await describeCircuit(trx, actor, { ...locked, saver: actor.name }))
-    if (locked.revision !== parsed.value.baseRevision)
+    if (locked.revision !== parsed.value.baseRevision) {
+      // Asked again: the lock may have waited for the very save that made this one stale.
+      const newer = await findCircuit(trx, actor.organisationId, id)
       return fail('stale-revision', {
         path: 'baseRevision',
-        message: `${before.saver ?? 'Someone'} saved edition ${locked.revision} of "${locked.title}"; yours builds on edition ${parsed.value.baseRevision} and was not saved.`,
+        message: `${newer?.saver ?? 'Someone'} saved edition ${locked.revision} of "${locked.title}"; yours builds on edition ${parsed.value.baseRevision} and was not saved.`,
       })
+    }
     const settled = await settleConnectors(trx, {
       organisationId: actor.organisationId,
       vehicleId: vehicle.id,
