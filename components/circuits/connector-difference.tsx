@@ -41,7 +41,7 @@ export function ConnectorDifference({
           {failure.details && (
             <ul className="mt-2">
               {failure.details.map((detail) => (
-                <li key={detail} className="border-b border-line py-2 text-dense">
+                <li key={detail} className="border-b border-line py-2 text-dense first-letter:uppercase">
                   {detail}
                 </li>
               ))}
@@ -56,6 +56,8 @@ export function ConnectorDifference({
           value={choice}
           onChange={setChoice}
           size="bay"
+          fill
+          className="max-w-lg"
         />
         <p className="min-h-11 text-body text-ink-2" aria-live="polite">
           {choice ? consequences[choice] : 'Nothing was brought in yet.'}

@@ -1,6 +1,7 @@
 'use client'
 
 import type { Circuit } from '@/diagrams/document/circuit-schema'
+import { OpenCircuitExport } from '../circuits/open-circuit-export'
 import { classNames } from '../ui/class-names'
 import type { Operation } from './use-operation'
 
@@ -58,6 +59,9 @@ export function HowItWorks({ circuit, operation }: { circuit: Circuit; operation
           {[code.text, code.setWhen].filter(Boolean).join('. ')}
         </p>
       ))}
+      <div className="mt-4">
+        <OpenCircuitExport />
+      </div>
     </section>
   )
 }

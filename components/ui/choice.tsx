@@ -52,9 +52,9 @@ export function Choice<Value extends string>({
             key={option.value}
             htmlFor={`${name}-${option.value}`}
             className={classNames(
-              'focus-ring relative flex items-center justify-center px-4 font-bold text-body text-center whitespace-nowrap select-none',
+              'focus-ring relative flex items-center justify-center px-4 font-bold text-body text-center select-none',
               'transition-colors duration-press has-[:focus-visible]:z-marks has-[:focus-visible]:rounded-field',
-              fill ? 'flex-1' : 'flex-auto',
+              fill ? 'flex-1' : 'flex-auto whitespace-nowrap',
               size === 'bay' ? 'min-h-bay min-w-bay' : 'min-h-target min-w-target',
               index > 0 && 'border-l border-line',
               option.disabled && 'text-ink-3',
