@@ -16,9 +16,7 @@ const checks = [
   },
   {
     title: 'Lint',
-    commands: [
-      [bin('eslint'), '--max-warnings', '0', '.'],
-    ],
+    commands: [[bin('eslint'), '--max-warnings', '0', '.']],
   },
   {
     title: 'Types of diagrams/ without a browser or Node',
