@@ -13,6 +13,7 @@ import { CircuitRows } from './circuit-rows'
 import { EmptySheet } from './empty-sheet'
 import { FinderRow } from './finder-row'
 import { anyFinder, type Finders, findersQuery, findersWords, noFinders } from './finders'
+import { captionWords, countWords } from './found-words'
 import { OpenTraces } from './open-traces'
 import { PhoneFinder } from './phone-finder'
 import { ThumbIndex, ThumbRow, ThumbSheet } from './thumb-index'
@@ -174,23 +175,4 @@ export function CircuitsScreen({
       )}
     </main>
   )
-}
-
-function plural(count: number, one: string, many: string): string {
-  return `${count} ${count === 1 ? one : many}`
-}
-
-function countWords(page: CircuitPage, rows: CircuitPage['rows']): string {
-  const count = page.found.rows
-  const kinds = new Set(rows.map((row) => row.kind))
-  if (kinds.has('cavity')) return `${plural(count, 'cavity fits', 'cavities fit')}`
-  if (kinds.has('wire')) return `${plural(count, 'wire fits', 'wires fit')}`
-  return count === 0 ? 'Nothing fits' : plural(count, 'circuit', 'circuits')
-}
-
-function captionWords(page: CircuitPage, rows: CircuitPage['rows'], finders: Finders): string {
-  const asked = findersWords(finders)
-  if (rows.some((row) => row.kind !== 'circuit'))
-    return [`in ${plural(page.found.circuits, 'circuit', 'circuits')}`, asked].filter(Boolean).join(', ')
-  return asked || 'all systems'
 }

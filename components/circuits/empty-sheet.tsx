@@ -7,7 +7,7 @@ export function EmptySheet({ title, children }: { title: string; children?: Reac
       <svg
         viewBox="0 0 900 260"
         aria-hidden="true"
-        className="h-auto w-full max-w-4xl"
+        className="h-auto w-full max-w-4xl [&_*]:[vector-effect:non-scaling-stroke]"
         fill="none"
         style={{ stroke: 'var(--line)' }}
         strokeWidth="3"

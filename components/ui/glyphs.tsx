@@ -43,14 +43,6 @@ export function Tick(props: GlyphProps) {
   )
 }
 
-export function Cross(props: GlyphProps) {
-  return (
-    <Glyph {...props}>
-      <path d="M4 4l12 12M16 4 4 16" strokeWidth="3" />
-    </Glyph>
-  )
-}
-
 /** Caution and refused input. */
 export function Triangle(props: GlyphProps) {
   return (
@@ -68,18 +60,6 @@ export function Chevron({ direction = 'right', ...props }: GlyphProps & { direct
   return (
     <Glyph {...props}>
       <path d="M6.5 3 14 10l-7.5 7" strokeWidth="2.8" transform={`rotate(${turns[direction]} 10 10)`} />
-    </Glyph>
-  )
-}
-
-/** A shaft with a solid head. */
-export function Arrow({ direction = 'right', ...props }: GlyphProps & { direction?: keyof typeof turns }) {
-  return (
-    <Glyph {...props}>
-      <g transform={`rotate(${turns[direction]} 10 10)`}>
-        <path d="M2 10h10" />
-        <path d="M11 4.6 18.4 10 11 15.4z" fill="currentColor" stroke="none" />
-      </g>
     </Glyph>
   )
 }
