@@ -121,8 +121,10 @@ function variants(
   return [...found.values()].flatMap(({ blows, certain, possible }) => {
     const alteration = withBlown(plain, blows.map(fuseBranch))
     const cases = studies.map((study) => new Case(study, alteration))
-    const moved = grid.map((severity, index) =>
-      near(possible, index) ? showsBy(cases, good, severity, showsAtVolts) : 0,
+    const moved = movesOver(
+      grid,
+      (severity) => showsBy(cases, good, severity, showsAtVolts),
+      harsherUpward(kind.mode),
     )
     const cells: Cell[] = []
     const last = Math.max(1, grid.length - 1)
@@ -139,6 +141,42 @@ function variants(
   })
 }
 
-function near(list: readonly boolean[], index: number): boolean {
-  return Boolean(list[index - 1] || list[index] || list[index + 1])
+/**
+ * How much each severity shows. The harsher a fault, the more it moves, so the two places where it
+ * begins to count are found by halving; between them the figure is the bound that was passed.
+ */
+function movesOver(
+  grid: readonly number[],
+  movesAt: (severity: number) => number,
+  upward: boolean,
+): number[] {
+  const moves = new Array<number>(grid.length).fill(0)
+  const index = (rank: number) => (upward ? grid.length - 1 - rank : rank)
+  const known = new Map<number, number>()
+  const at = (rank: number) => {
+    let found = known.get(rank)
+    if (found === undefined) known.set(rank, (found = movesAt(grid[index(rank)]!)))
+    return found
+  }
+  // Rank 0 is the harshest.
+  const lastAbove = (limit: number): number => {
+    if (at(0) <= limit) return -1
+    let [shows, hides] = [0, grid.length]
+    while (hides - shows > 1) {
+      const middle = (shows + hides) >> 1
+      if (at(middle) > limit) shows = middle
+      else hides = middle
+    }
+    return shows
+  }
+  const full = lastAbove(showsAtVolts)
+  const nearly = lastAbove(nearlyShowsAtVolts)
+  for (let rank = 0; rank <= Math.max(full, nearly); rank++)
+    moves[index(rank)] = rank <= full ? Infinity : showsAtVolts
+  return moves
+}
+
+/** A higher ohm is the harsher one, except for shorts; a lower battery is. */
+function harsherUpward(mode: Mode): boolean {
+  return !isShort(mode) && mode !== 'weak'
 }

@@ -1,5 +1,14 @@
 import type { Probe } from '../document/reading-schema'
-import { at, ownShare, unitCurrentIn, voltsBetween, type Case, type Settled } from '../solver/case'
+import {
+  at,
+  batteryVoltsAt,
+  fixedVoltsAt,
+  ownShare,
+  unitCurrentIn,
+  voltsBetween,
+  type Case,
+  type Settled,
+} from '../solver/case'
 import { deadVolts, voltmeterOhms } from '../solver/constants'
 import type { Network } from '../solver/network'
 
@@ -68,8 +77,8 @@ function between(given: Case, settled: Settled, a: number, b: number): Predictio
 function linear(given: Case, settled: Settled, y: Float64Array, a: number, b: number): Prediction {
   const reach = reachOf(given.study.network, settled, y)
   return {
-    battery: at(settled.voltsBattery, a) - at(settled.voltsBattery, b),
-    fixed: at(settled.voltsFixed, a) - at(settled.voltsFixed, b),
+    battery: batteryVoltsAt(settled, a) - batteryVoltsAt(settled, b),
+    fixed: fixedVoltsAt(settled, a) - fixedVoltsAt(settled, b),
     ...reach,
     live: false,
   }
@@ -138,7 +147,7 @@ function reachOf(
   y: Float64Array,
 ): Pick<Prediction, 'reachBattery' | 'reachFixed' | 'spread'> {
   const { base } = settled.located
-  const { voltsBattery, voltsFixed, scale } = settled
+  const { scale } = settled
   let reachBattery = 0
   let reachFixed = 0
   let squares = 0
@@ -152,8 +161,10 @@ function reachOf(
     const altered = settled.located.branch === k
     const siemens = altered ? settled.siemens : conductance
     const share = altered ? ownShare(settled, k) : 1
-    const iBattery = siemens * (at(voltsBattery, branch.a) - at(voltsBattery, branch.b) - base.emfBattery[k]!)
-    const iFixed = siemens * (at(voltsFixed, branch.a) - at(voltsFixed, branch.b) - base.emfFixed[k]!)
+    const iBattery =
+      siemens * (batteryVoltsAt(settled, branch.a) - batteryVoltsAt(settled, branch.b) - base.emfBattery[k]!)
+    const iFixed =
+      siemens * (fixedVoltsAt(settled, branch.a) - fixedVoltsAt(settled, branch.b) - base.emfFixed[k]!)
     const weight = Math.abs(moved) * share
     reachBattery += weight * Math.abs(iBattery)
     reachFixed += weight * Math.abs(iFixed)

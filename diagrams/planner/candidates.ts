@@ -13,19 +13,24 @@ export interface CandidateSet {
 }
 
 const combinationLimit = 8
-const conditionLimit = 48
+/** Most conditions ever weighed. */
+export const mostConditions = 48
 
 /**
  * Conditions and readings a person would think of: every combination of controls with everything
  * plugged in; the battery off; one connector opened, live and dead; both ends of a suspect wire
  * opened. `suspects` are site ids, most probable first; they decide what is kept when there are many.
- * `deadControls`: where the controls stand while a connector is open and the battery off.
+ * `deadControls`: where the controls stand while a connector is open and the battery off; `limit`:
+ * how many conditions at most.
  */
 export function candidateReadings(
   circuit: Circuit,
   suspects: readonly string[],
   present: Condition,
-  deadControls: Condition['controls'] = {},
+  {
+    deadControls = {},
+    limit = mostConditions,
+  }: { deadControls?: Condition['controls']; limit?: number } = {},
 ): CandidateSet[] {
   const combinations = controlCombinations(circuit, combinationLimit)
   const controlSets = [positionsIn(circuit, present.controls), ...combinations]
@@ -52,7 +57,7 @@ export function candidateReadings(
     for (const controls of [combinations.at(-1)!, combinations[0]!]) conditions.push(live(controls, [id]))
   const kept = new Map<string, Condition>()
   for (const condition of conditions)
-    if (kept.size < conditionLimit) kept.set(conditionKey(circuit, condition), condition)
+    if (kept.size < limit) kept.set(conditionKey(circuit, condition), condition)
   return [...kept.values()].map((condition) => ({ condition, probes: probesIn(circuit, condition) }))
 }
 

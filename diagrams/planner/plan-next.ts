@@ -1,7 +1,7 @@
 import type { Circuit, ControlsSetting } from '../document/circuit-schema'
 import type { Probe, Reading } from '../document/reading-schema'
 import { probeKey, type FaultModel } from '../faults/fault-model'
-import { candidateReadings, type CandidateSet } from './candidates'
+import { candidateReadings, mostConditions, type CandidateSet } from './candidates'
 import { minutesFor, workplaceAfter } from './cost'
 import { forecast } from './forecast'
 import { groupsAlike } from './alike'
@@ -32,6 +32,9 @@ export interface Plan {
 /** Readings under this are not worth a name. */
 const leastBits = 0.01
 const offered = 5
+/** Particles times conditions that one plan weighs, about, and the conditions it always weighs. */
+const weighings = 6000
+const leastConditions = 12
 
 /**
  * Weighs every candidate reading by the drop in entropy over sites it is expected to bring, divided
@@ -75,10 +78,14 @@ export function planNext(model: FaultModel, posterior: Posterior, readings: read
       })
     })
   }
-  for (const set of candidateReadings(circuit, suspects, workplace.condition)) weigh(set)
+  // While much is in question the plain conditions are enough to split it; later every one counts.
+  const limit = Math.min(mostConditions, Math.max(leastConditions, Math.round(weighings / particles.length)))
+  for (const set of candidateReadings(circuit, suspects, workplace.condition, { limit })) weigh(set)
   // Where all is read that tells suspects apart, the same leads with the controls moved count as a second look.
   if (found.length === 0 && readings.length > 0)
-    for (const set of candidateReadings(circuit, suspects, workplace.condition, movedControls(circuit)))
+    for (const set of candidateReadings(circuit, suspects, workplace.condition, {
+      deadControls: movedControls(circuit),
+    }))
       weigh(set)
   found.sort((a, b) => b.rate - a.rate)
   const partitions = new Set<string>()

@@ -28,7 +28,7 @@ export interface Located {
   voltsFixed: Float64Array
 }
 
-/** A faulted network with its parts settled. Volts per unknown: `scale · voltsBattery + voltsFixed`. */
+/** A faulted network with its parts settled; its volts are worked out where they are asked for. */
 export interface Settled {
   states: States
   located: Located
@@ -36,9 +36,11 @@ export interface Settled {
   siemens: number
   /** Ohm in series or across, as asked. */
   severity: number
+  /** The battery's volts over those drawn. */
   scale: number
-  voltsBattery: Float64Array
-  voltsFixed: Float64Array
+  /** Amperes through the altered or added element, from the battery's sources and from fixed ones. */
+  ampsBattery: number
+  ampsFixed: number
 }
 
 /** A study with one fault in it. Settles for any severity; factorisations are shared between severities. */
@@ -69,22 +71,16 @@ export class Case {
     const { z, loopOhms, p, q } = located
     const own = located.ownOhms + severity
     const siemens = z === null ? 0 : 1 / own
-    const settle = (volts: Float64Array, emf: number): Float64Array => {
-      if (z === null) return volts
-      const amps = (siemens * (at(volts, p) - at(volts, q) - emf)) / (1 + siemens * loopOhms)
-      if (amps === 0) return volts
-      const moved = new Float64Array(volts.length)
-      for (let i = 0; i < moved.length; i++) moved[i] = volts[i]! - amps * z[i]!
-      return moved
-    }
+    const ampsFor = (volts: Float64Array, emf: number): number =>
+      z === null ? 0 : (siemens * (at(volts, p) - at(volts, q) - emf)) / (1 + siemens * loopOhms)
     return {
       states,
       located,
       siemens,
       severity,
       scale,
-      voltsBattery: settle(located.voltsBattery, located.emfBattery),
-      voltsFixed: settle(located.voltsFixed, located.emfFixed),
+      ampsBattery: ampsFor(located.voltsBattery, located.emfBattery),
+      ampsFixed: ampsFor(located.voltsFixed, located.emfFixed),
     }
   }
 
@@ -220,7 +216,21 @@ export function at(volts: Float64Array, unknown: number): number {
 }
 
 export function voltsAt(settled: Settled, unknown: number): number {
-  return unknown < 0 ? 0 : settled.scale * settled.voltsBattery[unknown]! + settled.voltsFixed[unknown]!
+  return settled.scale * batteryVoltsAt(settled, unknown) + fixedVoltsAt(settled, unknown)
+}
+
+/** Volts that the battery's sources alone cause, at their drawn volts. */
+export function batteryVoltsAt({ located, ampsBattery }: Settled, unknown: number): number {
+  if (unknown < 0) return 0
+  const volts = located.voltsBattery[unknown]!
+  return ampsBattery === 0 ? volts : volts - ampsBattery * located.z![unknown]!
+}
+
+/** Volts that sources of their own volts alone cause: pull-ups, regulated outputs, diodes. */
+export function fixedVoltsAt({ located, ampsFixed }: Settled, unknown: number): number {
+  if (unknown < 0) return 0
+  const volts = located.voltsFixed[unknown]!
+  return ampsFixed === 0 ? volts : volts - ampsFixed * located.z![unknown]!
 }
 
 export function voltsBetween(settled: Settled, a: number, b: number): number {
