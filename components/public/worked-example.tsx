@@ -58,6 +58,10 @@ export function WorkedExample() {
             <VerdictGlyph verdict="faulty" size={26} />
             <span>{last.answer.says}</span>
           </p>
+          <p className="mt-1.5 text-small text-ink-2">
+            The other places are cleared if there is one fault and no reading is wrong. Values worked out by
+            the solver with that contact open, marks by the evaluator.
+          </p>
         </div>
       </div>
     </section>
