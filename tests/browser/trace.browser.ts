@@ -2,6 +2,7 @@ import { mkdirSync, readFileSync } from 'node:fs'
 import path from 'node:path'
 import type { Page } from 'playwright-core'
 import { describe, expect, it } from 'vitest'
+import { pointName } from '@/diagrams/document/points'
 import type { Probe, Reading, ReadingValue } from '@/diagrams/document/reading-schema'
 import { evaluate } from '@/diagrams/evaluate'
 import { samples } from '@/diagrams/samples/all-samples'
@@ -114,6 +115,57 @@ describe('a trace from a trouble code to a proved repair', () => {
     await context.close()
   })
 
+  it('names a short to ground as the cause and the fuse it has blown as the consequence', async () => {
+    const { page, context } = await test.visit()
+    await startTrace(page)
+    const fuse = circuit.nodes.findLast((node) => node.kind === 'fuse')
+    const wire = circuit.wires.find((one) => one.from === `${fuse?.id}.out`)
+    const fault: PlantedFault = { site: `wire:${wire?.id}`, mode: 'short-to-ground', ohms: 0.1 }
+    await trace(page, fault, 8)
+    const cell = page.locator(`[data-site="${fault.site}"]`)
+    await cell.waitFor()
+    expect(await cell.getAttribute('aria-label')).toMatch(/faulty, short to ground$/)
+    await page.getByText(`${fuse?.label} has blown because of it.`).waitFor()
+    await takePictures(page, 'trace-blown-fuse')
+    await context.close()
+  })
+
+  it('locates a short to ground with ohms alone, both ends of the wire unplugged, the leads put on points of the sheet', async () => {
+    const { page, context } = await test.visit()
+    await startTrace(page)
+    const wire = circuit.wires.find((one) => one.to.startsWith('c12-3'))
+    if (!wire) throw new Error('the link has no wire to C12 cavity 3')
+    const fault: PlantedFault = { site: `wire:${wire.id}`, mode: 'short-to-ground', ohms: 0.1 }
+    const ends = connectorsOf(wire)
+    await page.getByRole('group', { name: 'What to measure' }).getByText('Ohms').click()
+    await page.locator(`[data-point="${wire.from}"]`).click()
+    await page.getByText('Ohms needs the battery disconnected', { exact: false }).first().waitFor()
+    const battery = page.locator('[data-control="battery"]')
+    while (!(await battery.innerText()).includes('off')) await battery.click()
+    await page.locator('[data-control="unplugged"]').click()
+    for (const id of ends) {
+      const name = circuit.connectors.find((one) => one.id === id)?.label ?? id
+      await page.getByRole('dialog').getByRole('group', { name }).getByText('Out').click()
+    }
+    await page.getByRole('button', { name: 'Done' }).click()
+    const condition = { controls: {}, unplugged: ends, battery: false, charging: false, added: [] }
+    const leads: [string, string][] = [
+      [wire.from, wire.to],
+      [wire.from, 'chassis'],
+    ]
+    for (const [index, [red, black]] of leads.entries()) {
+      await put(page, 'Red lead', red)
+      await put(page, 'Black lead', black)
+      await enter(page, shown({ kind: 'ohms', red, black, condition }, fault))
+      await page.getByText(`${index + 1}, newest first`).waitFor()
+      await page.locator('[data-queue="idle"]').first().waitFor({ state: 'attached' })
+    }
+    await page.locator('[data-outcome="located"]').first().waitFor()
+    const cell = page.locator(`[data-site="${fault.site}"]`)
+    expect(await cell.getAttribute('aria-label')).toMatch(/faulty, short to ground$/)
+    await context.close()
+  })
+
   it('keeps readings through a lost network and a reload, and sends them when it is back', async () => {
     const { page, context } = await test.visit()
     await startTrace(page)
@@ -159,6 +211,22 @@ async function look(page: Page, file: string) {
     }
     return { width, height, colours: colours.size, lightShare: light / (data.length / 4) }
   }, address)
+}
+
+/** The connectors at both ends of a wire. */
+function connectorsOf(wire: { from: string; to: string }): string[] {
+  return [wire.from, wire.to].flatMap((end) => {
+    const node = circuit.nodes.find((one) => end.startsWith(`${one.id}.`))
+    return node?.connector ? [node.connector] : []
+  })
+}
+
+/** Puts a lead by its list: what the sheet's points do with a finger. */
+async function put(page: Page, lead: 'Red lead' | 'Black lead', point: string): Promise<void> {
+  const name = pointName(circuit, point)
+  await page.getByRole('button', { name: new RegExp(`^${lead}`) }).click()
+  await page.getByRole('dialog').getByLabel('Find').fill(name)
+  await page.getByRole('dialog').getByRole('button', { name, exact: false }).first().click()
 }
 
 /** What the meter shows: of the good circuit when no fault is given, to the digits that can be typed. */

@@ -26,7 +26,7 @@ export function LeadField({
       )}
     >
       <span className="text-note text-ink-2">{lead === 'red' ? 'Red lead' : 'Black lead'}</span>
-      <span className="flex min-w-0 items-center gap-2 font-bold leading-tight">
+      <span className="flex min-w-0 items-center gap-2 text-dense font-bold leading-tight">
         <LeadGlyph lead={lead} size={20} />
         <span className={classNames('truncate', point === null && 'font-normal text-ink-3')}>
           {point ?? 'tap a point'}
