@@ -1,3 +1,4 @@
+import type { CodeEvidence } from './code-evidence'
 import type { Evidence } from './evidence'
 import type { FaultModel } from './fault-model'
 import type { Hypothesis } from './hypothesis'
@@ -13,13 +14,21 @@ export interface Posterior {
   logEvidence: number
 }
 
-export function posteriorOf(model: FaultModel, evidence: Evidence, kind: PriorKind): Posterior {
+export function posteriorOf(
+  model: FaultModel,
+  evidence: Evidence,
+  kind: PriorKind,
+  codes: CodeEvidence | null = null,
+): Posterior {
   const logPrior = logPriors(model, kind)
   const logNoFault = model.hypotheses.length === 0 ? 0 : Math.log(noFaultPrior)
   const logs = model.hypotheses.map((hypothesis, h) =>
-    Float64Array.from(hypothesis.cells, (_, c) => logPrior[h]![c]! + evidence.cells[h]![c]!.logLikelihood),
+    Float64Array.from(
+      hypothesis.cells,
+      (_, c) => logPrior[h]![c]! + evidence.cells[h]![c]!.logLikelihood + (codes?.cells[h]![c]! ?? 0),
+    ),
   )
-  const good = logNoFault + evidence.good.logLikelihood
+  const good = logNoFault + evidence.good.logLikelihood + (codes?.good ?? 0)
   let most = good
   for (const list of logs) for (const log of list) most = Math.max(most, log)
   let sum = Math.exp(good - most)

@@ -18,12 +18,13 @@ export function traceFault(
   fault: PlantedFault | undefined,
   random: () => number,
   most: number,
+  codes: string[] = [],
   allow: (next: NextReading) => boolean = () => true,
 ): TraceRun {
   const readings: Reading[] = []
   let minutes = 0
   for (;;) {
-    const answer = evaluate({ circuit, readings, codes: [], priors: 'trade' })
+    const answer = evaluate({ circuit, readings, codes, priors: 'trade' })
     if (answer.outcome !== 'narrowed' || readings.length >= most) return { answer, readings, minutes }
     const next = answer.next.find(allow)
     if (!next) return { answer, readings, minutes }
