@@ -13,7 +13,8 @@ import { stateKey, type Base, type States, type Study } from './study'
  */
 export interface Located {
   base: Base
-  factor: Factor
+  /** The network without the altered branch; null where it follows from the whole one. */
+  factor: Factor | null
   p: number
   q: number
   z: Float64Array | null
@@ -164,32 +165,67 @@ function locate(study: Study, alteration: Alteration, states: States): Located {
     voltsFixed: base.voltsFixed,
   }
   const branch = alteration.series.find((series) => base.conductance[series]! > 0)
-  if (branch !== undefined) {
-    const conductance = base.conductance[branch]!
-    const { a, b } = network.branches[branch]!
-    const factor = study.factorWithout(base.conductance, branch)
-    const z = unitCurrent(network.size, factor, a, b)
-    return {
-      base,
-      factor,
-      p: a,
-      q: b,
-      z,
-      loopOhms: at(z, a) - at(z, b),
-      branch,
-      ownOhms: 1 / conductance,
-      emfBattery: base.emfBattery[branch]!,
-      emfFixed: base.emfFixed[branch]!,
-      voltsBattery: study.solveSources(factor, base.conductance, base.emfBattery, branch),
-      voltsFixed: study.solveSources(factor, base.conductance, base.emfFixed, branch),
-    }
-  }
+  if (branch !== undefined) return withoutBranch(study, base, branch)
   if (alteration.shunt) {
     const [p, q] = alteration.shunt
     const z = unitCurrent(network.size, base.factor, p, q)
     return { ...untouched, p, q, z, loopOhms: at(z, p) - at(z, q) }
   }
   return untouched
+}
+
+/** Below this part of a branch's own conductance there is no other way round, and the shortcut would cancel. */
+const otherWayFrom = 1e-5
+
+/**
+ * The network with one branch taken out. Where current has another way round, it follows from the
+ * whole network: with z₁ the volts for one ampere through the whole from q to p, g the branch and
+ * R₁ = z₁(p) − z₁(q), z = z₁/(1 − g·R₁), and its sources' volts gain i·z, i the branch's current. Where
+ * the branch is the only way, 1 − g·R₁ would cancel, and on dead circuits the volts of what floats
+ * would; then the network is factored again without it.
+ */
+function withoutBranch(study: Study, base: Base, branch: number): Located {
+  const { network } = study
+  const siemens = base.conductance[branch]!
+  const { a, b } = network.branches[branch]!
+  const common = {
+    base,
+    p: a,
+    q: b,
+    branch,
+    ownOhms: 1 / siemens,
+    emfBattery: base.emfBattery[branch]!,
+    emfFixed: base.emfFixed[branch]!,
+  }
+  if (study.condition.battery) {
+    const z = unitCurrent(network.size, base.factor, a, b)
+    const left = 1 - siemens * (at(z, a) - at(z, b))
+    if (left > otherWayFrom) {
+      for (let i = 0; i < z.length; i++) z[i]! /= left
+      const regained = (volts: Float64Array, emf: number): Float64Array => {
+        const amps = siemens * (at(volts, a) - at(volts, b) - emf)
+        return amps === 0 ? volts : volts.map((value, i) => value + amps * z[i]!)
+      }
+      return {
+        ...common,
+        factor: null,
+        z,
+        loopOhms: at(z, a) - at(z, b),
+        voltsBattery: regained(base.voltsBattery, common.emfBattery),
+        voltsFixed: regained(base.voltsFixed, common.emfFixed),
+      }
+    }
+  }
+  const factor = study.factorWithout(base.conductance, branch)
+  const z = unitCurrent(network.size, factor, a, b)
+  return {
+    ...common,
+    factor,
+    z,
+    loopOhms: at(z, a) - at(z, b),
+    voltsBattery: study.solveSources(factor, base.conductance, base.emfBattery, branch),
+    voltsFixed: study.solveSources(factor, base.conductance, base.emfFixed, branch),
+  }
 }
 
 /** Volts per unknown for one ampere put in at p and taken out at q (−1 is chassis). */
@@ -200,15 +236,39 @@ export function unitCurrent(size: number, factor: Factor, p: number, q: number):
   return p === q ? x : solveInPlace(factor, x)
 }
 
-/** Volts per unknown of a settled network for one ampere from b to a: the adjoint of measuring a against b. */
+/** Volts per unknown of a settled network for one ampere from b to a: the adjoint of measuring a against b. Not to be changed. */
 export function unitCurrentIn(settled: Settled, a: number, b: number): Float64Array {
   const { located, siemens } = settled
-  const y = unitCurrent(located.voltsBattery.length, located.factor, a, b)
+  const y = unaltered(located, a, b)
   const { z, p, q, loopOhms } = located
   if (z === null) return y
   const amps = (siemens * (at(y, p) - at(y, q))) / (1 + siemens * loopOhms)
-  if (amps !== 0) for (let i = 0; i < y.length; i++) y[i]! -= amps * z[i]!
-  return y
+  return amps === 0 ? y : y.map((value, i) => value - amps * z[i]!)
+}
+
+/** The same for the network without the altered branch or added short; kept, since every severity asks. */
+function unaltered(located: Located, a: number, b: number): Float64Array {
+  const { base, factor, z, p, q, branch } = located
+  const size = base.voltsBattery.length
+  const key = a * (size + 1) + b
+  if (factor !== null && factor !== base.factor)
+    return kept(factor, key, () => unitCurrent(size, factor, a, b))
+  const whole = kept(base.factor, key, () => unitCurrent(size, base.factor, a, b))
+  if (factor !== null || z === null) return whole
+  return kept(located, key, () => {
+    const amps = base.conductance[branch]! * (at(whole, p) - at(whole, q))
+    return amps === 0 ? whole : whole.map((value, i) => value + amps * z[i]!)
+  })
+}
+
+const keptByOwner = new WeakMap<object, Map<number, Float64Array>>()
+
+function kept(owner: object, key: number, find: () => Float64Array): Float64Array {
+  let map = keptByOwner.get(owner)
+  if (!map) keptByOwner.set(owner, (map = new Map()))
+  let found = map.get(key)
+  if (!found) map.set(key, (found = find()))
+  return found
 }
 
 export function at(volts: Float64Array, unknown: number): number {
