@@ -91,6 +91,7 @@ function Sheet({
   useKeyCommands({
     f: () => view.fit('left'),
     '0': () => view.fit('whole'),
+    Home: () => view.fit('whole'),
     '+': () => view.zoomBy(1.25),
     '-': () => view.zoomBy(0.8),
     ArrowLeft: () => view.panBy(60, 0),

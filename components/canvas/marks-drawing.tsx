@@ -1,5 +1,6 @@
 'use client'
 
+import { memo } from 'react'
 import { currentChevrons } from '@/diagrams/drawing/current-chevron'
 import { drawNotes } from '@/diagrams/drawing/drawn-notes'
 import { shortTail } from '@/diagrams/drawing/short-tail'
@@ -11,8 +12,11 @@ import { WireLabelDrawing } from './wire-drawing'
 /** Under this size of the sheet only picked wires and those in question keep their labels. */
 const labelsFrom = 0.7
 
-/** All that lies over wires and parts: labels, chevrons, tails of shorts, glyphs, plates and flags. */
-export function MarksDrawing({ scene, zoom = 1 }: { scene: Scene; zoom?: number }) {
+/**
+ * All that lies over wires and parts: labels, chevrons, tails of shorts, glyphs, plates and flags. Kept while a figure
+ * is typed, because nothing of it changes then.
+ */
+export const MarksDrawing = memo(function MarksDrawing({ scene, zoom = 1 }: { scene: Scene; zoom?: number }) {
   const { verdicts, wireAmps, tails } = scene.overlay
   const wires = [...scene.wires.values()]
   const manyLeft = scene.marks.filter((mark) => mark.verdict === 'in-question').length > 12
@@ -50,7 +54,7 @@ export function MarksDrawing({ scene, zoom = 1 }: { scene: Scene; zoom?: number 
       ))}
     </g>
   )
-}
+})
 
 /**
  * Rails, rungs and rings say it for wires and contacts: a glyph on each would hide the drawing. So a tick goes on parts

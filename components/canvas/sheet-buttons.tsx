@@ -8,6 +8,11 @@ import type { SheetView } from './sheet-view'
 export function SheetButtons({ view, anyLeft }: { view: SheetView; anyLeft: boolean }) {
   return (
     <div className="absolute right-3 z-controls flex gap-2 bottom-3 laptop:bottom-auto laptop:top-2.5 laptop:right-4">
+      {anyLeft && (
+        <Button onClick={() => view.fit('whole')} className="max-laptop:hidden">
+          Whole sheet
+        </Button>
+      )}
       <Button onClick={() => view.fit(anyLeft ? 'left' : 'whole')} className="min-h-target laptop:min-h-11">
         {anyLeft ? 'Fit what is left' : 'Whole sheet'}
       </Button>

@@ -11,7 +11,9 @@ import type { Operation } from './use-operation'
 /** Volts of every point, now and before the last control was moved, and the meter between any two of them. */
 export function PointsTable({ circuit, operation }: { circuit: Circuit; operation: Operation }) {
   const { now, before, beforeWords, state, readout, act } = operation
-  const rows = now.ok ? pointRows(circuit, now.value.volts, before?.volts ?? null) : []
+  const rows = now.ok
+    ? pointRows(circuit, operation.condition.unplugged, now.value.volts, before?.volts ?? null)
+    : []
   return (
     <section aria-labelledby="points-volts" className="flex min-h-0 flex-col">
       <div className="flex items-baseline gap-3 px-3 pt-3 tablet:px-4">

@@ -1,4 +1,5 @@
 import type { Circuit } from '@/diagrams/document/circuit-schema'
+import { pointPlaces } from '../canvas/point-place'
 import { nodesById } from '@/diagrams/drawing/part-geometry'
 import { splitEnd, wiresByEnd } from '@/diagrams/document/ports'
 
@@ -27,15 +28,17 @@ export function shownVolts(circuit: Circuit, volts: ReadonlyMap<string, number>)
   return shown
 }
 
-/** Every point that has a wire, in the order of the drawing, the ones that moved against `before` first. */
+/** Every point that a lead can reach, in the order of the drawing, the ones that moved against `before` first. */
 export function pointRows(
   circuit: Circuit,
+  unplugged: readonly string[],
   now: ReadonlyMap<string, number>,
   before: ReadonlyMap<string, number> | null,
 ): { point: string; volts: number; before: number | null; moved: boolean }[] {
-  const wired = wiresByEnd(circuit)
+  // The part's side of a contact can be reached only while its connector is open.
+  const reachable = new Set(pointPlaces(circuit, unplugged).map(({ point }) => point))
   const rows = [...now]
-    .filter(([point]) => wired.has(point.replace(/:part$/, '')))
+    .filter(([point]) => reachable.has(point))
     .map(([point, volts]) => {
       const earlier = before?.get(point) ?? null
       return {

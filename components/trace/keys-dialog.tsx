@@ -16,9 +16,11 @@ const keys: readonly [string, string][] = [
   ['Ctrl Z', 'undo the last reading'],
   ['Ctrl Shift Z', 'redo'],
   ['F', 'fit what is left'],
+  ['Home', 'whole sheet (0 types into the meter here)'],
   ['+ and -', 'larger and smaller'],
   ['arrows', 'pan the sheet'],
-  ['[ and ]', 'walk to the neighbouring point'],
+  ['[ and ]', 'walk to the neighbouring place; on a point of the sheet, to the next point'],
+  ['Enter on a point', 'put the lead there'],
   ['Esc', 'let go'],
   ['?', 'this list'],
 ]

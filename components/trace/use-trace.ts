@@ -14,7 +14,7 @@ import { reportSessionEnded } from '../shell/session-ended'
 export function useTrace(initial: Trace) {
   const queries = useQueryClient()
   const { queryKey } = traceQuery(initial.id)
-  const { data: trace } = useQuery({ ...traceQuery(initial.id), initialData: initial })
+  const { data: trace, dataUpdatedAt } = useQuery({ ...traceQuery(initial.id), initialData: initial })
   const [changes, setChanges] = useState<Change[]>([])
   const [state, setState] = useState<QueueState>({ kind: 'idle', waiting: 0, savedAt: null })
   const [undone, setUndone] = useState<Reading[]>([])
@@ -56,6 +56,11 @@ export function useTrace(initial: Trace) {
     // The query key is made from the id alone.
     // eslint-disable-next-line react-hooks/exhaustive-deps
   }, [initial.id, queries])
+
+  // The server has answered something: what still waits may go now, too, as after signing in again.
+  useEffect(() => {
+    if (dataUpdatedAt > 0) queue.current?.sendNow()
+  }, [dataUpdatedAt])
 
   const readings = useMemo(() => readingsWithChanges(trace.readings, changes), [trace.readings, changes])
   return {

@@ -37,7 +37,12 @@ describe('a trace from a trouble code to a proved repair', () => {
   }
 
   /** Follows the planner with a fault planted, on the screen, until the evaluator has located it or `most` are taken. */
-  async function trace(page: Page, fault: PlantedFault, most: number): Promise<Reading[]> {
+  async function trace(
+    page: Page,
+    fault: PlantedFault,
+    most: number,
+    after?: (readings: number) => Promise<unknown>,
+  ): Promise<Reading[]> {
     const readings: Reading[] = []
     for (;;) {
       await page.locator('[data-outcome="narrowed"], [data-outcome="located"]').first().waitFor()
@@ -53,6 +58,7 @@ describe('a trace from a trouble code to a proved repair', () => {
       readings.push({ id: `R${readings.length + 1}`, ...probe, value } as Reading)
       await page.locator('[data-queue="idle"]').first().waitFor({ state: 'attached' })
       await page.getByText(`${readings.length}, newest first`).waitFor()
+      await after?.(readings.length)
     }
   }
 
@@ -66,7 +72,11 @@ describe('a trace from a trouble code to a proved repair', () => {
 
     const wire = circuit.wires.find((one) => one.from.startsWith('c12-3') || one.to.startsWith('c12-3'))
     const fault: PlantedFault = { site: `wire:${wire?.id}`, mode: 'open' }
-    const readings = await trace(page, fault, 8)
+    const readings = await trace(page, fault, 8, async (taken) => {
+      if (taken !== 2) return
+      await page.locator('[data-outcome="narrowed"]').first().waitFor()
+      await takePictures(page, 'trace-narrowed')
+    })
     const cell = page.locator(`[data-site="${fault.site}"]`)
     await cell.waitFor()
     expect(await cell.getAttribute('aria-label')).toMatch(/faulty, open$/)
@@ -130,7 +140,7 @@ describe('a trace from a trouble code to a proved repair', () => {
     await context.close()
   })
 
-  it('locates a short to ground with ohms alone, both ends of the wire unplugged, the leads put on points of the sheet', async () => {
+  it('locates a short to ground with ohms alone, both ends of the wire unplugged', async () => {
     const { page, context } = await test.visit()
     await startTrace(page)
     const wire = circuit.wires.find((one) => one.to.startsWith('c12-3'))
