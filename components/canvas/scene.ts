@@ -7,6 +7,7 @@ import { type Box, grow, type Place } from '@/diagrams/drawing/primitive'
 import { type PlacedFlag, readingFlags } from '@/diagrams/drawing/reading-flag'
 import { type PlaceMark, placeMark } from '@/diagrams/drawing/verdict-mark'
 import { type VoltsPlate, voltsPlates } from '@/diagrams/drawing/volts-plate'
+import { wireRoute } from '@/diagrams/drawing/wire-route'
 import type { VerdictMark } from '@/diagrams/drawing/wire-stroke'
 
 export interface PlacedMark extends PlaceMark {
@@ -34,7 +35,10 @@ export interface Scene {
 
 export function buildScene(circuit: Circuit, overlay: Overlay, picked: string | null = null): Scene {
   const verdicts = overlay.verdicts ?? new Map<string, VerdictMark>()
-  const taken = [...labelObstacles(circuit), ...runBoxes([...drawWires(circuit, verdicts).values()])]
+  const taken = [
+    ...labelObstacles(circuit),
+    ...runBoxes(circuit.wires.map((wire) => wireRoute(circuit, wire))),
+  ]
   const marks = [...verdicts].flatMap(([site, verdict]): PlacedMark[] => {
     const mark = placeMark(circuit, site)
     return mark ? [{ ...mark, site, verdict, ...ringOwner(circuit, site) }] : []
@@ -72,8 +76,8 @@ function ringOwner(circuit: Circuit, site: string): { node: string | null; overB
   return { node: id, overBody: dot >= 0 && node?.kind !== 'cavity' }
 }
 
-function runBoxes(wires: readonly DrawnWire[]): Box[] {
-  return wires.flatMap(({ route }) =>
+function runBoxes(routes: readonly Place[][]): Box[] {
+  return routes.flatMap((route) =>
     route.slice(1).map((to, at) => {
       const from = route[at] as Place
       const [x, y] = [Math.min(from.x, to.x), Math.min(from.y, to.y)]
