@@ -25,7 +25,7 @@ export function posteriorOf(
   const logs = model.hypotheses.map((hypothesis, h) =>
     Float64Array.from(
       hypothesis.cells,
-      (_, c) => logPrior[h]![c]! + evidence.cells[h]![c]!.logLikelihood + (codes?.cells[h]![c]! ?? 0),
+      (_, c) => logPrior[h]![c]! + evidence.cells[h]![c]!.logLikelihood + (codes ? codes.cells[h]![c]! : 0),
     ),
   )
   const good = logNoFault + evidence.good.logLikelihood + (codes?.good ?? 0)
