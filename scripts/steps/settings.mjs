@@ -9,10 +9,16 @@ const settingsFile = path.join(projectFolder, '.env')
 const exampleFile = path.join(projectFolder, '.env.example')
 const loopback = new Set(['127.0.0.1', 'localhost', '[::1]'])
 
-/** Makes `.env` from `.env.example` with secrets of this install's own; answers whether it had to. */
-export function ensureSettingsFile() {
-  if (existsSync(settingsFile)) return false
-  writeFileSync(settingsFile, fillExample(readFileSync(exampleFile, 'utf8')), { mode: 0o600, flag: 'wx' })
+/**
+ * Makes `.env` from `.env.example` with secrets of this install's own; answers whether it had to. A copy that
+ * somebody made by hand is filled in where it still asks: the placeholder itself is no secret.
+ */
+export function ensureSettingsFile(file = settingsFile) {
+  const there = existsSync(file)
+  const text = readFileSync(there ? file : exampleFile, 'utf8')
+  const filled = fillExample(text)
+  if (there && filled === text) return false
+  writeFileSync(file, filled, { mode: 0o600, flag: there ? 'w' : 'wx' })
   return true
 }
 

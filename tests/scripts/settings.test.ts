@@ -1,9 +1,10 @@
-import { readFileSync } from 'node:fs'
+import { mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs'
+import { tmpdir } from 'node:os'
 import path from 'node:path'
 import { parseEnv } from 'node:util'
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest'
 import { projectFolder } from '../../scripts/steps/project-folder.mjs'
-import { fillExample, readSettings } from '../../scripts/steps/settings.mjs'
+import { ensureSettingsFile, fillExample, readSettings } from '../../scripts/steps/settings.mjs'
 
 const example = readFileSync(path.join(projectFolder, '.env.example'), 'utf8')
 
@@ -19,6 +20,22 @@ describe('the settings of an install', () => {
     expect(new Set(secrets).size).toBe(8)
     expect(secrets.filter((secret) => !secret || secret.length < 12)).toEqual([])
     expect(JSON.stringify([one, other])).not.toMatch(/<\w+>/)
+  })
+
+  it('are filled in where a copy of the example made by hand still asks, and are then left alone', () => {
+    const folder = mkdtempSync(path.join(tmpdir(), 'settings-'))
+    try {
+      const file = path.join(folder, '.env')
+      writeFileSync(file, example.replace(/^PORT=.*/m, 'PORT=4107'))
+      expect(ensureSettingsFile(file)).toBe(true)
+      const filled = readFileSync(file, 'utf8')
+      expect(parseEnv(filled).PORT).toBe('4107')
+      expect(JSON.stringify(parseEnv(filled))).not.toMatch(/<\w+>/)
+      expect(ensureSettingsFile(file)).toBe(false)
+      expect(readFileSync(file, 'utf8')).toBe(filled)
+    } finally {
+      rmSync(folder, { recursive: true })
+    }
   })
 
   describe('read from the environment', () => {
