@@ -41,7 +41,9 @@ function locatedSentence(
   const faulty = answer.sites.filter((site) => site.verdict === 'faulty')
   const first = faulty[0]!
   const mode = first.modes[0]!
-  const sentences = [`${modeWords(circuit, mode)} ${siteName(circuit, first.site)}${severityWords(mode)}.`]
+  const sentences = [
+    `${modeWords(circuit, mode, first.site)} ${siteName(circuit, first.site)}${severityWords(mode)}.`,
+  ]
   if (mode.blows.length > 0)
     sentences.push(
       `It has blown ${mode.blows.map((id) => fuseName(circuit, id)).join(' and ')}: the short is the cause, the fuse the consequence.`,
@@ -66,19 +68,20 @@ function fuseName(circuit: Circuit, id: string): string {
   return node ? nodeName(node) : id
 }
 
-function modeWords(circuit: Circuit, mode: ModeAnswer): string {
+function modeWords(circuit: Circuit, mode: ModeAnswer, site: string): string {
+  const at = site.startsWith('wire:') ? 'in' : 'at'
   switch (mode.mode) {
     case 'open':
     case 'stuck-open':
-      return 'Open at'
+      return `Open ${at}`
     case 'resistive':
-      return 'Bad joint or poor contact at'
+      return site.startsWith('contact:') || at === 'in' ? `Bad joint ${at}` : `High resistance ${at}`
     case 'short-to-ground':
-      return 'Short to ground at'
+      return `Short to ground ${at}`
     case 'short-to-supply':
-      return 'Short to supply at'
+      return `Short to supply ${at}`
     case 'short-to-wire':
-      return `Short to ${mode.other ? siteName(circuit, `wire:${mode.other}`) : 'another wire'} at`
+      return `Short to ${mode.other ? siteName(circuit, `wire:${mode.other}`) : 'another wire'} ${at}`
     case 'shorted':
       return 'Shorted inside:'
     case 'blown':

@@ -46,7 +46,7 @@ describe('the example request', () => {
       expect(answer.sites[0]!.modes[0]).toMatchObject({ mode: 'open', other: null, ohms: null, blows: [] })
       expect(answer.readings.map((reading) => reading.agrees)).toEqual([false, true, true])
       expect(siteOf(answer, 'contact:c7-2')).toMatchObject({ verdict: 'proved-good' })
-      expect(answer.says).toContain('Open at wire')
+      expect(answer.says).toContain('Open in wire C7 cavity 2 to Body module pin 12.')
     })
 
   it('gives probabilities that sum to 1 with no fault, most probable site first', () => {
