@@ -68,9 +68,9 @@ export function ControlsBand({
         {out > 0 ? (
           `${out} unplugged`
         ) : (
-          <>
+          <span>
             Unplug<span className="max-tablet:sr-only"> or pull a part</span>
-          </>
+          </span>
         )}
       </Button>
       <UnplugDialog

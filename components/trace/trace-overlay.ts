@@ -5,6 +5,7 @@ import type { Overlay, ReadingFlag, ShortTail } from '@/diagrams/drawing/overlay
 import type { Answer, NextReading } from '@/diagrams/faults/answer'
 import { readingNumber } from '@/lib/client/evaluator/numbered-readings'
 import { valueWords } from '@/lib/client/meter/reading-words'
+import { likeliestMode } from './likeliest-mode'
 
 /** What a trace shows on its sheet: verdicts once there is a reading, a flag for each reading, the next target. */
 export function traceOverlay({
@@ -22,7 +23,11 @@ export function traceOverlay({
 }): Overlay {
   const marked = readings.length > 0 && answer
   return {
-    moment: { positions: condition?.controls ?? {}, unplugged: condition?.unplugged ?? [] },
+    moment: {
+      positions: condition?.controls ?? {},
+      unplugged: condition?.unplugged ?? [],
+      blown: marked ? blownFuses(answer) : [],
+    },
     verdicts: new Map(marked ? answer.sites.map((site) => [site.site, site.verdict]) : []),
     flags: [...(next ? nextFlags(next) : []), ...readingFlagsOf(readings, answer)],
     tails: marked ? shortTailsOf(circuit, answer) : [],
@@ -77,12 +82,20 @@ function nextFlags(next: NextReading): ReadingFlag[] {
   }
 }
 
+/** Fuses that the fault found has blown, so that the drawing shows the consequence, too. */
+function blownFuses(answer: Answer): string[] {
+  const blown = answer.sites
+    .filter((site) => site.verdict === 'faulty')
+    .flatMap((site) => likeliestMode(site)?.blows ?? [])
+  return [...new Set(blown)]
+}
+
 function shortTailsOf(circuit: Circuit, answer: Answer): ShortTail[] {
   return answer.sites
     .filter((site) => site.verdict === 'faulty' && site.site.startsWith('wire:'))
     .flatMap((site): ShortTail[] => {
       const wire = site.site.slice('wire:'.length)
-      const [mode] = site.modes.toSorted((one, other) => other.probability - one.probability)
+      const mode = likeliestMode(site)
       switch (mode?.mode) {
         case 'short-to-ground':
           return [{ wire, to: 'ground', label: 'touches ground' }]

@@ -3,9 +3,10 @@
 import type { ReactNode } from 'react'
 import type { Circuit } from '@/diagrams/document/circuit-schema'
 import { nodeName } from '@/diagrams/document/points'
-import type { Answer, SiteAnswer } from '@/diagrams/faults/answer'
+import type { Answer } from '@/diagrams/faults/answer'
 import { VerdictGlyph } from '../ui/verdict-glyph'
 import { ConnectorFace } from './connector-face'
+import { likeliestMode } from './likeliest-mode'
 import { connectorOf } from './next-words'
 import { headAndRest, lookFor, siteTitle } from './site-words'
 
@@ -76,10 +77,6 @@ export function VerdictCard({
       )}
     </section>
   )
-}
-
-export function likeliestMode(site: SiteAnswer) {
-  return site.modes.toSorted((one, other) => other.probability - one.probability)[0]
 }
 
 function pointOfSite(site: string): string | null {

@@ -9,7 +9,7 @@ import { Button } from '../../ui/button'
 import { Choice } from '../../ui/choice'
 import { FieldBox, FieldMessage, TextArea } from '../../ui/field'
 import { modeWords } from '../site-words'
-import { likeliestMode } from '../verdict-card'
+import { likeliestMode } from '../likeliest-mode'
 
 const nothing = 'nothing'
 

@@ -6,7 +6,7 @@ import type { SiteAnswer } from '@/diagrams/faults/answer'
 import { classNames } from '../../ui/class-names'
 import { VerdictGlyph, verdictWords } from '../../ui/verdict-glyph'
 import { modeWords, shortSiteName } from '../site-words'
-import { likeliestMode } from '../verdict-card'
+import { likeliestMode } from '../likeliest-mode'
 
 /** A place left: named, with rungs along its foot; the faulty one in a thick solid frame, with how it failed. */
 export function RuleCell({

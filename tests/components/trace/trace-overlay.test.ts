@@ -49,6 +49,25 @@ describe('what a trace lays over its sheet', () => {
     expect([...(overlay.verdicts?.values() ?? [])]).not.toContain('proved-good')
   })
 
+  it('shows the fuse that the fault has blown', () => {
+    const [first] = unread.sites
+    const fuse = circuit.nodes.find((node) => node.kind === 'fuse')?.id ?? ''
+    const mode = {
+      mode: 'short-to-ground' as const,
+      probability: 0.97,
+      ohms: 0.1,
+      other: null,
+      blows: [fuse],
+    }
+    const located: Answer = {
+      ...unread,
+      outcome: 'located',
+      sites: first ? [{ ...first, verdict: 'faulty', modes: [mode] }] : [],
+    }
+    expect(of([volts('R1', wire?.to ?? '', 0)], located, null).moment?.blown).toEqual([fuse])
+    expect(of([], unread).moment?.blown).toEqual([])
+  })
+
   it('draws a short as a tail from the wire to what it touches', () => {
     const shorted = (mode: 'short-to-ground' | 'short-to-wire', other: string | null): Answer => ({
       ...unread,
