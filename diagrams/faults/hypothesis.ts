@@ -1,8 +1,8 @@
 import type { Circuit } from '../document/circuit-schema'
 import { neighbourWires, sitesOf, type Mode } from '../document/sites'
-import { withBlown, type Alteration } from '../solver/alteration'
-import { blownFuses, drivingStudies, fuseBranch } from '../solver/blown-fuses'
-import { Case } from '../solver/case'
+import { alterationKey, withBlown, type Alteration } from '../solver/alteration'
+import { blownFuses, casesAfter, drivingStudies, fuseBranch } from '../solver/blown-fuses'
+import type { Case } from '../solver/case'
 import { blowsAtRatingTimes } from '../solver/constants'
 import { alterationOf, isShort, type FaultKind } from '../solver/fault-alteration'
 import type { Network } from '../solver/network'
@@ -43,12 +43,14 @@ const fuseSlack = { low: 0.88, high: 1.14 }
 export function hypothesesOf(circuit: Circuit, network: Network): Hypothesis[] {
   const studies = drivingStudies(network)
   const good = goodShow(studies)
-  return sitesOf(circuit).flatMap((site) =>
-    site.modes.flatMap((mode) => {
+  return sitesOf(circuit).flatMap((site) => {
+    // Modes of one site that change the same branch, an open and a bad joint, share their factorisations.
+    const caches = new Map<string, Map<string, Case[]>>()
+    return site.modes.flatMap((mode) => {
       const kinds = kindsOf(circuit, site.id, mode)
       return kinds.flatMap((kind) => {
         const part = (mode === 'short-to-wire' ? 0.5 : 1) / kinds.length
-        return variants(network, studies, good, kind).map(
+        return variants(network, studies, good, kind, caches).map(
           ({ blows, cells }): Hypothesis => ({
             site: kind.site,
             mode: kind.mode,
@@ -61,8 +63,14 @@ export function hypothesesOf(circuit: Circuit, network: Network): Hypothesis[] {
           }),
         )
       })
-    }),
-  )
+    })
+  })
+}
+
+function keptCases(key: string, caches: Map<string, Map<string, Case[]>>): Map<string, Case[]> {
+  let found = caches.get(key)
+  if (!found) caches.set(key, (found = new Map()))
+  return found
 }
 
 /** A splice fails at any one of its wires; a wire touches any one of its neighbours. */
@@ -86,11 +94,12 @@ function variants(
   studies: Study[],
   good: Show[],
   kind: FaultKind,
+  caches: Map<string, Map<string, Case[]>>,
 ): { blows: string[]; cells: Cell[] }[] {
   const grid = severityGrid(kind.mode)
   const plain = alterationOf(network, kind)
   const found = new Map<string, { blows: string[]; certain: boolean[]; possible: boolean[] }>()
-  const cache = new Map<string, Case[]>()
+  const cache = keptCases(alterationKey(plain), caches)
   const mark = (index: number, blows: string[], certain: boolean) => {
     const key = blows.toSorted().join(',')
     let entry = found.get(key)
@@ -105,11 +114,11 @@ function variants(
     blownFuses(network, studies, plain, severity, blowsAtRatingTimes * times, cache)
   const alwaysSame = (): string[] | null => {
     if (!isShort(kind.mode) || network.fuses.length === 0) return []
-    // The milder the short, the less a fuse carries: the same at both ends and between is the same throughout.
-    const some = [grid[0]!, grid[grid.length >> 1]!, grid.at(-1)!]
-    const sets = some.flatMap((severity) => [blown(severity, fuseSlack.low), blown(severity, fuseSlack.high)])
+    // The milder the short, the less a fuse carries: what the hardest blows at least, and the mildest
+    // still at most, is blown throughout.
     const key = (set: string[]) => set.toSorted().join(',')
-    return sets.every((set) => key(set) === key(sets[0]!)) ? sets[0]! : null
+    const most = blown(grid[0]!, fuseSlack.low)
+    return most.length === 0 || key(blown(grid.at(-1)!, fuseSlack.high)) === key(most) ? most : null
   }
   const same = alwaysSame()
   grid.forEach((severity, index) => {
@@ -119,8 +128,7 @@ function variants(
     mark(index, blown(severity, fuseSlack.high), false)
   })
   return [...found.values()].flatMap(({ blows, certain, possible }) => {
-    const alteration = withBlown(plain, blows.map(fuseBranch))
-    const cases = studies.map((study) => new Case(study, alteration))
+    const cases = casesAfter(studies, plain, blows, cache)
     const moved = movesOver(
       grid,
       (severity) => showsBy(cases, good, severity, showsAtVolts),

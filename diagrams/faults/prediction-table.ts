@@ -1,5 +1,5 @@
 import type { Probe } from '../document/reading-schema'
-import { noAlteration, type Alteration } from '../solver/alteration'
+import { alterationKey, noAlteration, type Alteration } from '../solver/alteration'
 import { buildNetwork } from '../solver/build-network'
 import { Case, coilVolts, elementVolts, voltsBetween, type Settled } from '../solver/case'
 import type { Network } from '../solver/network'
@@ -37,22 +37,29 @@ export interface PredictionTable {
 }
 
 export function predictAll(study: Study, hypotheses: readonly Hypothesis[], probe: Probe): PredictionTable {
+  let given = new Case(study, noAlteration)
+  let key = alterationKey(noAlteration)
+  const caseOf = (alteration: Alteration): Case => {
+    const next = alterationKey(alteration)
+    // Neighbours in the list often change the same branch.
+    if (next !== key) given = new Case(study, alteration)
+    key = next
+    return given
+  }
   return {
-    good: predictCells(study, noAlteration, [goodCell], probe)[0]!,
+    good: predictCells(given, [goodCell], probe)[0]!,
     cells: hypotheses.map((hypothesis) =>
-      predictCells(study, hypothesis.alteration(study.network), hypothesis.cells, probe),
+      predictCells(caseOf(hypothesis.alteration(study.network)), hypothesis.cells, probe),
     ),
   }
 }
 
-export function predictCells(
-  study: Study,
-  alteration: Alteration,
-  cells: readonly Cell[],
-  probe: Probe,
-): CellPrediction[] {
-  const given = new Case(study, alteration)
-  const range = alteration.weak ? weakRange : study.condition.charging ? chargingRange : restingRange
+function predictCells(given: Case, cells: readonly Cell[], probe: Probe): CellPrediction[] {
+  const range = given.alteration.weak
+    ? weakRange
+    : given.study.condition.charging
+      ? chargingRange
+      : restingRange
   const ends = new Map<number, EndStates | null>()
   const endOf = (severity: number) => {
     let found = ends.get(severity)

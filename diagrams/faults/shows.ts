@@ -53,7 +53,8 @@ export function showsBy(
   enoughVolts: number,
 ): number {
   let most = 0
-  for (let c = 0; c < cases.length; c++) {
+  // Backwards: with the controls moved more is going on than at rest.
+  for (let c = cases.length - 1; c >= 0; c--) {
     const given = cases[c]!
     const before = good[c]!
     if (!before.volts) continue

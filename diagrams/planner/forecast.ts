@@ -1,6 +1,6 @@
 import type { Probe } from '../document/reading-schema'
 import type { FaultModel } from '../faults/fault-model'
-import { noAlteration } from '../solver/alteration'
+import { alterationKey, noAlteration } from '../solver/alteration'
 import { at, branchAmps, Case, unitCurrent, voltsBetween, type Settled } from '../solver/case'
 import { deadVolts } from '../solver/constants'
 import { loadWorks } from '../solver/operating-point'
@@ -31,11 +31,15 @@ export function forecast(
   const rows = set.probes.map(() => new Float64Array(particles.length))
   const reader = new ProbeReader(study, set.probes)
   let given = new Case(study, noAlteration)
+  let key = alterationKey(noAlteration)
   let of: Particle['hypothesis'] = null
   particles.forEach((particle, p) => {
     if (particle.hypothesis !== of) {
       of = particle.hypothesis
-      given = new Case(study, of ? of.alteration(network) : noAlteration)
+      const alteration = of ? of.alteration(network) : noAlteration
+      // Neighbours in the list often change the same branch.
+      if (alterationKey(alteration) !== key) given = new Case(study, alteration)
+      key = alterationKey(alteration)
     }
     const settled = given.settle(particle.severity)
     for (let i = 0; i < rows.length; i++) rows[i]![p] = settled ? reader.read(given, settled, i) : Number.NaN

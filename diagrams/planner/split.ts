@@ -56,11 +56,14 @@ export function binsOf(kind: Probe['kind'], row: Float64Array): Bin[] {
   }
   for (let i = 0; i < shown.length; i++) {
     const value = shown[i]!
-    for (const each of bins)
-      if (value <= each.high) {
-        each.members.push(i)
-        break
-      }
+    if (Number.isNaN(value)) continue
+    let [low, high] = [0, bins.length - 1]
+    while (low < high) {
+      const middle = (low + high) >> 1
+      if (value <= bins[middle]!.high) high = middle
+      else low = middle + 1
+    }
+    bins[low]!.members.push(i)
   }
   return bins
 }

@@ -26,3 +26,8 @@ export function withBlown(alteration: Alteration, fuseBranches: readonly string[
     },
   }
 }
+
+/** The same key for alterations that change a network alike, whatever they are called. */
+export function alterationKey({ series, shunt, weak, forced }: Alteration): string {
+  return `${series.join(',')};${shunt?.join(',') ?? ''};${weak};${forced.key}`
+}

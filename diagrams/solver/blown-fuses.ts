@@ -30,19 +30,10 @@ export function blownFuses(
   cache = new Map<string, Case[]>(),
 ): string[] {
   const blown: string[] = []
-  const casesAfter = (): Case[] => {
-    const key = blown.join(',')
-    let found = cache.get(key)
-    if (!found) {
-      const after = withBlown(alteration, blown.map(fuseBranch))
-      cache.set(key, (found = studies.map((study) => new Case(study, after))))
-    }
-    return found
-  }
   for (;;) {
     let worst = limitTimes
     let worstFuse: string | null = null
-    for (const each of casesAfter()) {
+    for (const each of casesAfter(studies, alteration, blown, cache)) {
       const settled = each.settle(severity)
       const states: Settled[] = settled ? [settled] : each.passed
       for (const state of states)
@@ -57,6 +48,22 @@ export function blownFuses(
     if (worstFuse === null) return blown
     blown.push(worstFuse)
   }
+}
+
+/** Cases of every study with the fault in it and these fuses blown; kept in `cache` by the fuses. */
+export function casesAfter(
+  studies: readonly Study[],
+  alteration: Alteration,
+  blown: readonly string[],
+  cache: Map<string, Case[]>,
+): Case[] {
+  const key = blown.join(',')
+  let found = cache.get(key)
+  if (!found) {
+    const after = withBlown(alteration, blown.map(fuseBranch))
+    cache.set(key, (found = studies.map((study) => new Case(study, after))))
+  }
+  return found
 }
 
 /** Branch name of a fuse. */
