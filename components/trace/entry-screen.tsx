@@ -1,6 +1,6 @@
 'use client'
 
-import { type ReactNode, useEffect, useRef } from 'react'
+import { useEffect, useRef } from 'react'
 import type { Circuit } from '@/diagrams/document/circuit-schema'
 import type { NextReading } from '@/diagrams/faults/answer'
 import { Button } from '../ui/button'
@@ -20,7 +20,6 @@ export function EntryScreen({
   left,
   next,
   meter,
-  saved,
   onClose,
 }: {
   circuit: Circuit
@@ -30,12 +29,13 @@ export function EntryScreen({
   left: string
   next: NextReading | null
   meter: MeterWork
-  saved: ReactNode
   onClose: () => void
 }) {
   const dialog = useRef<HTMLDialogElement>(null)
   useEffect(() => {
     if (!dialog.current?.open) dialog.current?.showModal()
+    // The figure is what one came for; its field calls up no keyboard, the keys stand below.
+    dialog.current?.querySelector<HTMLElement>('[data-meter-window]')?.focus()
   }, [])
   const face = next ? connectorOf(circuit, next.red ?? '') : null
   return (
@@ -72,7 +72,6 @@ export function EntryScreen({
               </p>
             </>
           )}
-          <div className="text-small text-ink-2">{saved}</div>
           {next && !meter.setForNext && (
             <Button look="text" onClick={() => meter.act({ do: 'set-for', next })}>
               Set the meter for this

@@ -3,7 +3,7 @@ import { connectorName, parsePoint, pointName } from '@/diagrams/document/points
 import { portsOf } from '@/diagrams/document/ports'
 import { siteName } from '@/diagrams/document/sites'
 import type { NextOutcome, NextReading } from '@/diagrams/faults/answer'
-import { conditionWords } from '@/lib/client/meter/reading-words'
+import { capital, conditionWords } from '@/lib/client/meter/reading-words'
 import { shortSiteName } from './site-words'
 
 /** Where the next reading is taken, as its heading says it. */
@@ -25,8 +25,7 @@ export function nextTitle(circuit: Circuit, next: NextReading): string {
 
 /** How it is taken: "Back-probe volts to chassis. Key on, SW5 held." */
 export function nextHow(circuit: Circuit, next: NextReading): string {
-  const condition = conditionWords(circuit, next.condition)
-  const state = `${condition.charAt(0).toUpperCase()}${condition.slice(1)}.`
+  const state = `${capital(conditionWords(circuit, next.condition))}.`
   switch (next.kind) {
     case 'volts':
       return `Back-probe volts${next.black === 'chassis' ? ' to chassis' : ''}. ${state}`

@@ -20,15 +20,13 @@ export function OutcomeCards({
   /** Cards side by side, or rows under one another. */
   look: 'cards' | 'rows'
 }) {
-  const shown = outcomes
-    .toSorted((one, other) => other.probability - one.probability)
-    .slice(0, look === 'cards' ? 3 : 4)
+  const shown = outcomes.toSorted((one, other) => other.probability - one.probability).slice(0, 3)
   const between = shown.length < 3 && outcomes.some((outcome) => outcome.low !== undefined)
   return (
     <ul
       aria-label="What each outcome leaves"
       className={classNames(
-        'grid gap-2',
+        'grid grid-cols-[minmax(0,1fr)] gap-2',
         look === 'cards' && 'laptop:grid-cols-[repeat(auto-fit,minmax(7.5rem,1fr))]',
       )}
     >
@@ -76,7 +74,8 @@ function Outcome({
       aria-current={lit ? 'true' : undefined}
       data-lit={lit}
       className={classNames(
-        'flex items-center gap-x-3 gap-y-1 rounded-field px-3 py-2 transition-colors duration-press',
+        'flex items-center gap-x-3 gap-y-1 rounded-field px-3 transition-colors duration-press',
+        look === 'rows' ? 'min-h-10 py-1' : 'py-2',
         look === 'cards' && 'laptop:flex-col laptop:items-start laptop:py-1.5',
         dashed && !lit ? 'border-control border-dashed border-edge' : 'border-control',
         lit ? 'border-ink bg-ink text-on-ink' : 'border-edge bg-panel',
@@ -84,15 +83,29 @@ function Outcome({
     >
       <span
         className={classNames(
-          'w-24 flex-none text-lead leading-tight laptop:w-auto laptop:whitespace-nowrap',
+          'w-24 flex-none leading-tight laptop:w-auto laptop:whitespace-nowrap',
+          look === 'rows' ? 'whitespace-nowrap text-body font-bold' : 'text-lead',
           dashed ? '' : 'figures',
         )}
       >
         {about}
       </span>
-      <span className={classNames('min-w-0 leading-tight', look === 'rows' && 'flex flex-wrap gap-x-2')}>
-        <b className="block text-dense">{leaves}</b>
-        <span className={classNames('line-clamp-2 text-small', !lit && 'text-ink-2')}>{what}</span>
+      <span
+        className={classNames(
+          'min-w-0 leading-tight',
+          look === 'rows' && 'flex flex-1 items-baseline gap-x-2',
+        )}
+      >
+        <b className="block flex-none text-dense">{leaves}</b>
+        <span
+          className={classNames(
+            'text-small',
+            look === 'rows' ? 'truncate' : 'line-clamp-2',
+            !lit && 'text-ink-2',
+          )}
+        >
+          {what}
+        </span>
       </span>
     </li>
   )

@@ -1,12 +1,11 @@
 'use client'
 
-import type { ReactNode } from 'react'
 import { Button } from '../ui/button'
 import { EntryScreen } from './entry-screen'
 import type { TraceSession } from './use-trace-session'
 
 /** On a phone: the button at the foot, and the whole screen that it opens for one reading. */
-export function PhoneEntry({ session, saved }: { session: TraceSession; saved: ReactNode }) {
+export function PhoneEntry({ session }: { session: TraceSession }) {
   const { circuit, counts, started, next, meter } = session
   const { red, wire, node } = meter.state
   const left = !counts
@@ -37,7 +36,6 @@ export function PhoneEntry({ session, saved }: { session: TraceSession; saved: R
           left={left}
           next={next}
           meter={meter}
-          saved={saved}
           onClose={() => session.setEntering(false)}
         />
       )}

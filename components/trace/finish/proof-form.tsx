@@ -5,7 +5,13 @@ import type { Circuit } from '@/diagrams/document/circuit-schema'
 import type { Reading } from '@/diagrams/document/reading-schema'
 import { cleanText } from '@/lib/client/meter/meter-state'
 import { readingFrom } from '@/lib/client/meter/reading-from'
-import { conditionWords, measuredWords, unitWords, valueWords } from '@/lib/client/meter/reading-words'
+import {
+  capital,
+  conditionWords,
+  measuredWords,
+  unitWords,
+  valueWords,
+} from '@/lib/client/meter/reading-words'
 import { doubtTyped, typedValue } from '@/lib/client/meter/typed-value'
 import { newId } from '@/lib/client/new-id'
 import type { PutProof } from '@/lib/shared/api/traces'
@@ -84,8 +90,9 @@ export function ProofForm({
         </FieldBox>
       )}
       <p>
-        <b>{measuredWords(circuit, chosen.probe)}</b>. {conditionWords(circuit, chosen.probe.condition)}. A
-        good circuit shows <b className="figures">{valueWords(kind, chosen.good)}</b>.
+        <b>{measuredWords(circuit, chosen.probe)}</b>.{' '}
+        {capital(conditionWords(circuit, chosen.probe.condition))}. A good circuit shows{' '}
+        <b className="figures">{valueWords(kind, chosen.good)}</b>.
       </p>
       {looks ? (
         <Choice

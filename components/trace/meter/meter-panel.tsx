@@ -133,8 +133,17 @@ export function MeterPanel({
         </div>
       )}
       {refusal && (
-        <div id={messageId} role="alert" className="-mt-1 flex flex-wrap items-center gap-x-3 laptop:order-2">
+        <div
+          id={messageId}
+          role="alert"
+          className="-mt-1 flex items-center gap-x-3 *:flex-none *:first:flex-1 laptop:order-2"
+        >
           <FieldMessage id={`${messageId}-text`}>{refusal.message}</FieldMessage>
+          {state.kind === 'ohms' && state.condition.battery && (
+            <Button look="text" onClick={() => act({ do: 'battery', connected: false })}>
+              Battery off
+            </Button>
+          )}
           {refusal.meant !== null && (
             <Button look="text" onClick={() => act({ do: 'type', text: refusal.meant ?? '' })}>
               Use {refusal.meant}

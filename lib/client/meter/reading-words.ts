@@ -69,3 +69,8 @@ export function measuredWords(
   if (reading.node !== undefined) return siteName(circuit, `part:${reading.node}`)
   return reading.pin === undefined ? '' : pointName(circuit, reading.pin)
 }
+
+/** Words that stand at the head of a sentence. */
+export function capital(words: string): string {
+  return words.charAt(0).toUpperCase() + words.slice(1)
+}
