@@ -3,6 +3,7 @@
 import { useEffect, useRef } from 'react'
 import type { Circuit } from '@/diagrams/document/circuit-schema'
 import type { NextReading } from '@/diagrams/faults/answer'
+import { capital } from '@/lib/client/meter/reading-words'
 import { Button } from '../ui/button'
 import { Chevron } from '../ui/glyphs'
 import { Plate } from '../ui/plate'
@@ -66,9 +67,8 @@ export function EntryScreen({
           {next && (
             <>
               <h2 className="text-title">{nextTitle(circuit, next)}</h2>
-              <p className="text-small leading-tight text-ink-2">
-                {face?.location ? `${face.location}. ` : ''}
-                {nextHow(circuit, next)}
+              <p className="line-clamp-2 text-small leading-tight text-ink-2">
+                {nextHow(circuit, next)} {face?.location ? capital(face.location) : ''}
               </p>
             </>
           )}

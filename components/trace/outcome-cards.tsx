@@ -20,7 +20,12 @@ export function OutcomeCards({
   /** Cards side by side, or rows under one another. */
   look: 'cards' | 'rows'
 }) {
-  const shown = outcomes.toSorted((one, other) => other.probability - one.probability).slice(0, 3)
+  const likeliest = outcomes.toSorted((one, other) => other.probability - one.probability)
+  const room = look === 'cards' ? 3 : 2
+  // The one that is lit is always among those shown.
+  const shown = likeliest.filter(
+    (outcome, rank) => outcome === lit || rank < room - (lit && likeliest.indexOf(lit) >= room ? 1 : 0),
+  )
   const between = shown.length < 3 && outcomes.some((outcome) => outcome.low !== undefined)
   return (
     <ul
