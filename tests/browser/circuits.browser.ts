@@ -1,6 +1,6 @@
 import { readFile } from 'node:fs/promises'
 import AxeBuilder from '@axe-core/playwright'
-import type { Page } from 'playwright-core'
+import type { BrowserContext, Page } from 'playwright-core'
 import { describe, expect, it } from 'vitest'
 import { openCircuit } from '@/diagrams/document/open-circuit'
 import { lampRequestLine } from '@/diagrams/samples/lamp-request-line'
@@ -128,4 +128,38 @@ describe('the library of a shop', () => {
       await context.close()
     },
   )
+
+  it('answers 404 where a circuit or a trace is unknown or belongs to somebody else', async () => {
+    const read = async (context: BrowserContext, path: string) => (await context.request.get(path)).json()
+    const school = await visitAs('bo@marlstreet.example')
+    const foreign = (await read(school.context, '/api/v1/circuits')).rows[0].circuitId
+    await school.context.close()
+    const { context } = await visitAs('noor@alderlane.example')
+    const { id: trace, circuitId: circuit } = (await read(context, '/api/v1/traces')).rows[0]
+    const other = (await read(context, '/api/v1/circuits')).rows
+      .map((row: { circuitId: string }) => row.circuitId)
+      .find((id: string) => id !== circuit)
+    const nowhere = '0d0e0000-0000-4000-8000-00000000ffff'
+    const status = async (path: string) => [path, (await context.request.get(path)).status()]
+    for (const path of [
+      `/circuits/${circuit}`,
+      `/circuits/${circuit}/trace`,
+      `/circuits/${circuit}/traces/${trace}`,
+    ])
+      expect(await status(path)).toEqual([path, 200])
+    for (const id of [foreign, nowhere, 'nowhere', '%00'])
+      for (const path of [`/circuits/${id}`, `/circuits/${id}/trace`, `/circuits/${id}/traces/${trace}`])
+        expect(await status(path)).toEqual([path, 404])
+    for (const path of [
+      `/circuits/${circuit}/traces/${nowhere}`,
+      `/circuits/${circuit}/traces/nothing`,
+      `/circuits/${other}/traces/${trace}`,
+    ])
+      expect(await status(path)).toEqual([path, 404])
+    await context.close()
+    const student = await visitAs('piet@alderlane.example')
+    const theirs = `/circuits/${circuit}/traces/${trace}`
+    expect((await student.context.request.get(theirs)).status()).toBe(404)
+    await student.context.close()
+  })
 })
