@@ -34,11 +34,20 @@ export const errors = {
   'too-large': { status: 413, sentence: 'The request is larger than 2 MB and was refused.' },
   'not-json': { status: 415, sentence: 'Send the request as JSON (content type application/json).' },
   'reading-refused': { status: 422, sentence: 'This reading cannot be taken in this condition.' },
+  'evaluation-too-long': {
+    status: 422,
+    sentence:
+      'This circuit takes longer than 30 seconds to evaluate here. Send the part of it that the fault can lie in.',
+  },
   'too-many-attempts': {
     status: 429,
     sentence: 'Too many attempts to sign in. Wait a quarter of an hour and try again.',
   },
   unexpected: { status: 500, sentence: 'Something went wrong on the server. Nothing was changed.' },
+  'evaluator-busy': {
+    status: 503,
+    sentence: 'Others are waiting for the evaluator already. Try again in a minute.',
+  },
   'database-away': {
     status: 503,
     sentence: 'The database cannot be reached. Nothing was changed; what you typed is still here. Try again.',

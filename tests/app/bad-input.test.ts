@@ -162,4 +162,27 @@ describe('bad input', () => {
       204,
     )
   })
+
+  it('nested without end is refused before anybody walks through it', async () => {
+    const raw = `{"document":${'['.repeat(100_000)}${']'.repeat(100_000)}}`
+    for (const [method, address] of [
+      ['POST', 'circuits'],
+      ['POST', 'evaluations'],
+      ['POST', 'traces'],
+      ['PUT', `circuits/${circuit.id}`],
+      ['PUT', `traces/${traceId}/readings/r1`],
+    ] as const) {
+      const answer = await call(who, method, address, undefined, { raw })
+      expect([address, answer.status, answer.body.error.message]).toEqual([
+        address,
+        400,
+        'The body is nested more than 64 levels deep.',
+      ])
+    }
+  })
+
+  it('in a reading is named with its value, as in a document', async () => {
+    const answer = await call(who, 'PUT', `traces/${traceId}/readings/r1`, { ...reading, value: 'much' })
+    refuses(answer, 422, 'value', 'value: "much": expected a number or "OL"')
+  })
 })

@@ -1,6 +1,8 @@
 import { fail, type Result, succeed } from '@/lib/shared/result'
 
 export const mostBodyBytes = 2 * 1024 * 1024
+/** Far more than any document needs; what nests without end would exhaust the stack of whoever walks through it. */
+const mostLevels = 64
 
 /** The JSON body. One over 2 MB is refused at the byte that is too many, without reading on. */
 export async function readJsonBody(request: Request): Promise<Result<unknown>> {
@@ -20,10 +22,18 @@ export async function readJsonBody(request: Request): Promise<Result<unknown>> {
     }
     chunks.push(value)
   }
+  let value: unknown
   try {
-    const text = new TextDecoder('utf-8', { fatal: true }).decode(Buffer.concat(chunks))
-    return succeed(JSON.parse(text) as unknown)
+    value = JSON.parse(new TextDecoder('utf-8', { fatal: true }).decode(Buffer.concat(chunks)))
   } catch {
     return fail('bad-request', { message: 'The body is not JSON.' })
   }
+  if (nestsDeeper(value, mostLevels))
+    return fail('bad-request', { message: `The body is nested more than ${mostLevels} levels deep.` })
+  return succeed(value)
+}
+
+function nestsDeeper(value: unknown, levels: number): boolean {
+  if (typeof value !== 'object' || value === null) return false
+  return levels === 0 || Object.values(value).some((inner) => nestsDeeper(inner, levels - 1))
 }

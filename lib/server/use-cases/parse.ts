@@ -11,7 +11,7 @@ export function parseInput<T extends z.ZodType>(schema: T, input: unknown): Resu
       path: text,
       message: `${text || 'the request'}: holds a character that is no text (NUL or half a pair)`,
     })
-  const parsed = schema.safeParse(input)
+  const parsed = schema.safeParse(input, { reportInput: true })
   return parsed.success ? succeed(parsed.data) : invalid(problemsOf(parsed.error))
 }
 

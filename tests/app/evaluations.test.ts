@@ -1,0 +1,52 @@
+import { monitorEventLoopDelay } from 'node:perf_hooks'
+import { beforeAll, describe, expect, it } from 'vitest'
+import type { Tables } from '@/db/tables/database'
+import { evaluateApart } from '@/lib/server/evaluator/evaluate-apart'
+import { evaluateRequest } from '@/lib/server/use-cases/evaluations/evaluate-request'
+import { withDatabase } from '../support/database'
+import { randomCircuit } from '../support/random-circuit'
+import { call } from './support/call'
+import { exampleRequest } from './support/example'
+import { makeShop, type Person } from './support/shop'
+
+describe('the evaluator behind the address', () => {
+  const database = withDatabase<Tables>()
+  let who: Person
+
+  beforeAll(async () => {
+    who = (await makeShop(database, 'Alder Lane')).people.technician
+    // The thread is started by the first question.
+    await evaluateRequest(who.context, exampleRequest())
+  })
+
+  it('answers the example of the format page', async () => {
+    const answer = await call(who, 'POST', 'evaluations', exampleRequest())
+    expect([answer.status, answer.body.outcome, answer.body.sites[0].site]).toEqual([
+      200,
+      'located',
+      'wire:w5',
+    ])
+  })
+
+  it('holds up nobody while it works on a circuit that is too much for it, and says so', async () => {
+    const request = { circuit: randomCircuit(3, 60) }
+    const delay = monitorEventLoopDelay({ resolution: 10 })
+    delay.enable()
+    const result = await evaluateRequest(who.context, request, { milliseconds: 1500 })
+    delay.disable()
+    expect(result.ok ? '' : result.failure.code).toBe('evaluation-too-long')
+    expect(delay.max / 1e6).toBeLessThan(700)
+    const next = await call(who, 'POST', 'evaluations', exampleRequest())
+    expect([next.status, next.body.outcome]).toEqual([200, 'located'])
+  })
+
+  it('answers questions asked at once in their order, and turns away what it cannot keep waiting', async () => {
+    const replies = await Promise.all(Array.from({ length: 12 }, () => evaluateApart({ circuit: 5 }, 5000)))
+    const busy = replies.filter((reply) => reply === 'busy')
+    expect(busy.length).toBe(4)
+    expect(replies[0]).toEqual({
+      ok: false,
+      problems: [{ path: 'circuit', message: '5: expected an object' }],
+    })
+  })
+})
