@@ -3,11 +3,11 @@ import { neighbourWires, sitesOf, type Mode } from '../document/sites'
 import { alterationKey, withBlown, type Alteration } from '../solver/alteration'
 import { blownFuses, casesAfter, drivingStudies, fuseBranch } from '../solver/blown-fuses'
 import type { Case } from '../solver/case'
-import { blowsAtRatingTimes } from '../solver/constants'
 import { alterationOf, isShort, type FaultKind } from '../solver/fault-alteration'
 import type { Network } from '../solver/network'
 import type { Study } from '../solver/study'
 import { goodShow, showsBy, type Show } from './shows'
+import { possibleBlown } from './possible-blown'
 import { severityGrid } from './severity-grid'
 
 /** A stretch of severities of one hypothesis, between two solved ones. */
@@ -36,8 +36,6 @@ export interface Hypothesis {
 const showsAtVolts = 0.4
 /** For clearing a site a little less is enough: tolerances may add what is missing. */
 const nearlyShowsAtVolts = 0.3
-/** Battery and tolerances move the current through a fuse by less than this either way. */
-const fuseSlack = { low: 0.88, high: 1.14 }
 
 /** Every hypothesis of a circuit that would show. Nothing else counts as a fault. */
 export function hypothesesOf(circuit: Circuit, network: Network): Hypothesis[] {
@@ -110,22 +108,20 @@ function variants(
     entry.possible[index] = true
     if (certain) entry.certain[index] = true
   }
-  const blown = (severity: number, times: number) =>
-    blownFuses(network, studies, plain, severity, blowsAtRatingTimes * times, cache)
+  const possible = (severity: number) => possibleBlown(network, studies, plain, severity, cache)
   const alwaysSame = (): string[] | null => {
     if (!isShort(kind.mode) || network.fuses.length === 0) return []
-    // The milder the short, the less a fuse carries: what the hardest blows at least, and the mildest
-    // still at most, is blown throughout.
-    const key = (set: string[]) => set.toSorted().join(',')
-    const most = blown(grid[0]!, fuseSlack.low)
-    return most.length === 0 || key(blown(grid.at(-1)!, fuseSlack.high)) === key(most) ? most : null
+    // The milder the short, the less a fuse carries: what the hardest and the mildest both blow for
+    // certain is blown throughout.
+    const [hardest, mildest] = [possible(grid[0]!), possible(grid.at(-1)!)]
+    const key = (sets: string[][]) => sets.map((set) => set.toSorted().join(',')).join('|')
+    return hardest.length === 1 && key(hardest) === key(mildest) ? hardest[0]! : null
   }
   const same = alwaysSame()
   grid.forEach((severity, index) => {
     if (same) return mark(index, same, true)
-    mark(index, blown(severity, 1), true)
-    mark(index, blown(severity, fuseSlack.low), false)
-    mark(index, blown(severity, fuseSlack.high), false)
+    mark(index, blownFuses(network, studies, plain, severity, cache), true)
+    for (const blows of possible(severity)) mark(index, blows, false)
   })
   return [...found.values()].flatMap(({ blows, certain, possible }) => {
     const cases = casesAfter(studies, plain, blows, cache)

@@ -23,8 +23,8 @@ export interface CellPrediction {
 }
 
 /** Relays and modules are looked at a little eager and a little reluctant: all that tolerances can do to them. */
-const eager = 0.89
-const reluctant = 1.12
+export const eager = 0.89
+export const reluctant = 1.12
 
 /** The good circuit as a hypothesis with one cell. */
 export const goodCell: Cell = { low: 0, high: 0, share: 1 }
@@ -108,24 +108,48 @@ interface EndStates {
   possible: Map<string, States>
 }
 
+/** Parts that may be in either state are tried in every combination; with more of them nothing is foretold. */
+const mostDoubtful = 4
+
 function settleEnd(given: Case, severity: number, range: ScaleRange): EndStates | null {
   const settled = given.settle(severity)
   if (!settled) return null
   const possible = new Map([[stateKey(settled.states), settled.states]])
   const { relays, modules, diodes } = given.study.network
-  if (
-    relays.length + modules.length + diodes.length > 0 &&
-    !given.passed.every((state) => isCertain(given, state))
-  )
-    for (const [scale, reluctance] of [
-      [range.high, eager],
-      [range.low, reluctant],
-    ] as const) {
-      const other = given.settle(severity, scale, reluctance)
-      if (!other) return null
-      possible.set(stateKey(other.states), other.states)
-    }
+  if (relays.length + modules.length + diodes.length === 0) return { settled, possible }
+  if (given.passed.every((state) => isCertain(given, state))) return { settled, possible }
+  const found: States[] = [settled.states]
+  for (const [scale, reluctance] of [
+    [range.high, eager],
+    [range.low, reluctant],
+  ] as const) {
+    const other = given.settle(severity, scale, reluctance)
+    if (!other) return null
+    found.push(other.states)
+    possible.set(stateKey(other.states), other.states)
+  }
+  const mixtures = combinations(found)
+  if (mixtures === null) return null
+  for (const held of mixtures) {
+    const solved = given.settleDiodes(held, severity, given.scaleFor(severity))
+    if (solved) possible.set(stateKey(solved.states), solved.states)
+  }
   return { settled, possible }
+}
+
+/** Every mixture of relays and modules that the given states disagree on; null when there are too many. */
+function combinations(states: readonly States[]): States[] | null {
+  const [first] = states as [States]
+  let all: States[] = [first]
+  let doubtful = 0
+  for (const kind of ['relays', 'modules'] as const)
+    first[kind].forEach((on, i) => {
+      if (states.every((state) => state[kind][i] === on)) return
+      doubtful++
+      if (doubtful > mostDoubtful) return
+      all = all.flatMap((state) => [state, { ...state, [kind]: state[kind].with(i, !on) }])
+    })
+  return doubtful > mostDoubtful ? null : all
 }
 
 /**

@@ -18,7 +18,7 @@ export function drivingStudies(network: Network): Study[] {
 
 /**
  * The fuses that a short has blown, most overloaded first: in any combination of controls more than
- * `limitTimes` the rating (1.35) goes through, states of a chattering relay counted. Node ids.
+ * 1.35 times the rating goes through, states of a chattering relay counted. Node ids.
  * `cache` may be shared between severities of the same alteration.
  */
 export function blownFuses(
@@ -26,12 +26,11 @@ export function blownFuses(
   studies: readonly Study[],
   alteration: Alteration,
   severity: number,
-  limitTimes = blowsAtRatingTimes,
   cache = new Map<string, Case[]>(),
 ): string[] {
   const blown: string[] = []
   for (;;) {
-    let worst = limitTimes
+    let worst = blowsAtRatingTimes
     let worstFuse: string | null = null
     for (const each of casesAfter(studies, alteration, blown, cache)) {
       const settled = each.settle(severity)

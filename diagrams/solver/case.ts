@@ -127,7 +127,7 @@ export class Case {
    * that contradicts itself until none does (Murty, Note on a Bard-type scheme for solving the
    * complementarity problem, Opsearch 11, 1974).
    */
-  private settleDiodes(states: States, severity: number, scale: number): Settled | null {
+  settleDiodes(states: States, severity: number, scale: number): Settled | null {
     const { diodes } = this.study.network
     let solved = this.solve(states, severity, scale)
     for (let round = 0; diodes.length > 0; round++) {

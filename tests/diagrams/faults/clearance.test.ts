@@ -11,6 +11,7 @@ import { samples } from '@/diagrams/samples/all-samples'
 import { perturbCircuit } from '../../support/perturbed-circuit'
 import { plantFault } from '../../support/plant-fault'
 import { seededRandom } from '../../support/random'
+import { randomCircuit } from '../../support/random-circuit'
 import { shows, takeReading } from '../../support/take-reading'
 
 const rounds = Number(process.env.CLEARANCE_ROUNDS ?? 1)
@@ -56,6 +57,17 @@ function wronglyCleared(circuit: Circuit, seed: number, corners: boolean): { run
 }
 
 describe('the one rule: proved good', () => {
+  it('never clears the true place of a random harness either', () => {
+    const found = Array.from({ length: 6 * rounds }, (_, i) =>
+      wronglyCleared(randomCircuit(4000 + i, 3), 300 + i, i % 2 === 1),
+    )
+    const runs = found.reduce((sum, each) => sum + each.runs, 0)
+    const wrong = found.flatMap((each) => each.wrong)
+    console.log(`random harnesses: wrongly cleared ${wrong.length} of ${runs}`)
+    expect(runs).toBeGreaterThan(300)
+    expect(wrong).toEqual([])
+  }, 240_000)
+
   for (const [index, circuit] of samples.entries())
     it(`never clears the true place of ${circuit.title}, whatever legal readings are taken inside their limits`, () => {
       const even = wronglyCleared(circuit, 100 + index, false)
