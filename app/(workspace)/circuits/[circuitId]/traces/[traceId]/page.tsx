@@ -1,6 +1,8 @@
 import type { Metadata } from 'next'
 import { notFound, redirect } from 'next/navigation'
 import { TraceScreen } from '@/components/trace/trace-screen'
+import { InBrowser } from '@/components/shell/in-browser'
+import { SheetWaiting } from '@/components/shell/sheet-waiting'
 import { currentContext } from '@/lib/server/http/session'
 import { getTrace } from '@/lib/server/use-cases/traces/get-trace'
 
@@ -20,5 +22,9 @@ export default async function TracePage({
   const found = await getTrace(context, { id: traceId })
   // The address names both: a trace under a circuit that is not its own is not there.
   if (!found.ok || found.value.circuit.id !== circuitId) notFound()
-  return <TraceScreen initial={found.value} />
+  return (
+    <InBrowser waiting={<SheetWaiting label="Drawing the circuit" />}>
+      <TraceScreen initial={found.value} />
+    </InBrowser>
+  )
 }
