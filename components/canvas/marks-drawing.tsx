@@ -6,7 +6,7 @@ import { drawNotes } from '@/diagrams/drawing/drawn-notes'
 import { shortTail } from '@/diagrams/drawing/short-tail'
 import { verdictGlyph } from '@/diagrams/drawing/verdict-mark'
 import { Primitives } from './primitives'
-import type { PlacedMark, Scene } from './scene'
+import type { Scene } from './scene'
 import { WireLabelDrawing } from './wire-drawing'
 
 /** Under this size of the sheet only picked wires and those in question keep their labels. */
@@ -19,7 +19,6 @@ const labelsFrom = 0.7
 export const MarksDrawing = memo(function MarksDrawing({ scene, zoom = 1 }: { scene: Scene; zoom?: number }) {
   const { verdicts, wireAmps, tails } = scene.overlay
   const wires = [...scene.wires.values()]
-  const manyLeft = scene.marks.filter((mark) => mark.verdict === 'in-question').length > 12
   return (
     <g>
       {wires
@@ -41,11 +40,9 @@ export const MarksDrawing = memo(function MarksDrawing({ scene, zoom = 1 }: { sc
         <Primitives key={tail.wire} of={shortTail(scene.circuit, tail)} />
       ))}
       <Primitives of={drawNotes(scene.circuit)} />
-      {scene.marks
-        .filter((mark) => hasGlyph(mark, manyLeft))
-        .map((mark) => (
-          <Primitives key={mark.site} of={verdictGlyph(mark.verdict, mark.glyph)} />
-        ))}
+      {scene.glyphs.map((mark) => (
+        <Primitives key={mark.site} of={verdictGlyph(mark.verdict, mark.glyph)} />
+      ))}
       {scene.plates.map((plate) => (
         <Primitives key={plate.point} of={plate.primitives} />
       ))}
@@ -55,14 +52,3 @@ export const MarksDrawing = memo(function MarksDrawing({ scene, zoom = 1 }: { sc
     </g>
   )
 })
-
-/**
- * Rails, rungs and rings say it for wires and contacts: a glyph on each would hide the drawing. So a tick goes on parts
- * only, and while much is left a question mark goes on parts only, too.
- */
-function hasGlyph({ site, verdict }: PlacedMark, manyLeft: boolean): boolean {
-  if (verdict === 'faulty') return true
-  const inner = site.startsWith('contact:') && site.includes('.')
-  if (verdict === 'proved-good') return !site.startsWith('wire:') && !site.startsWith('contact:')
-  return !inner && !site.startsWith('pin:') && !(manyLeft && site.startsWith('wire:'))
-}

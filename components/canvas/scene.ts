@@ -5,7 +5,7 @@ import type { Overlay } from '@/diagrams/drawing/overlay'
 import { type PartState, partState } from '@/diagrams/drawing/part-state'
 import { type Box, grow, type Place } from '@/diagrams/drawing/primitive'
 import { type PlacedFlag, readingFlags } from '@/diagrams/drawing/reading-flag'
-import { type PlaceMark, placeMark } from '@/diagrams/drawing/verdict-mark'
+import { glyphBox, type PlaceMark, placeMark } from '@/diagrams/drawing/verdict-mark'
 import { type VoltsPlate, voltsPlates } from '@/diagrams/drawing/volts-plate'
 import { wireRoute } from '@/diagrams/drawing/wire-route'
 import type { VerdictMark } from '@/diagrams/drawing/wire-stroke'
@@ -27,6 +27,8 @@ export interface Scene {
   nodes: ReadonlyMap<string, Node>
   states: ReadonlyMap<string, PartState>
   marks: readonly PlacedMark[]
+  /** The marks that carry a glyph. */
+  glyphs: readonly PlacedMark[]
   flags: readonly PlacedFlag[]
   plates: readonly VoltsPlate[]
   /** A wire that is picked. */
@@ -43,23 +45,24 @@ export function buildScene(circuit: Circuit, overlay: Overlay, picked: string | 
     const mark = placeMark(circuit, site)
     return mark ? [{ ...mark, site, verdict, ...ringOwner(circuit, site) }] : []
   })
-  const flags = readingFlags(circuit, overlay.flags ?? [], taken)
+  const manyLeft = marks.filter((mark) => mark.verdict === 'in-question').length > 12
+  const shown = marks.filter((mark) => hasGlyph(mark, manyLeft))
+  const glyphs = shown.map((mark) => glyphBox(mark.verdict, mark.glyph))
+  const flags = readingFlags(circuit, overlay.flags ?? [], [...taken, ...glyphs])
   const plates = voltsPlates(circuit, overlay.volts ?? new Map(), [
     ...taken,
     ...flags.map((flag) => flag.box),
+    ...glyphs,
   ])
   const moment = overlay.moment ?? { positions: {}, unplugged: [] }
   return {
     circuit,
     overlay,
-    wires: drawWires(
-      circuit,
-      verdicts,
-      [...flags, ...plates].map((one) => grow(one.box, 2)),
-    ),
+    wires: drawWires(circuit, verdicts, [...[...flags, ...plates].map((one) => grow(one.box, 2)), ...glyphs]),
     nodes: new Map(circuit.nodes.map((node) => [node.id, node])),
     states: new Map(circuit.nodes.map((node) => [node.id, partState(circuit, node, moment)])),
     marks,
+    glyphs: shown,
     flags,
     plates,
     picked,
@@ -84,4 +87,15 @@ function runBoxes(routes: readonly Place[][]): Box[] {
       return grow({ x, y, width: Math.abs(from.x - to.x), height: Math.abs(from.y - to.y) }, 6)
     }),
   )
+}
+
+/**
+ * Rails, rungs and rings say it for wires and contacts: a glyph on each would hide the drawing. So a tick goes on parts
+ * only, and while much is left a question mark goes on parts only, too.
+ */
+function hasGlyph({ site, verdict }: PlacedMark, manyLeft: boolean): boolean {
+  if (verdict === 'faulty') return true
+  const inner = site.startsWith('contact:') && site.includes('.')
+  if (verdict === 'proved-good') return !site.startsWith('wire:') && !site.startsWith('contact:')
+  return !inner && !site.startsWith('pin:') && !(manyLeft && site.startsWith('wire:'))
 }

@@ -8,12 +8,12 @@ import type { Overlay } from './overlay'
 import { partLabels } from './part-label'
 import { partState, type Moment } from './part-state'
 import { partSymbol } from './part-symbol'
-import { grow, type Box, type Primitive } from './primitive'
+import { grow, type Box, type Place, type Primitive } from './primitive'
 import { readingFlags } from './reading-flag'
 import { shortTail } from './short-tail'
 import { escapeXml, primitivesToSvg } from './svg-text'
 import { darkInks, lightInks } from './theme-inks'
-import { isInside, placeMark, ringStrokes, verdictGlyph } from './verdict-mark'
+import { glyphBox, isInside, placeMark, ringStrokes, verdictGlyph } from './verdict-mark'
 import { voltsPlates } from './volts-plate'
 import { wireLabelSize } from './wire-label'
 import { wireStack, type VerdictMark } from './wire-stroke'
@@ -59,20 +59,19 @@ export function circuitPrimitives(circuit: Circuit, overlay: Overlay): Primitive
   const moment: Moment = overlay.moment ?? { positions: {}, unplugged: [] }
   const obstacles = labelObstacles(circuit)
   const bare = [...drawWires(circuit, verdicts).values()]
-  const flags = readingFlags(circuit, overlay.flags ?? [], [...obstacles, ...runBoxes(bare)])
-  // Labels give way to flags; the plates take what is left.
+  const marks = glyphPlaces(circuit, verdicts)
+  const glyphs = marks.map(({ verdict, at }) => glyphBox(verdict, at))
+  const flags = readingFlags(circuit, overlay.flags ?? [], [...obstacles, ...glyphs, ...runBoxes(bare)])
+  // Labels give way to flags and glyphs; the plates take what is left.
   const wires = [
-    ...drawWires(
-      circuit,
-      verdicts,
-      flags.map((flag) => grow(flag.box, 2)),
-    ).values(),
+    ...drawWires(circuit, verdicts, [...flags.map((flag) => grow(flag.box, 2)), ...glyphs]).values(),
   ]
   const plates = voltsPlates(circuit, overlay.volts ?? new Map(), [
     ...obstacles,
     ...runBoxes(bare),
     ...wires.flatMap(({ label }) => (label ? [label.plate] : [])),
     ...flags.map((flag) => flag.box),
+    ...glyphs,
   ])
   return [
     ...connectorOutlines(circuit).flatMap((outline) => outline.primitives),
@@ -91,7 +90,7 @@ export function circuitPrimitives(circuit: Circuit, overlay: Overlay): Primitive
       currentChevrons(route, wire.mm2, overlay.wireAmps?.get(wire.id) ?? 0, crossings),
     ),
     ...drawNotes(circuit),
-    ...glyphs(circuit, verdicts),
+    ...marks.flatMap(({ verdict, at }) => verdictGlyph(verdict, at)),
     ...plates.flatMap((plate) => plate.primitives),
     ...flags.flatMap((flag) => flag.primitives),
   ]
@@ -138,12 +137,15 @@ function rings(circuit: Circuit, verdicts: ReadonlyMap<string, VerdictMark>, ins
 }
 
 /** Glyphs where they can be told apart: on faulty and in-question places; a tick for what is proved good. */
-function glyphs(circuit: Circuit, verdicts: ReadonlyMap<string, VerdictMark>): Primitive[] {
+function glyphPlaces(
+  circuit: Circuit,
+  verdicts: ReadonlyMap<string, VerdictMark>,
+): { verdict: VerdictMark; at: Place }[] {
   return [...verdicts].flatMap(([site, verdict]) => {
     // Rails and rings say it for wires and contacts: a tick on each would hide the drawing.
     if (verdict === 'proved-good' && (site.startsWith('wire:') || site.startsWith('contact:'))) return []
     const mark = placeMark(circuit, site)
-    return mark ? verdictGlyph(verdict, mark.glyph) : []
+    return mark ? [{ verdict, at: mark.glyph }] : []
   })
 }
 

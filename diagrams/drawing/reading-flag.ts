@@ -43,8 +43,8 @@ export function readingFlags(
       textWidth(flag.number, 14) + textWidth(flag.value, 14, true) + (flag.number && flag.value ? 32 : 20)
     let best: { box: Box; cost: number } | null = null
     for (const box of spots(target, width)) {
-      const cost = [...taken, ...placed.map((one) => grow(one.box, 3))].filter((other) =>
-        boxesMeet(box, other),
+      const cost = [...taken, ...placed.map((one) => grow(one.box, 3))].filter(
+        (other) => boxesMeet(box, other) || crosses(box, target, other),
       ).length
       if (!best || cost < best.cost) best = { box, cost }
       if (cost === 0) break
@@ -58,6 +58,16 @@ function spots({ x, y }: Place, width: number): Box[] {
   const box = (left: number, top: number): Box => ({ x: left, y: top, width, height: flagHeight })
   const levels = [y + 16, y - 16 - flagHeight, y + 44, y - 44 - flagHeight, y + 72, y - 72 - flagHeight]
   return levels.flatMap((top) => [box(x - width / 2, top), box(x - width + 14, top), box(x - 14, top)])
+}
+
+/** Whether a flag's pointer runs over something that does not itself hold the point it points at. */
+function crosses(flag: Box, target: Place, other: Box): boolean {
+  const top = flag.y > target.y ? target.y : flag.y + flag.height
+  const bottom = flag.y > target.y ? flag.y : target.y
+  const pointer = { x: target.x - 3, y: top, width: 6, height: bottom - top }
+  return (
+    boxesMeet(pointer, other) && !boxesMeet({ x: target.x - 1, y: target.y - 1, width: 2, height: 2 }, other)
+  )
 }
 
 function drawFlag(flag: ReadingFlag, { x, y }: Place, box: Box): Primitive[] {

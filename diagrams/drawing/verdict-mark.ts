@@ -142,6 +142,12 @@ export function ringStrokes(mark: PlaceMark, verdict: VerdictMark): Primitive[] 
   }
 }
 
+/** The square a verdict's glyph covers. */
+export function glyphBox(verdict: VerdictMark, { x, y }: Place): Box {
+  const half = { faulty: 13, 'in-question': 11, 'proved-good': 8 }[verdict]
+  return { x: x - half, y: y - half, width: 2 * half, height: 2 * half }
+}
+
 /** The verdict's glyph, centred: diamond with a cross, round with a question mark, bare tick. */
 export function verdictGlyph(verdict: VerdictMark, { x, y }: Place): Primitive[] {
   switch (verdict) {

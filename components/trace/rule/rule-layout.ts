@@ -33,7 +33,7 @@ export interface RuleLayout {
 const cellLeast = 44
 /** Narrower than this a name is cut short too early to help. */
 const cellWished = 66
-const legGap = 12
+export const legGap = 12
 const moreWidth = 96
 
 /**
@@ -108,6 +108,19 @@ export function layRule(
     more,
     moreWidth: more.length > 0 ? moreWidth : 0,
   }
+}
+
+/** How far from the rule's left end a place's cell begins. */
+export function placeOnRule(layout: RuleLayout, site: string): number | null {
+  let at = 0
+  for (const leg of layout.legs) {
+    for (const entry of leg.entries) {
+      if (entry.kind === 'cell' && entry.site === site) return at
+      at += entry.width
+    }
+    at += legGap
+  }
+  return null
 }
 
 /** Shares by probability, none under the least width: what the small ones lack is taken from the large ones. */

@@ -4,25 +4,37 @@ import { classNames } from '../../ui/class-names'
 import type { RuleCut } from './rule-cut'
 import type { RuleLegLayout } from './rule-layout'
 
-/** The notch and line where the next reading cuts, named above. */
-export function CutMark({ title }: { title: string }) {
+/** The notch and line where the next reading cuts. */
+export function CutMark() {
   return (
-    <>
-      <span className="absolute -top-6 right-full z-marks mr-2.5 whitespace-nowrap text-small font-bold [direction:rtl]">
-        <bdi>Next split: {title}</bdi>
-      </span>
-      <svg
-        width="18"
-        height="76"
-        viewBox="0 0 18 76"
-        aria-hidden="true"
-        focusable="false"
-        className="pointer-events-none absolute -left-[9px] -top-6 z-marks"
-      >
-        <path d="M1 2h16L9 16z" style={{ fill: 'var(--ink)' }} />
-        <path d="M9 12v64" style={{ stroke: 'var(--ink)', strokeWidth: 3.5 }} />
-      </svg>
-    </>
+    <svg
+      width="18"
+      height="70"
+      viewBox="0 0 18 70"
+      aria-hidden="true"
+      focusable="false"
+      className="pointer-events-none absolute -left-[9px] -top-[19px] z-marks"
+    >
+      <path d="M1 2h16L9 15z" style={{ fill: 'var(--ink)' }} />
+      <path d="M9 12v58" style={{ stroke: 'var(--ink)', strokeWidth: 3.5 }} />
+    </svg>
+  )
+}
+
+/** What the next reading is, written on the side of the notch that has more room for it. */
+export function CutTitle({ title, cutAt, width }: { title: string; cutAt: number | null; width: number }) {
+  const besideNotch = 14
+  const beyond = cutAt !== null && cutAt < width / 2
+  const style =
+    cutAt === null
+      ? { left: 0, maxWidth: '100%' }
+      : beyond
+        ? { left: cutAt + besideNotch, maxWidth: width - cutAt - besideNotch }
+        : { right: width - cutAt + besideNotch, maxWidth: cutAt - besideNotch }
+  return (
+    <p className="absolute top-0 truncate text-small leading-tight font-bold" style={style}>
+      Next split: {title}
+    </p>
   )
 }
 
@@ -75,7 +87,10 @@ function Bracket({ width, strong, children }: { width: number; strong: boolean; 
     <div style={{ width }} className="flex-none overflow-hidden px-px pt-1">
       <div className={classNames('h-1.5 border-x-2 border-b-2', strong ? 'border-ink' : 'border-line')} />
       <p
-        className={classNames('truncate text-center text-note', strong ? 'text-ink' : 'text-ink-3')}
+        className={classNames(
+          'truncate text-center text-note leading-tight',
+          strong ? 'text-ink' : 'text-ink-3',
+        )}
         title={children}
       >
         {children}

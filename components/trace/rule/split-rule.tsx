@@ -7,10 +7,10 @@ import type { Answer, NextReading } from '@/diagrams/faults/answer'
 import { Dialog } from '../../ui/dialog'
 import { VerdictGlyph, verdictWords } from '../../ui/verdict-glyph'
 import { useWidth } from '../use-width'
-import { CutMark, LegNote } from './rule-notes'
+import { CutMark, CutTitle, LegNote } from './rule-notes'
 import { ruleCut } from './rule-cut'
 import { RuleCell } from './rule-cell'
-import { layRule, type RuleEntry, type RuleLeg } from './rule-layout'
+import { layRule, legGap, placeOnRule, type RuleEntry, type RuleLeg } from './rule-layout'
 import { RuleRun } from './rule-run'
 
 /** Every place in path order: those left drawn wide, those proved good narrow, and where the next reading cuts. */
@@ -43,12 +43,12 @@ export function SplitRule({
   const cutBefore = cut ? cells[cut.after] : undefined
 
   return (
-    <div ref={box} className="relative min-w-0 flex-1 select-none pt-6 pb-1" data-testid="split-rule">
+    <div ref={box} className="relative min-w-0 flex-1 select-none pt-5" data-testid="split-rule">
       <ol aria-label="Places in path order" className="flex items-start">
         {layout.legs.map((leg, legIndex) => (
           <li
             key={leg.name}
-            style={{ width: leg.width, marginLeft: legIndex === 0 ? 0 : 12 }}
+            style={{ width: leg.width, marginLeft: legIndex === 0 ? 0 : legGap }}
             className="flex-none transition-[width] duration-rule"
           >
             <ol className="flex items-stretch">
@@ -58,7 +58,7 @@ export function SplitRule({
                   style={{ width: entry.width }}
                   className="relative flex-none transition-[width] duration-rule"
                 >
-                  {entry.kind === 'cell' && entry.site === cutBefore && <CutMark title={nextTitle} />}
+                  {entry.kind === 'cell' && entry.site === cutBefore && <CutMark />}
                   {entry.kind === 'cell' ? (
                     <RuleCell
                       circuit={circuit}
@@ -87,10 +87,12 @@ export function SplitRule({
           </li>
         )}
       </ol>
-      {places && next && !cut && answer?.outcome === 'narrowed' && (
-        <p className="absolute left-0 top-0 max-w-full truncate text-small font-bold">
-          Next split: {nextTitle}
-        </p>
+      {places && next && answer?.outcome === 'narrowed' && (
+        <CutTitle
+          title={nextTitle}
+          cutAt={cutBefore === undefined ? null : placeOnRule(layout, cutBefore)}
+          width={width}
+        />
       )}
       <Dialog open={listing} onClose={() => setListing(false)} title="Every place">
         <ul className="max-h-[60dvh] overflow-y-auto border-t border-line">
