@@ -1,5 +1,13 @@
 import { z } from 'zod'
-import { endSchema, idSchema, labelSchema, pointSchema, positiveSchema, textSchema } from './names'
+import {
+  coordinateSchema,
+  endSchema,
+  idSchema,
+  labelSchema,
+  pointSchema,
+  positiveSchema,
+  textSchema,
+} from './names'
 import { nodeSchema } from './node-schema'
 
 export const cautions = ['high-voltage', 'airbag', 'fuel', 'moving-parts', 'hot-surface'] as const
@@ -58,7 +66,7 @@ export const wireSchema = z.strictObject({
   /** Given resistance in ohm; null: computed from size and length. */
   ohms: positiveSchema.nullable().default(null),
   bends: z
-    .array(z.strictObject({ x: z.number(), y: z.number() }))
+    .array(z.strictObject({ x: coordinateSchema, y: coordinateSchema }))
     .max(200)
     .default([]),
 })
@@ -68,8 +76,8 @@ export const annotationSchema = z.strictObject({
   id: idSchema,
   kind: z.enum(['note', 'callout', 'expect']).default('note'),
   text: textSchema.default(''),
-  x: z.number().default(0),
-  y: z.number().default(0),
+  x: coordinateSchema.default(0),
+  y: coordinateSchema.default(0),
   point: pointSchema.optional(),
   controls: controlsSettingSchema.optional(),
 })

@@ -6,7 +6,9 @@ import { pointsOf } from './points'
 
 /** Position of every control: the ones named, the others at rest. */
 export function positionsIn(circuit: Circuit, setting: ControlsSetting): ControlsSetting {
-  return Object.fromEntries(circuit.controls.map((c) => [c.id, setting[c.id] ?? c.rest]))
+  // Only what was set: a control may be called like something that every object has.
+  const set = (id: string) => (Object.hasOwn(setting, id) ? setting[id] : undefined)
+  return Object.fromEntries(circuit.controls.map((c) => [c.id, set(c.id) ?? c.rest]))
 }
 
 export function holds(when: When, positions: ControlsSetting): boolean {

@@ -33,3 +33,6 @@ export const whenSchema = z.union([
 export type When = z.infer<typeof whenSchema>
 
 export const positiveSchema = z.number().positive().max(1e12)
+
+/** A place on the drawing, pixels. Bounded, so that distances and sums of them stay figures. */
+export const coordinateSchema = z.number().min(-100_000).max(100_000)

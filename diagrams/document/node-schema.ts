@@ -1,8 +1,16 @@
 import { z } from 'zod'
-import { idSchema, labelSchema, portNameSchema, positiveSchema, textSchema, whenSchema } from './names'
+import {
+  coordinateSchema,
+  idSchema,
+  labelSchema,
+  portNameSchema,
+  positiveSchema,
+  textSchema,
+  whenSchema,
+} from './names'
 import { modulePinSchema } from './pin-circuit-schema'
 
-const coordinate = z.number().min(-100_000).max(100_000).default(0)
+const coordinate = coordinateSchema.default(0)
 
 const common = {
   id: idSchema,

@@ -1,7 +1,7 @@
 import type { z } from 'zod'
 import { checkCircuit, type Problem } from './check-circuit'
 import { circuitSchema, type Circuit } from './circuit-schema'
-import { plainMessage } from './plain-message'
+import { bounded, plainMessage } from './plain-message'
 
 export type Opened<T> = { ok: true; value: T } | { ok: false; problems: Problem[] }
 
@@ -20,11 +20,11 @@ export function problemsOf(error: z.ZodError): Problem[] {
 
 function problemsOfIssue(issue: z.core.$ZodIssue, before: PropertyKey[]): Problem[] {
   const at = [...before, ...issue.path]
-  const path = at.map(String).join('.')
+  const path = at.map((piece) => bounded(String(piece))).join('.')
   if (issue.code === 'unrecognized_keys')
     return issue.keys.map((key) => ({
-      path: [...at, key].map(String).join('.'),
-      message: `unknown field "${key}"`,
+      path: [...at, bounded(key)].map(String).join('.'),
+      message: `unknown field "${bounded(key)}"`,
     }))
   if (issue.code === 'invalid_union') {
     // The branch that got furthest says what is really wrong.

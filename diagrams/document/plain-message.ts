@@ -8,7 +8,7 @@ type Issue = z.core.$ZodIssue
  * The value is known when the parse was asked to report its input.
  */
 export function plainMessage(issue: Issue): string {
-  if (!/^(Invalid|Too (small|big)|Unrecognized)\b/.test(issue.message)) return issue.message
+  if (!/^(Invalid|Too (small|big)|Unrecognized)\b/.test(issue.message)) return bounded(issue.message)
   switch (issue.code) {
     case 'invalid_type': {
       const received = /received (\w+)/.exec(issue.message)?.[1]
@@ -17,7 +17,9 @@ export function plainMessage(issue: Issue): string {
         : says(issue, `expected ${typeName(issue.expected)}`, received && typeName(received))
     }
     case 'invalid_value':
-      return says(issue, expectedOneOf(issue.values))
+      return issue.message.endsWith('received undefined') || ('input' in issue && issue.input === undefined)
+        ? `missing: ${expectedOneOf(issue.values)}`
+        : says(issue, expectedOneOf(issue.values), kindOf(issue.input))
     case 'too_small':
       return says(issue, expectedSize(issue, issue.inclusive === false ? 'more than' : 'at least'))
     case 'too_big':
@@ -29,6 +31,16 @@ export function plainMessage(issue: Issue): string {
     default:
       return issue.message
   }
+}
+
+/** Messages repeat what was sent: enough of it to be found again, not megabytes. */
+export function bounded(text: string): string {
+  return text.length <= 300 ? text : `${text.slice(0, 60)} … ${text.slice(-200)}`
+}
+
+function kindOf(value: unknown): string | undefined {
+  if (Array.isArray(value)) return 'a list'
+  return typeof value === 'object' && value !== null ? 'an object' : undefined
 }
 
 /** Value and expectation; without the value, the expectation alone. */
@@ -85,7 +97,7 @@ function unknownKind(issue: Extract<Issue, { code: 'invalid_union' }>): string {
   const expected = options.length === 0 ? '' : `: ${expectedOneOf(options)}`
   return value === undefined
     ? `${field} missing or unknown${expected}`
-    : `unknown ${field} ${shown(value) ?? ''}${expected}`
+    : `unknown ${field} ${shown(value) ?? kindOf(value) ?? 'text'}${expected}`
 }
 
 /** A value that fits none of several forms: what each would have been. */
@@ -105,5 +117,5 @@ function noForm(issue: Extract<Issue, { code: 'invalid_union' }>): string {
   )
   const expected = forms.length === 0 ? 'none of the allowed forms fits' : `expected ${forms.join(' or ')}`
   const missing = first.some((inner) => inner.message.endsWith('received undefined'))
-  return missing ? `missing: ${expected}` : says(issue, expected)
+  return missing ? `missing: ${expected}` : says(issue, expected, kindOf(issue.input))
 }

@@ -11,13 +11,18 @@ export interface Port {
   cavity: number | null
 }
 
+/** Only what was written: a port may be called like something that every object has. */
+function cavityOf(node: Node, port: string): number | undefined {
+  return node.cavities && Object.hasOwn(node.cavities, port) ? node.cavities[port] : undefined
+}
+
 /** Every port of a node, in the order the format lists them. */
 export function portsOf(node: Node): Port[] {
   const connector = node.connector ?? null
   const plain = (name: string): Port => ({
     name,
     connector,
-    cavity: node.cavities?.[name] ?? null,
+    cavity: cavityOf(node, name) ?? null,
   })
   switch (node.kind) {
     case 'battery':
@@ -54,7 +59,7 @@ export function portsOf(node: Node): Port[] {
     case 'dlc':
       return Array.from({ length: 16 }, (_, i) => ({
         ...plain(String(i + 1)),
-        cavity: node.cavities?.[String(i + 1)] ?? i + 1,
+        cavity: cavityOf(node, String(i + 1)) ?? i + 1,
       }))
   }
 }

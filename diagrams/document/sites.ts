@@ -36,21 +36,41 @@ export function neighbourWires(circuit: Circuit, wireId: string): string[] {
 /** Asked for every wire, again and again, of a document that does not change. */
 const neighboursByCircuit = new WeakMap<Circuit, Map<string, string[]>>()
 
-/**
- * Two ends lie beside each other in neighbouring cavities of one connector on the same side (an
- * inline connector has two harness sides, a part's connector one), or in neighbouring ports of a part.
- */
 function findNeighbours(circuit: Circuit): Map<string, string[]> {
   const byEnd = wiresByEnd(circuit)
   const beside = new Map<string, Set<string>>(circuit.wires.map((wire) => [wire.id, new Set()]))
-  const touch = (a: string | undefined, b: string | undefined) => {
-    for (const x of byEnd.get(a ?? '') ?? [])
-      for (const y of byEnd.get(b ?? '') ?? [])
+  for (const [a, b] of endsBeside(circuit))
+    for (const x of byEnd.get(a) ?? [])
+      for (const y of byEnd.get(b) ?? [])
         if (x !== y) {
           beside.get(x)!.add(y)
           beside.get(y)!.add(x)
         }
+  return new Map(circuit.wires.map((wire) => [wire.id, [...beside.get(wire.id)!]]))
+}
+
+/** Wires that have a neighbour at all. Which ones is not asked: where many share two ends, those are many times many. */
+function wiresWithNeighbours(circuit: Circuit, byEnd: ReadonlyMap<string, readonly string[]>): Set<string> {
+  const found = new Set<string>()
+  for (const [a, b] of endsBeside(circuit)) {
+    const [here, there] = [byEnd.get(a) ?? [], byEnd.get(b) ?? []]
+    if (here.length === 0 || there.length === 0) continue
+    // A wire from one of the two ends to the other is no neighbour of its own.
+    for (const [wires, others] of [
+      [here, there],
+      [there, here],
+    ] as const)
+      for (const wire of wires) if (others.length > 1 || others[0] !== wire) found.add(wire)
   }
+  return found
+}
+
+/**
+ * Pairs of ends that lie beside each other: in neighbouring cavities of one connector on the same side (an
+ * inline connector has two harness sides, a part's connector one), or in neighbouring ports of a part.
+ */
+function endsBeside(circuit: Circuit): [string, string][] {
+  const pairs: [string, string][] = []
   const endAt = new Map<string, string>()
   for (const node of circuit.nodes)
     for (const port of portsOf(node))
@@ -62,15 +82,15 @@ function findNeighbours(circuit: Circuit): Map<string, string[]> {
   for (const node of circuit.nodes)
     portsOf(node).forEach((port, index, ports) => {
       const end = `${node.id}.${port.name}`
-      if (port.connector !== null && port.cavity !== null)
-        touch(
-          end,
-          endAt.get(cavityKey(port.connector, node.kind === 'cavity' ? port.name : 'part', port.cavity + 1)),
-        )
+      if (port.connector !== null && port.cavity !== null) {
+        const face = node.kind === 'cavity' ? port.name : 'part'
+        const beside = endAt.get(cavityKey(port.connector, face, port.cavity + 1))
+        if (beside !== undefined) pairs.push([end, beside])
+      }
       const next = ports[index + 1]
-      if (next && node.kind !== 'cavity') touch(end, `${node.id}.${next.name}`)
+      if (next && node.kind !== 'cavity') pairs.push([end, `${node.id}.${next.name}`])
     })
-  return new Map(circuit.wires.map((wire) => [wire.id, [...beside.get(wire.id)!]]))
+  return pairs
 }
 
 function cavityKey(connector: string, face: string, cavity: number): string {
@@ -80,6 +100,7 @@ function cavityKey(connector: string, face: string, cavity: number): string {
 /** Every site of a circuit with its modes, in the order of the document. Only ports that have a wire are sites. */
 export function sitesOf(circuit: Circuit): Site[] {
   const byEnd = wiresByEnd(circuit)
+  const hasNeighbour = wiresWithNeighbours(circuit, byEnd)
   const sites: Site[] = []
   const hasSupply = circuit.nodes.some((node) => node.kind === 'battery' || node.kind === 'feed')
   for (const wire of circuit.wires)
@@ -90,7 +111,7 @@ export function sitesOf(circuit: Circuit): Site[] {
         'resistive',
         'short-to-ground',
         ...(hasSupply ? (['short-to-supply'] as const) : []),
-        ...(neighbourWires(circuit, wire.id).length > 0 ? (['short-to-wire'] as const) : []),
+        ...(hasNeighbour.has(wire.id) ? (['short-to-wire'] as const) : []),
       ],
     })
   for (const node of circuit.nodes) {

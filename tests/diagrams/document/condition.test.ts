@@ -1,5 +1,8 @@
 import { describe, expect, it } from 'vitest'
 import { conditionKey, controlCombinations, holds, positionsIn } from '@/diagrams/document/condition'
+import { openCircuit } from '@/diagrams/document/open-circuit'
+import { portsOf } from '@/diagrams/document/ports'
+import { exampleCircuit } from '@/tests/app/support/example'
 import { inCondition, madeCircuit } from '@/tests/support/made-circuit'
 
 const circuit = madeCircuit([{ id: 's', kind: 'splice' }], [], {
@@ -36,4 +39,22 @@ it('two conditions have one key when they are the same said differently', () => 
   expect(key({ controls: { key: 'on' } })).not.toBe(key({}))
   expect(key({ battery: false })).not.toBe(key({}))
   expect(key({ charging: true })).not.toBe(key({}))
+})
+
+describe('a name that every object has', () => {
+  const document = (key: string, pin: string) => {
+    const text = JSON.stringify(exampleCircuit())
+      .replaceAll('"key"', JSON.stringify(key))
+      .replaceAll('"body.12"', JSON.stringify(`body.${pin}`))
+      .replaceAll('"pin":"12"', `"pin":${JSON.stringify(pin)}`)
+    return openCircuit(JSON.parse(text))
+  }
+
+  it.each(['constructor', 'toString', 'valueOf', 'hasOwnProperty'])('may be a control’s: %s', (key) => {
+    const opened = document(key, 'constructor')
+    if (!opened.ok) throw new Error(`${opened.problems[0]?.path}: ${opened.problems[0]?.message}`)
+    expect(positionsIn(opened.value, {})).toEqual({ [key]: 'off' })
+    const body = opened.value.nodes.find((node) => node.id === 'body')!
+    expect(portsOf({ ...body, cavities: {} }).find((port) => port.name === 'constructor')?.cavity).toBeNull()
+  })
 })

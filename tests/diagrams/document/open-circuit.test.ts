@@ -308,6 +308,26 @@ describe('a field of the wrong shape is told in plain words', () => {
     ],
     ['a list for an object', (d) => (d.nodes[1] = []), 'nodes.1', 'a list: expected an object'],
     ['too small', (d) => (d.nodes[1].amps = 0), 'nodes.1.amps', '0: expected more than 0'],
+    ['no format', (d) => delete d.format, 'format', 'missing: expected "halfsplit-circuit"'],
+    ['a list for a format', (d) => (d.format = []), 'format', 'a list: expected "halfsplit-circuit"'],
+    [
+      'a list for a kind',
+      (d) => (d.nodes[1].kind = []),
+      'nodes.1.kind',
+      'unknown kind a list: expected one of "battery", "feed", "ground", "fuse", "switch", "relay", "load", "resistor", "diode", "splice", "cavity", "module", "dlc"',
+    ],
+    [
+      'a list for a time',
+      (d) => (d.nodes[2].pins[1].circuit.on = []),
+      'nodes.2.pins.1.circuit.on',
+      'a list: expected "always" or "never" or an object',
+    ],
+    [
+      'a bend out of all bounds',
+      (d) => (d.wires[0].bends = [{ x: 1e308, y: 0 }]),
+      'wires.0.bends.0.x',
+      '1e+308: expected at most 100000',
+    ],
     ['too big', (d) => (d.nodes[1].amps = 1e9), 'nodes.1.amps', '1000000000: expected at most 2000'],
     ['a resistance of nothing', (d) => (d.wires[0].ohms = 0), 'wires.0.ohms', '0: expected more than 0'],
     ['empty text', (d) => (d.title = ''), 'title', '"": expected at least 1 character'],
@@ -398,5 +418,20 @@ describe('a field of the wrong shape is told in plain words', () => {
       ok: false,
       problems: [{ path: '', message: 'null: expected an object' }],
     })
+  })
+})
+
+describe('a message', () => {
+  it('repeats no more of what was sent than finds it again', () => {
+    const long = 'i'.repeat(1_000_000)
+    for (const document of [
+      { ...example, nodes: [{ id: long, kind: 'splice' }] },
+      { ...example, [long]: 1 },
+      { ...example, sequence: [{ id: 's', controls: { [long]: 'on' } }] },
+    ]) {
+      const opened = openCircuit(document)
+      const problem = opened.ok ? undefined : opened.problems[0]
+      expect(`${problem?.path}${problem?.message}`.length).toBeLessThan(1000)
+    }
   })
 })

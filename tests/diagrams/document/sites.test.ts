@@ -1,5 +1,8 @@
 import { describe, expect, it } from 'vitest'
+import { openCircuit } from '@/diagrams/document/open-circuit'
 import { neighbourWires, siteName, sitesOf } from '@/diagrams/document/sites'
+import { samples } from '@/diagrams/samples/all-samples'
+import { randomCircuit } from '@/tests/support/random-circuit'
 import type { NodeInput } from '@/tests/support/harness-draft'
 import { madeCircuit, onOff, whenOn } from '@/tests/support/made-circuit'
 
@@ -148,5 +151,35 @@ describe('a site is named in the trade’s words', () => {
     ['part:none', 'part:none'],
   ])('%s', (id, name) => {
     expect(siteName(circuit, id)).toBe(name)
+  })
+
+  it('of thousands of wires on two ends are listed without pairing all of them', () => {
+    const count = 4000
+    const ids = Array.from({ length: count }, (_, i) => `l${i}`)
+    const opened = openCircuit({
+      format: 'halfsplit-circuit',
+      version: 1,
+      title: 'A star',
+      nodes: [{ id: 'b', kind: 'battery' }, ...ids.map((id) => ({ id, kind: 'load', ohms: 100 }))],
+      wires: ids.flatMap((id) => [
+        { id: `${id}-in`, from: 'b.pos', to: `${id}.a` },
+        { id: `${id}-out`, from: `${id}.b`, to: 'b.neg' },
+      ]),
+    })
+    if (!opened.ok) throw new Error(opened.problems[0]?.message)
+    const before = process.cpuUsage().user
+    const sites = sitesOf(opened.value)
+    expect((process.cpuUsage().user - before) / 1000).toBeLessThan(1000)
+    expect(sites.length).toBe(3 * count + 1)
+    expect(sites[0]?.modes).toContain('short-to-wire')
+  })
+
+  it('of wires can touch another wire exactly where one lies beside them', () => {
+    for (const circuit of [...samples, ...Array.from({ length: 40 }, (_, seed) => randomCircuit(seed))])
+      for (const site of sitesOf(circuit).filter(({ id }) => id.startsWith('wire:')))
+        expect([site.id, site.modes.includes('short-to-wire')]).toEqual([
+          site.id,
+          neighbourWires(circuit, site.id.slice('wire:'.length)).length > 0,
+        ])
   })
 })
