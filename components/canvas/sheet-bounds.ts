@@ -1,6 +1,6 @@
 import { labelObstacles } from '@/diagrams/drawing/drawn-wires'
 import type { Box } from '@/diagrams/drawing/primitive'
-import type { Scene } from './scene'
+import type { PlacedMark, Scene } from './scene'
 
 const marginPixels = 24
 
@@ -30,7 +30,21 @@ export function flagBounds(scene: Scene): Box | null {
 
 /** What is left: faulty places and those in question; null when nothing is marked so. */
 export function leftBounds(scene: Scene): Box | null {
-  const left = scene.marks.filter((mark) => mark.verdict !== 'proved-good')
+  return boundsOf(
+    scene,
+    scene.marks.filter((mark) => mark.verdict !== 'proved-good'),
+  )
+}
+
+/** The faulty places alone, with what stands around them; null when none is. */
+export function faultyBounds(scene: Scene): Box | null {
+  return boundsOf(
+    scene,
+    scene.marks.filter((mark) => mark.verdict === 'faulty'),
+  )
+}
+
+function boundsOf(scene: Scene, left: readonly PlacedMark[]): Box | null {
   if (left.length === 0) return null
   return unite(
     left.flatMap((mark): Box[] => {

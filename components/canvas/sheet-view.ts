@@ -1,7 +1,7 @@
 import { useCallback, useEffect, useRef } from 'react'
 import { getViewportForBounds, useReactFlow, useStoreApi } from 'reactflow'
 import type { Box } from '@/diagrams/drawing/primitive'
-import { flagBounds, leftBounds, wholeBounds } from './sheet-bounds'
+import { faultyBounds, flagBounds, leftBounds, wholeBounds } from './sheet-bounds'
 import type { Scene } from './scene'
 
 export const leastZoom = 0.15
@@ -46,6 +46,7 @@ export function useSheetView(scene: Scene, first: Fit): SheetView {
       if (width === 0 || height === 0) return
       const narrow = fit === 'auto' && width < laptopPixels
       const box: Box =
+        (narrow && width < phonePixels ? faultyBounds(latest.current) : null) ??
         (fit === 'left' || narrow ? leftBounds(latest.current) : null) ??
         (narrow && width < phonePixels ? flagBounds(latest.current) : null) ??
         wholeBounds(latest.current)

@@ -4,9 +4,9 @@ import { Button } from '../ui/button'
 import { EntryScreen } from './entry-screen'
 import type { TraceSession } from './use-trace-session'
 
-/** On a phone: the button at the foot, and the whole screen that it opens for one reading. */
-export function PhoneEntry({ session }: { session: TraceSession }) {
-  const { circuit, counts, started, next, meter } = session
+/** On a phone: what comes next at the foot, and the whole screen that it opens for one reading. */
+export function PhoneEntry({ session, onFinish }: { session: TraceSession; onFinish: () => void }) {
+  const { circuit, counts, started, located, next, meter } = session
   const { red, wire, node } = meter.state
   const left = !counts
     ? '-'
@@ -15,17 +15,22 @@ export function PhoneEntry({ session }: { session: TraceSession }) {
       : `${started ? counts.inQuestion : counts.all} in question`
   return (
     <>
-      <div className="fixed inset-x-0 bottom-0 z-rule border-t-2 border-ink bg-panel p-2.5 tablet:hidden">
+      <div className="fixed inset-x-0 bottom-0 z-rule flex gap-2 border-t-2 border-ink bg-panel p-2.5 tablet:hidden">
+        {located && (
+          <Button look="filled" size="bay" className="flex-1" onClick={onFinish}>
+            {session.work.trace.finding ? 'Prove the repair' : 'Record it'}
+          </Button>
+        )}
         <Button
-          look="filled"
+          look={located ? undefined : 'filled'}
           size="bay"
-          className="w-full"
+          className="flex-1"
           onClick={() => {
             if (next && red === null && wire === null && node === null) session.setMeterFor(next)
             session.setEntering(true)
           }}
         >
-          Take the reading
+          {located ? 'Another reading' : 'Take the reading'}
         </Button>
       </div>
       {session.entering && (

@@ -50,7 +50,13 @@ export function ReadingsList({
           </Button>
         )}
       </div>
-      <ol className="min-h-0 flex-1 overflow-y-auto border-t border-line" reversed>
+      <ol
+        aria-labelledby="readings"
+        // Scrolls, and holds nothing that a key could land on.
+        tabIndex={0}
+        className="min-h-0 flex-1 overflow-y-auto border-t border-line"
+        reversed
+      >
         {readings
           .map((reading, index) => ({ reading, number: readingNumber(index) }))
           .toReversed()

@@ -71,7 +71,7 @@ export function TraceScreen({ initial }: { initial: Trace }) {
         <TraceRule session={session} />
         <TraceTray session={session} field={field} onFinish={() => setFinishing(true)} />
       </main>
-      {!done && <PhoneEntry session={session} />}
+      {!done && <PhoneEntry session={session} onFinish={() => setFinishing(true)} />}
       <CautionsDialog
         cautions={circuit.cautions}
         answered={work.cautionsAnswered}

@@ -4,6 +4,9 @@ import { classNames } from '../../ui/class-names'
 import type { RuleCut } from './rule-cut'
 import type { RuleLegLayout } from './rule-layout'
 
+/** A bracket narrower than this would show one letter of its name; it keeps it as a tooltip. */
+const leastNotePixels = 44
+
 /** The notch and line where the next reading cuts. */
 export function CutMark() {
   return (
@@ -93,7 +96,7 @@ function Bracket({ width, strong, children }: { width: number; strong: boolean; 
         )}
         title={children}
       >
-        {children}
+        {width < leastNotePixels ? '' : children}
       </p>
     </div>
   )
