@@ -43,9 +43,11 @@ export function readingFlags(
       textWidth(flag.number, 14) + textWidth(flag.value, 14, true) + (flag.number && flag.value ? 32 : 20)
     let best: { box: Box; cost: number } | null = null
     for (const box of spots(target, width)) {
-      const cost = [...taken, ...placed.map((one) => grow(one.box, 3))].filter(
-        (other) => boxesMeet(box, other) || crosses(box, target, other),
-      ).length
+      const inTheWay = (other: Box) => boxesMeet(box, other) || crosses(box, target, other)
+      const cost =
+        taken.filter(inTheWay).length +
+        // A flag over another flag hides a figure: worse than anything else it might cover.
+        10 * placed.filter((one) => inTheWay(grow(one.box, 3))).length
       if (!best || cost < best.cost) best = { box, cost }
       if (cost === 0) break
     }

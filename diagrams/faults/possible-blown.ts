@@ -2,13 +2,16 @@ import type { Alteration } from '../solver/alteration'
 import { casesAfter } from '../solver/blown-fuses'
 import { branchAmps, type Case, type Settled } from '../solver/case'
 import { blowsAtRatingTimes } from '../solver/constants'
-import type { Network } from '../solver/network'
+import type { FuseState, Network } from '../solver/network'
 import type { Study } from '../solver/study'
 import { restingRange } from './battery-range'
+import { predictAmps } from './prediction'
 import { eager, reluctant } from './prediction-table'
 
-/** Battery and tolerances move the current through a fuse by less than this, either way. */
-const slack = { low: 0.88, high: 1.14 }
+/** The battery alone moves a current by less than this; far from the limit nothing else matters. */
+const battery = { low: 0.93, high: 1.02 }
+const farBelow = 0.3
+const farAbove = 4
 /** Beyond this many outcomes a short says little anyway. */
 const mostSets = 16
 
@@ -43,14 +46,15 @@ export function possibleBlown(
   return [...found.values()]
 }
 
+interface Load {
+  least: number
+  most: number
+}
+
 /** Least and most that each fuse may carry, in times its rating, over all driving conditions. */
-function overloads(
-  network: Network,
-  cases: readonly Case[],
-  severity: number,
-): { least: number; most: number }[] {
+function overloads(network: Network, cases: readonly Case[], severity: number): Load[] {
   const byDoubt = [1, eager, reluctant].map((reluctance) => {
-    const times = network.fuses.map(() => 0)
+    const loads = network.fuses.map((): Load => ({ least: 0, most: 0 }))
     for (const given of cases) {
       const scale =
         reluctance === 1 ? given.scaleFor(severity) : reluctance < 1 ? restingRange.high : restingRange.low
@@ -58,13 +62,27 @@ function overloads(
       const states: Settled[] = settled ? [settled] : given.passed
       for (const state of states)
         network.fuses.forEach((fuse, i) => {
-          times[i] = Math.max(times[i]!, Math.abs(branchAmps(given, state, fuse.branch)) / fuse.amps)
+          const load = loadOf(given, state, fuse)
+          loads[i] = {
+            least: Math.max(loads[i]!.least, load.least),
+            most: Math.max(loads[i]!.most, load.most),
+          }
         })
     }
-    return times
+    return loads
   })
-  return network.fuses.map((_, i) => {
-    const times = byDoubt.map((list) => list[i]!)
-    return { least: slack.low * Math.min(...times), most: slack.high * Math.max(...times) }
-  })
+  return network.fuses.map((_, i) => ({
+    least: Math.min(...byDoubt.map((loads) => loads[i]!.least)),
+    most: Math.max(...byDoubt.map((loads) => loads[i]!.most)),
+  }))
+}
+
+/** Where current divides between ways of nearly no resistance, 5 % of a part can be most of a fuse's current. */
+function loadOf(given: Case, state: Settled, fuse: FuseState): Load {
+  const times = Math.abs(branchAmps(given, state, fuse.branch)) / fuse.amps
+  if (times < farBelow * blowsAtRatingTimes || times > farAbove * blowsAtRatingTimes)
+    return { least: times, most: times }
+  const { reachBattery, reachFixed } = predictAmps(given, state, fuse.branch)
+  const reach = (state.scale * reachBattery + reachFixed) / fuse.amps
+  return { least: battery.low * (times - reach), most: battery.high * (times + reach) }
 }

@@ -55,7 +55,7 @@ export function predict(given: Case, settled: Settled, probe: Probe): Prediction
       }
     }
     case 'amps':
-      return inBranch(given, settled, network.branchIndex.get(`wire:${probe.wire}/from`)!)
+      return predictAmps(given, settled, network.branchIndex.get(`wire:${probe.wire}/from`)!)
     case 'works': {
       const load = network.loads.find((l) => l.node === probe.node)!
       if (given.alteration.forced.idle.has(load.node)) return nothing
@@ -117,7 +117,8 @@ function overElement(given: Case, settled: Settled, branch: number): Prediction 
   }
 }
 
-function inBranch(given: Case, settled: Settled, branch: number): Prediction {
+/** Amperes from a to b inside a branch. */
+export function predictAmps(given: Case, settled: Settled, branch: number): Prediction {
   const { base } = settled.located
   const { a, b } = given.study.network.branches[branch]!
   const siemens = settled.located.branch === branch ? settled.siemens : base.conductance[branch]!

@@ -29,8 +29,9 @@ function wronglyCleared(circuit: Circuit, seed: number, corners: boolean): { run
     for (let round = 0; round < rounds; round++)
       for (const mode of site.modes) {
         const fault = plantFault(circuit, site.id, mode, random)
-        if (!shows(circuit, fault)) continue
         const vehicle = perturbCircuit(circuit, 11.8 + random(), random, corners)
+        // It has to show as drawn and on this vehicle: one that only tips a fuse already at its limit may not.
+        if (!shows(circuit, fault) || !shows(vehicle, fault)) continue
         const sets = candidateReadings(
           circuit,
           [site.id, sites[Math.floor(random() * sites.length)]!.id],
