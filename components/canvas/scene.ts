@@ -5,6 +5,7 @@ import type { Overlay } from '@/diagrams/drawing/overlay'
 import { type PartState, partState } from '@/diagrams/drawing/part-state'
 import { type Box, grow, type Place } from '@/diagrams/drawing/primitive'
 import { type PlacedFlag, readingFlags } from '@/diagrams/drawing/reading-flag'
+import { shortTailBoxes } from '@/diagrams/drawing/short-tail'
 import { glyphBox, type PlaceMark, placeMark } from '@/diagrams/drawing/verdict-mark'
 import { type VoltsPlate, voltsPlates } from '@/diagrams/drawing/volts-plate'
 import { wireRoute } from '@/diagrams/drawing/wire-route'
@@ -37,8 +38,10 @@ export interface Scene {
 
 export function buildScene(circuit: Circuit, overlay: Overlay, picked: string | null = null): Scene {
   const verdicts = overlay.verdicts ?? new Map<string, VerdictMark>()
+  const tails = shortTailBoxes(circuit, overlay.tails ?? [])
   const taken = [
     ...labelObstacles(circuit),
+    ...tails,
     ...runBoxes(circuit.wires.map((wire) => wireRoute(circuit, wire))),
   ]
   const marks = [...verdicts].flatMap(([site, verdict]): PlacedMark[] => {
@@ -58,7 +61,11 @@ export function buildScene(circuit: Circuit, overlay: Overlay, picked: string | 
   return {
     circuit,
     overlay,
-    wires: drawWires(circuit, verdicts, [...[...flags, ...plates].map((one) => grow(one.box, 2)), ...glyphs]),
+    wires: drawWires(circuit, verdicts, [
+      ...[...flags, ...plates].map((one) => grow(one.box, 2)),
+      ...glyphs,
+      ...tails,
+    ]),
     nodes: new Map(circuit.nodes.map((node) => [node.id, node])),
     states: new Map(circuit.nodes.map((node) => [node.id, partState(circuit, node, moment)])),
     marks,

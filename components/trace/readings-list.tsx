@@ -104,11 +104,11 @@ function ReadingRow({
         {number}
       </Plate>
       <div className="min-w-0 flex-1">
-        <p className="flex flex-wrap items-center gap-x-1.5 font-bold leading-tight">
+        <p className="font-bold leading-tight *:[svg]:mr-1 *:[svg]:inline-block *:[svg]:align-[-4px]">
           {reading.kind === 'volts' || reading.kind === 'ohms' ? (
             <>
               <LeadGlyph lead="red" size={18} />
-              {pointName(circuit, reading.red)} <span className="font-normal text-ink-2">to</span>
+              {pointName(circuit, reading.red)} <span className="font-normal text-ink-2">to</span>{' '}
               <LeadGlyph lead="black" size={18} />
               {pointName(circuit, reading.black)}
             </>

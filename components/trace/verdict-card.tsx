@@ -28,7 +28,11 @@ export function VerdictCard({
   const point = first && pointOfSite(first.site)
   const face = point ? connectorOf(circuit, point) : null
   const blown = mode?.blows ?? []
-  const [head, rest] = headAndRest(answer.says)
+  const [head, told] = headAndRest(answer.says)
+  // The bracket below names the places that cannot be told apart; once is enough.
+  const rest = group
+    ? told.replace(/(^|(?<=[.]\s))[^.]*(?:[.]\d[^.]*)*cannot be told apart[^.]*[.]?/, '').trim()
+    : told
   return (
     <section
       aria-labelledby="verdict"

@@ -10,7 +10,7 @@ import { partState, type Moment } from './part-state'
 import { partSymbol } from './part-symbol'
 import { grow, type Box, type Place, type Primitive } from './primitive'
 import { readingFlags } from './reading-flag'
-import { shortTail } from './short-tail'
+import { shortTail, shortTailBoxes } from './short-tail'
 import { escapeXml, primitivesToSvg } from './svg-text'
 import { darkInks, lightInks } from './theme-inks'
 import { glyphBox, isInside, placeMark, ringStrokes, verdictGlyph } from './verdict-mark'
@@ -57,7 +57,8 @@ export function drawCircuit(circuit: Circuit, overlay: Overlay = {}): string {
 export function circuitPrimitives(circuit: Circuit, overlay: Overlay): Primitive[] {
   const verdicts = overlay.verdicts ?? new Map<string, VerdictMark>()
   const moment: Moment = overlay.moment ?? { positions: {}, unplugged: [] }
-  const obstacles = labelObstacles(circuit)
+  const tails = shortTailBoxes(circuit, overlay.tails ?? [])
+  const obstacles = [...labelObstacles(circuit), ...tails]
   const bare = [...drawWires(circuit, verdicts).values()]
   const marks = glyphPlaces(circuit, verdicts)
   const glyphs = marks.map(({ verdict, at }) => glyphBox(verdict, at))

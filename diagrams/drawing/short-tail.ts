@@ -1,6 +1,7 @@
 import type { Circuit } from '../document/circuit-schema'
 import type { ShortTail } from './overlay'
-import type { Place, Primitive } from './primitive'
+import { textBox } from './part-label'
+import type { Box, Place, Primitive } from './primitive'
 import { inkLine, inkPath, ink } from './symbol-pen'
 import { alongRoute, routeLength } from './wire-path'
 import { wireRoute } from './wire-route'
@@ -40,6 +41,13 @@ export function shortTail(circuit: Circuit, tail: ShortTail): Primitive[] {
     inkPath(`M${x - 14} ${y - 26}H${x + 14}V${y - 12}L${x} ${y}L${x - 14} ${y - 12}Z`),
     ink(x + 20, y - 10, tail.label, 'start'),
   ]
+}
+
+/** What a tail's words cover, for whatever gives way to them. */
+export function shortTailBoxes(circuit: Circuit, tails: readonly ShortTail[]): Box[] {
+  return tails.flatMap((tail) =>
+    shortTail(circuit, tail).flatMap((one) => (one.kind === 'text' ? [textBox(one)] : [])),
+  )
 }
 
 function middleOf(circuit: Circuit, id: string): Place | null {

@@ -9,13 +9,17 @@ export function RuleCount({
   started,
   outcome,
   foot,
+  repaired = false,
 }: {
   counts: Counts | null
   started: boolean
   outcome: Answer['outcome'] | null
   foot: string
+  /** The repair is proved: what was faulty is so no longer. */
+  repaired?: boolean
 }) {
-  const { figure, words } = countWords(counts, started, outcome)
+  const { figure, words: found } = countWords(counts, started, outcome)
+  const words = repaired ? `${found}, repaired` : found
   return (
     <div className="tablet:max-laptop:flex tablet:max-laptop:items-baseline tablet:max-laptop:gap-3 laptop:w-[9.5rem] laptop:flex-none">
       <p className="flex items-center gap-3">

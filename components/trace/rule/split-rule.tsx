@@ -10,7 +10,7 @@ import { useWidth } from '../use-width'
 import { CutMark, CutTitle, LegNote } from './rule-notes'
 import { ruleCut } from './rule-cut'
 import { RuleCell } from './rule-cell'
-import { layRule, legGap, placeOnRule, type RuleEntry, type RuleLeg } from './rule-layout'
+import { layRule, legGap, placeOnRule, type RuleEntry, type RuleLeg, type RuleLegLayout } from './rule-layout'
 import { RuleRun } from './rule-run'
 
 /** Every place in path order: those left drawn wide, those proved good narrow, and where the next reading cuts. */
@@ -47,7 +47,7 @@ export function SplitRule({
       <ol aria-label="Places in path order" className="flex items-start">
         {layout.legs.map((leg, legIndex) => (
           <li
-            key={leg.name}
+            key={legKey(leg)}
             style={{ width: leg.width, marginLeft: legIndex === 0 ? 0 : legGap }}
             className="flex-none transition-[width] duration-rule"
           >
@@ -126,6 +126,12 @@ export function SplitRule({
       </Dialog>
     </div>
   )
+}
+
+/** Several legs may end in the same part and bear its name; a place is in one leg only. */
+function legKey(leg: RuleLegLayout): string {
+  const [first] = leg.entries
+  return first ? entryKey(first) : leg.name
 }
 
 function entryKey(entry: RuleEntry): string {
