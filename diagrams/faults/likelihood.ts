@@ -71,7 +71,7 @@ function valueAt(prediction: Prediction, scale: number): number {
   return scale * prediction.battery + prediction.fixed
 }
 
-/** Density of what a slip may show: even over 30 V or 60 A, log-even over ohms, either way for the rest. */
+/** Density of what a slip may show: even over 30 V or 60 A, log-even over ohms with OL one in twenty, either way for the rest. */
 function slipDensity(reading: Reading): number {
   switch (reading.kind) {
     case 'volts':
@@ -79,7 +79,7 @@ function slipDensity(reading: Reading): number {
     case 'amps':
       return 1 / 60
     case 'ohms':
-      return reading.value === 'OL' ? 0.3 : 0.7 / ((1 + reading.value) * 18)
+      return reading.value === 'OL' ? 0.05 : 0.95 / ((1 + reading.value) * 18)
     default:
       return 0.5
   }

@@ -140,41 +140,49 @@ describe('a trace from a trouble code to a proved repair', () => {
     await context.close()
   })
 
-  it('locates a short to ground with ohms alone, both ends of the wire unplugged', async () => {
-    const { page, context } = await test.visit()
-    await startTrace(page)
-    const wire = circuit.wires.find((one) => one.to.startsWith('c12-3'))
-    if (!wire) throw new Error('the link has no wire to C12 cavity 3')
-    const fault: PlantedFault = { site: `wire:${wire.id}`, mode: 'short-to-ground', ohms: 0.1 }
-    const ends = connectorsOf(wire)
-    await page.getByRole('group', { name: 'What to measure' }).getByText('Ohms').click()
-    await page.locator(`[data-point="${wire.from}"]`).click()
-    await page.getByText('Ohms needs the battery disconnected', { exact: false }).first().waitFor()
-    const battery = page.locator('[data-control="battery"]')
-    while (!(await battery.innerText()).includes('off')) await battery.click()
-    await page.locator('[data-control="unplugged"]').click()
-    for (const id of ends) {
-      const name = circuit.connectors.find((one) => one.id === id)?.label ?? id
-      await page.getByRole('dialog').getByRole('group', { name }).getByText('Out').click()
-    }
-    await page.getByRole('button', { name: 'Done' }).click()
-    const condition = { controls: {}, unplugged: ends, battery: false, charging: false, added: [] }
-    const leads: [string, string][] = [
-      [wire.from, wire.to],
-      [wire.from, 'chassis'],
-    ]
-    for (const [index, [red, black]] of leads.entries()) {
-      await put(page, 'Red lead', red)
-      await put(page, 'Black lead', black)
-      await enter(page, shown({ kind: 'ohms', red, black, condition }, fault))
-      await page.getByText(`${index + 1}, newest first`).waitFor()
-      await page.locator('[data-queue="idle"]').first().waitFor({ state: 'attached' })
-    }
-    await page.locator('[data-outcome="located"]').first().waitFor()
-    const cell = page.locator(`[data-site="${fault.site}"]`)
-    expect(await cell.getAttribute('aria-label')).toMatch(/faulty, short to ground$/)
-    await context.close()
-  })
+  for (const [words, mode, ohms] of [
+    ['an open', 'open', undefined],
+    ['a short to ground', 'short-to-ground', 0.1],
+  ] as const)
+    it(`locates ${words} with ohms alone, both ends of the wire unplugged`, async () => {
+      const { page, context } = await test.visit()
+      await startTrace(page)
+      const wire = circuit.wires.find((one) => one.to.startsWith('c12-3'))
+      if (!wire) throw new Error('the link has no wire to C12 cavity 3')
+      const fault: PlantedFault = { site: `wire:${wire.id}`, mode, ...(ohms === undefined ? {} : { ohms }) }
+      const ends = connectorsOf(wire)
+      await page.getByRole('group', { name: 'What to measure' }).getByText('Ohms').click()
+      await page.locator(`[data-point="${wire.from}"]`).click()
+      await page.getByText('Ohms needs the battery disconnected', { exact: false }).first().waitFor()
+      const battery = page.locator('[data-control="battery"]')
+      while (!(await battery.innerText()).includes('off')) await battery.click()
+      await page.locator('[data-control="unplugged"]').click()
+      for (const id of ends) {
+        const name = circuit.connectors.find((one) => one.id === id)?.label ?? id
+        await page.getByRole('dialog').getByRole('group', { name }).getByText('Out').click()
+      }
+      await page.getByRole('button', { name: 'Done' }).click()
+      const condition = { controls: {}, unplugged: ends, battery: false, charging: false, added: [] }
+      // End to end, to chassis, to the neighbouring cavity.
+      const leads: [string, string][] = [
+        [wire.from, wire.to],
+        [wire.from, 'chassis'],
+        [wire.from, 'cab.8'],
+      ]
+      for (const [index, [red, black]] of leads.entries()) {
+        await put(page, 'Red lead', red)
+        await put(page, 'Black lead', black)
+        await enter(page, shown({ kind: 'ohms', red, black, condition }, fault))
+        await page.getByText(`${index + 1}, newest first`).waitFor()
+        await page.locator('[data-queue="idle"]').first().waitFor({ state: 'attached' })
+      }
+      await page.locator('[data-outcome="located"]').first().waitFor()
+      const cell = page.locator(`[data-site="${fault.site}"]`)
+      expect(await cell.getAttribute('aria-label')).toMatch(
+        new RegExp(`faulty, ${mode.replaceAll('-', ' ')}$`),
+      )
+      await context.close()
+    })
 
   it('keeps readings through a lost network and a reload, and sends them when it is back', async () => {
     const { page, context } = await test.visit()
