@@ -1,7 +1,10 @@
 import { z } from 'zod'
 
-/** Ids of nodes, wires, connectors, controls, sequence steps, annotations and readings. */
-export const idSchema = z.string().regex(/^[A-Za-z0-9_-]{1,40}$/, {
+/**
+ * Ids of nodes, wires, connectors, controls, sequence steps, annotations and readings. All but `__proto__`, which is
+ * lost as the key of a setting.
+ */
+export const idSchema = z.string().regex(/^(?!__proto__$)[A-Za-z0-9_-]{1,40}$/, {
   error: (issue) => `id "${String(issue.input)}": expected 1 to 40 letters, digits, "_" or "-"`,
 })
 
@@ -32,7 +35,8 @@ export const whenSchema = z.union([
 ])
 export type When = z.infer<typeof whenSchema>
 
-export const positiveSchema = z.number().positive().max(1e12)
+/** Of ohms, metres and mm²: below any real one, a conductance would no longer be a figure. */
+export const positiveSchema = z.number().positive().min(1e-9).max(1e12)
 
 /** A place on the drawing, pixels. Bounded, so that distances and sums of them stay figures. */
 export const coordinateSchema = z.number().min(-100_000).max(100_000)

@@ -54,7 +54,7 @@ export const nodeSchema = z.discriminatedUnion('kind', [
   z.strictObject({
     kind: z.literal('fuse'),
     ...common,
-    amps: z.number().positive().max(2000),
+    amps: z.number().positive().min(1e-6).max(2000),
     style: z.enum(['blade', 'link']).default('blade'),
   }),
   z.strictObject({

@@ -308,6 +308,24 @@ describe('a field of the wrong shape is told in plain words', () => {
     ],
     ['a list for an object', (d) => (d.nodes[1] = []), 'nodes.1', 'a list: expected an object'],
     ['too small', (d) => (d.nodes[1].amps = 0), 'nodes.1.amps', '0: expected more than 0'],
+    [
+      'a resistance below all figures',
+      (d) => (d.wires[0].ohms = 5e-324),
+      'wires.0.ohms',
+      '5e-324: expected at least 1e-9',
+    ],
+    [
+      'a rating below all figures',
+      (d) => (d.nodes[1].amps = 5e-324),
+      'nodes.1.amps',
+      '5e-324: expected at least 0.000001',
+    ],
+    [
+      'a name that gets lost',
+      (d) => (d.controls[0].id = '__proto__'),
+      'controls.0.id',
+      'id "__proto__": expected 1 to 40 letters, digits, "_" or "-"',
+    ],
     ['no format', (d) => delete d.format, 'format', 'missing: expected "halfsplit-circuit"'],
     ['a list for a format', (d) => (d.format = []), 'format', 'a list: expected "halfsplit-circuit"'],
     [
