@@ -78,11 +78,27 @@ function leadsOf(probe: Probe | Reading): string {
   }
 }
 
-const models = new WeakMap<Circuit, FaultModel>()
+const byObject = new WeakMap<Circuit, FaultModel>()
+const byContent = new Map<string, FaultModel>()
+/** Circuits traced at one time by one worker or process, about. */
+const keptModels = 8
 
-/** Models are kept as long as their circuit is: a trace asks again with every reading. */
+/**
+ * The model of a circuit, kept while it is in use: a trace asks again with every reading. Equal
+ * documents share one, since each message to a worker and each line of input is a new object.
+ */
 export function faultModelOf(circuit: Circuit): FaultModel {
-  let found = models.get(circuit)
-  if (!found) models.set(circuit, (found = new FaultModel(circuit)))
+  let found = byObject.get(circuit)
+  if (found) return found
+  const content = JSON.stringify(circuit)
+  found = byContent.get(content) ?? new FaultModel(circuit)
+  byObject.set(circuit, found)
+  // Least recently used goes first: a Map keeps the order of insertion.
+  byContent.delete(content)
+  byContent.set(content, found)
+  for (const oldest of byContent.keys()) {
+    if (byContent.size <= keptModels) break
+    byContent.delete(oldest)
+  }
   return found
 }
