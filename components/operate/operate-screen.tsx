@@ -86,7 +86,7 @@ export function OperateScreen({ circuitId, circuit }: { circuitId: string; circu
         modes={<ModeSwitch modes={circuitModes(circuitId)} current="operate" />}
       />
       <main id="main" className="flex min-h-0 flex-1 flex-col">
-        <div className="min-h-64 flex-1 max-tablet:h-[46dvh] max-tablet:flex-none">
+        <div className="min-h-64 flex-1 max-tablet:h-[36dvh] max-tablet:flex-none">
           <CircuitSheet
             circuit={circuit}
             overlay={overlay}

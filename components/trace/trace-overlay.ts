@@ -90,9 +90,15 @@ function blownFuses(answer: Answer): string[] {
   return [...new Set(blown)]
 }
 
+/** One tail for places that cannot be told apart: it is one short, and three tails side by side would look like three. */
 function shortTailsOf(circuit: Circuit, answer: Answer): ShortTail[] {
-  return answer.sites
-    .filter((site) => site.verdict === 'faulty' && site.site.startsWith('wire:'))
+  const faulty = answer.sites.filter((site) => site.verdict === 'faulty' && site.site.startsWith('wire:'))
+  const groupOf = (site: string) => answer.inseparable.find((group) => group.includes(site))
+  return faulty
+    .filter((site, at) => {
+      const group = groupOf(site.site)
+      return !group || faulty.findIndex((one) => group.includes(one.site)) === at
+    })
     .flatMap((site): ShortTail[] => {
       const wire = site.site.slice('wire:'.length)
       const mode = likeliestMode(site)
