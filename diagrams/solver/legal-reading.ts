@@ -1,6 +1,7 @@
 import type { Problem } from '../document/check-circuit'
 import type { Circuit } from '../document/circuit-schema'
-import { checkCondition } from '../document/condition'
+import { checkCondition, conditionKey } from '../document/condition'
+import type { Condition } from '../document/condition-schema'
 import { parsePoint, pointName } from '../document/points'
 import { hasContact, portsOf } from '../document/ports'
 import type { Probe } from '../document/reading-schema'
@@ -11,6 +12,30 @@ import { unstable } from './operating-point'
 
 /** Why a reading cannot be taken, or null. Judged on the good circuit, as the person with the meter would. */
 export function refuseReading(circuit: Circuit, probe: Probe): Problem | null {
+  return refuseProbe(circuit, probe) ?? refuseUnrest(circuit, probe.condition)
+}
+
+/** What does not come to rest has no figure to expect, so that nothing could be made of one that was read. */
+function refuseUnrest(circuit: Circuit, condition: Condition): Problem | null {
+  // With the battery off nothing is driven and no coil pulls.
+  if (!condition.battery) return null
+  let known = restByCircuit.get(circuit)
+  if (!known) restByCircuit.set(circuit, (known = new Map()))
+  const key = conditionKey(circuit, condition)
+  let problem = known.get(key)
+  if (problem === undefined) {
+    const opened = openCase(circuit, condition)
+    problem = opened.ok ? (opened.value.given.settle(0) ? null : unstable) : opened.problem
+    if (known.size > 300) known.clear()
+    known.set(key, problem)
+  }
+  return problem
+}
+
+/** Asked for every reading of a trace, and most are taken in the same few conditions. */
+const restByCircuit = new WeakMap<Circuit, Map<string, Problem | null>>()
+
+function refuseProbe(circuit: Circuit, probe: Probe): Problem | null {
   const wrong = checkCondition(circuit, probe.condition, 'condition')[0]
   if (wrong) return wrong
   switch (probe.kind) {

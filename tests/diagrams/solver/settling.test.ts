@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import type { Circuit } from '@/diagrams/document/circuit-schema'
+import { refuseReading } from '@/diagrams/solver/legal-reading'
 import { solveOperatingPoint } from '@/diagrams/solver/operating-point'
 import type { NodeInput } from '@/tests/support/harness-draft'
 import { inCondition, madeCircuit, onOff, operate, whenOn } from '@/tests/support/made-circuit'
@@ -311,5 +312,26 @@ describe('a supply', () => {
     const truck = madeCircuit([{ id: 'bat', kind: 'battery', volts: 25.2 }], [])
     expect(operate(truck, { charging: true }).volts.get('bat.pos')).toBeCloseTo(28.3, 6)
     expect(operate(truck, {}, undefined).volts.get('bat.pos')).toBeCloseTo(25.2, 6)
+  })
+})
+
+describe('a circuit that does not come to rest', () => {
+  const buzzer = madeCircuit(
+    [battery, ground, { id: 'k', kind: 'relay' }],
+    ['bat.pos > k.30', 'k.87a > k.86', 'k.85 > g.in'],
+  )
+  const red = { red: 'k.86', black: 'chassis' }
+
+  it('has no figure to read, and a reading taken in it is refused as unstable', () => {
+    for (const probe of [
+      { kind: 'volts' as const, ...red, condition: inCondition() },
+      { kind: 'amps' as const, wire: 'w1', condition: inCondition() },
+    ])
+      expect(refuseReading(buzzer, probe)?.message).toMatch(/unstable|settle|rest/i)
+  })
+
+  it('can be read with the battery off', () => {
+    const condition = inCondition({ battery: false })
+    expect(refuseReading(buzzer, { kind: 'ohms', ...red, condition })).toBeNull()
   })
 })
