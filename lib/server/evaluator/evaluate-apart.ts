@@ -43,8 +43,13 @@ export async function evaluateApart(
   }
 }
 
+/** The thread, once it takes questions; the first who asks waits for its start. */
+export function evaluatorReady(): Promise<Worker> {
+  return (evaluator.thread ??= startThread())
+}
+
 async function answerTo(input: unknown, milliseconds: number): Promise<Reply | 'too-long'> {
-  const thread = await (evaluator.thread ??= startThread())
+  const thread = await evaluatorReady()
   thread.postMessage(input)
   try {
     return (await next(thread, milliseconds)) as Reply

@@ -3,7 +3,7 @@ import { sitesOf } from '@/diagrams/document/sites'
 import type { Answer } from '@/diagrams/faults/answer'
 import type { EvaluationRequest } from '@/diagrams/faults/request'
 import type { TraceRow } from '@/lib/shared/api/traces'
-import { evaluateApart } from '../../evaluator/evaluate-apart'
+import { evaluateApart, evaluatorReady } from '../../evaluator/evaluate-apart'
 import { log } from '../../log'
 
 type Progress = NonNullable<TraceRow['progress']>
@@ -15,7 +15,7 @@ const mostKnown = 500
 const asked = new Map<string, Promise<void>>()
 
 /** Waiting that one list may cost. What is not ready by then is there when the list is asked for again. */
-const budgetMilliseconds = 2000
+const budgetMilliseconds = 3000
 const mostMilliseconds = 10_000
 
 export interface ProgressQuestion {
@@ -26,6 +26,10 @@ export interface ProgressQuestion {
 
 /** How far traces got, in their order, within the time that a list may take; null where it ran out. */
 export async function traceProgress(questions: (ProgressQuestion | null)[]): Promise<(Progress | null)[]> {
+  const missing = (question: ProgressQuestion | null) =>
+    question !== null && !atTheStart(question.request) && !known.has(question.key)
+  // Its start, once in the life of the server, is no work on these traces.
+  if (questions.some(missing)) await evaluatorReady().catch(() => {})
   const until = performance.now() + budgetMilliseconds
   const out = wait(budgetMilliseconds, undefined, { ref: false })
   const answers: (Progress | null)[] = []
