@@ -21,24 +21,26 @@ export function outcomesOf(planned: PlannedReading, particles: readonly Particle
 
 /** Keeps the heaviest outcomes apart and lets lighter ones join their nearest neighbour. */
 function mergeSlivers(bins: readonly Bin[], particles: readonly Particle[]): Bin[] {
-  const merged = bins.map((bin) => ({ ...bin, members: [...bin.members] }))
-  while (merged.length > mostOutcomes) {
+  // OL stands apart: no figure lies next to it.
+  const beyond = bins.filter((bin) => bin.low === Infinity)
+  const merged = bins
+    .filter((bin) => bin.low !== Infinity)
+    .map((bin) => ({ ...bin, members: [...bin.members] }))
+  while (merged.length + beyond.length > mostOutcomes) {
     let lightest = 0
     for (let b = 1; b < merged.length; b++)
       if (massOf(merged[b]!, particles) < massOf(merged[lightest]!, particles)) lightest = b
+    const sliver = merged[lightest]!
     const left = merged[lightest - 1]
     const right = merged[lightest + 1]
-    const sliver = merged[lightest]!
-    const gap = (a: number, b: number) => (b === Infinity ? Infinity : b - a)
-    const toLeft = left ? gap(left.high, sliver.low) : Infinity
-    const toRight = right ? gap(sliver.high, right.low) : Infinity
-    const into = left && (toLeft <= toRight || !right) ? left : right!
+    const nearer = left && right ? sliver.low - left.high <= right.low - sliver.high : Boolean(left)
+    const into = nearer ? left! : right!
     into.low = Math.min(into.low, sliver.low)
     into.high = Math.max(into.high, sliver.high)
     into.members.push(...sliver.members)
     merged.splice(lightest, 1)
   }
-  return merged
+  return [...merged, ...beyond]
 }
 
 function outcomeOf(
@@ -61,7 +63,7 @@ function outcomeOf(
   const probability = covered > 0 ? mass / covered : 0
   if (probe.kind === 'works') return { about: bin.high >= 0.5 ? 'works' : 'does not', probability, leaves }
   if (bin.low === Infinity) return { about: 'OL', probability, leaves }
-  const high = bin.high === Infinity ? bin.low : bin.high
+  const { high } = bin
   const slack = resolution(probe.kind, high)
   return {
     about: figure(probe.kind, typicalOf(bin, particles, row)),
