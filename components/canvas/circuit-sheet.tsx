@@ -135,7 +135,8 @@ function Sheet({
           panActivationKeyCode={null}
           onlyRenderVisibleElements={circuit.nodes.length > 150}
           proOptions={{ hideAttribution: true }}
-          onMoveStart={(event) => event && view.moved()}
+          // Not at its start: a tap that puts a lead starts one, too, and moves nothing.
+          onMove={(event) => event && view.moved()}
           onPaneClick={pickUnder}
           onNodeClick={pickUnder}
           onEdgeClick={pickUnder}

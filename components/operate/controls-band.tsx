@@ -55,24 +55,27 @@ export function ControlsBand({
         value={condition.battery ? 'on' : 'off'}
         onChange={(value) => act({ do: 'battery', connected: value === 'on' })}
       />
-      <div
-        role="status"
-        className="min-w-0 max-tablet:order-first max-tablet:w-full tablet:ml-auto tablet:max-w-96 tablet:text-right"
-      >
-        <p className="font-bold leading-tight">
-          {happening ? happening.does : now.ok ? '' : now.problem.message}
-        </p>
-        <p className="text-small text-ink-2 max-tablet:hidden">{happening?.draws}</p>
+      {/* One flexible piece: a longer sentence must not move the button to a new line and the sheet with it. */}
+      <div className="contents tablet:flex tablet:min-w-72 tablet:flex-1 tablet:items-center tablet:justify-end tablet:gap-4">
+        <div
+          role="status"
+          className="min-w-0 max-tablet:order-first max-tablet:w-full tablet:max-w-96 tablet:text-right"
+        >
+          <p className="line-clamp-2 font-bold leading-tight">
+            {happening ? happening.does : now.ok ? '' : now.problem.message}
+          </p>
+          <p className="text-small text-ink-2 max-tablet:hidden">{happening?.draws}</p>
+        </div>
+        <Button size="bay" className="flex-none" onClick={() => setUnplugging(true)}>
+          {out > 0 ? (
+            `${out} unplugged`
+          ) : (
+            <span>
+              Unplug<span className="max-tablet:sr-only"> or pull a part</span>
+            </span>
+          )}
+        </Button>
       </div>
-      <Button size="bay" onClick={() => setUnplugging(true)}>
-        {out > 0 ? (
-          `${out} unplugged`
-        ) : (
-          <span>
-            Unplug<span className="max-tablet:sr-only"> or pull a part</span>
-          </span>
-        )}
-      </Button>
       <UnplugDialog
         circuit={circuit}
         unplugged={condition.unplugged}

@@ -66,7 +66,7 @@ export function EntryScreen({
           </p>
           {next && (
             <>
-              <h2 className="text-title">{nextTitle(circuit, next)}</h2>
+              <h2 className="text-title">{capital(nextTitle(circuit, next))}</h2>
               <p className="line-clamp-2 text-small leading-tight text-ink-2">
                 {nextHow(circuit, next)} {face?.location ? capital(face.location) : ''}
               </p>

@@ -3,6 +3,7 @@
 import { useState } from 'react'
 import type { Circuit } from '@/diagrams/document/circuit-schema'
 import type { NextReading } from '@/diagrams/faults/answer'
+import { capital } from '@/lib/client/meter/reading-words'
 import { Button } from '../ui/button'
 import { Dialog } from '../ui/dialog'
 import { Tick } from '../ui/glyphs'
@@ -38,7 +39,7 @@ export function NextSplit({
             </span>{' '}
             <span className="text-ink-2">{nextEffort(circuit, next)}</span>
           </p>
-          <h2 className="mt-1 text-title">{nextTitle(circuit, next)}</h2>
+          <h2 className="mt-1 text-title">{capital(nextTitle(circuit, next))}</h2>
           <p className="mt-0.5 text-dense text-ink-2">{nextHow(circuit, next)}</p>
         </div>
         {face && (
@@ -74,12 +75,12 @@ export function NextSplit({
           {others.map((other) => (
             <li key={other.says} className="flex items-center gap-3 border-b border-line py-2">
               <span className="min-w-0 flex-1">
-                <b className="block">{nextTitle(circuit, other)}</b>
+                <b className="block">{capital(nextTitle(circuit, other))}</b>
                 <span className="block text-small text-ink-2">
-                  {nextHow(circuit, other)} {nextEffort(circuit, other)},{' '}
+                  {nextHow(circuit, other)} {capital(nextEffort(circuit, other))}.{' '}
                   {other.outcomes
-                    .map((outcome) => `${outcome.about} leaves ${outcome.leaves.length}`)
-                    .join(', ')}
+                    .map((outcome) => `${capital(outcome.about)}: leaves ${outcome.leaves.length}.`)
+                    .join(' ')}
                 </span>
               </span>
               <Button

@@ -65,5 +65,8 @@ function isTaken(event: KeyboardEvent): boolean {
   }
   if (field.type === 'radio' || field.type === 'checkbox')
     return event.key.startsWith('Arrow') || event.key === ' '
+  // The meter's window holds figures and stays in focus from reading to reading; empty, it has nothing to undo.
+  if (field.hasAttribute('data-meter-window'))
+    return !(keyName(event) === 'n' || (field.value === '' && /^ctrl[+](shift[+])?z$/.test(keyName(event))))
   return true
 }
