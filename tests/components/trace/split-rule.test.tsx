@@ -63,6 +63,29 @@ describe('the split rule on screen', () => {
     expect(onPlace).toHaveBeenCalledWith(three[1])
   })
 
+  it('leaves nothing of earlier answers behind where several legs end in the same part', () => {
+    const sender = samples.find((one) => one.title === 'Fuel level sender') as (typeof samples)[number]
+    const first = evaluate({ circuit: sender, readings: [], codes: [], priors: 'trade' })
+    const rule = (odds: ReadonlyMap<string, number>, started: boolean) => (
+      <SplitRule
+        circuit={sender}
+        legs={pathOrder(sender, odds)}
+        answer={first}
+        started={started}
+        next={null}
+        nextTitle=""
+        onPlace={() => undefined}
+      />
+    )
+    const names = pathOrder(sender, new Map()).map((leg) => leg.name)
+    expect(new Set(names).size).toBeLessThan(names.length)
+    const { rerender } = render(rule(new Map(), false))
+    for (const { site } of first.sites.slice(0, 12)) rerender(rule(new Map([[site, 1]]), true))
+    const shown = [...document.querySelectorAll('[data-site]')].map((cell) => cell.getAttribute('data-site'))
+    expect(shown.length).toBe(new Set(shown).size)
+    expect(screen.queryAllByRole('button', { name: /not judged yet$/ })).toEqual([])
+  })
+
   it('tells how many places a run has proved good, without their names', () => {
     show(left(order.slice(4, 7)), true)
     const runs = screen.getAllByRole('button', { name: /proved good$/ })
