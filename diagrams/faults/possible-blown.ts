@@ -6,7 +6,7 @@ import type { FuseState, Network } from '../solver/network'
 import type { Study } from '../solver/study'
 import { restingRange } from './battery-range'
 import { predictAmps } from './prediction'
-import { eager, reluctant } from './prediction-table'
+import { eager, reluctant } from './reluctance'
 
 /** The battery alone moves a current by less than this; far from the limit nothing else matters. */
 const battery = { low: 0.93, high: 1.02 }

@@ -7,6 +7,7 @@ import { stateKey, Study, type States } from '../solver/study'
 import { chargingRange, restingRange, weakRange, type ScaleRange } from './battery-range'
 import type { Cell, Hypothesis } from './hypothesis'
 import { predict, type Prediction } from './prediction'
+import { eager, reluctant } from './reluctance'
 
 /** What one cell foretells for one reading. */
 export interface CellPrediction {
@@ -21,10 +22,6 @@ export interface CellPrediction {
    */
   ends: readonly (readonly [Prediction, Prediction])[] | null
 }
-
-/** Relays and modules are looked at a little eager and a little reluctant: all that tolerances can do to them. */
-export const eager = 0.89
-export const reluctant = 1.12
 
 /** The good circuit as a hypothesis with one cell. */
 export const goodCell: Cell = { low: 0, high: 0, share: 1 }
