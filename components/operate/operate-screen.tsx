@@ -106,7 +106,7 @@ export function OperateScreen({ circuitId, circuit }: { circuitId: string; circu
           <div className="border-b border-line p-2 laptop:hidden">
             <Choice label="Show" options={tabs} value={tab} onChange={setTab} fill />
           </div>
-          <div className="grid min-h-0 flex-1 laptop:grid-cols-[minmax(0,32fr)_minmax(0,34fr)_minmax(0,34fr)]">
+          <div className="grid min-h-0 flex-1 grid-cols-[minmax(0,1fr)] laptop:grid-cols-[minmax(0,32fr)_minmax(0,34fr)_minmax(0,34fr)]">
             <div className={classNames(paneClass('how'), 'laptop:border-l-0')}>
               <HowItWorks circuit={circuit} operation={operation} />
             </div>
