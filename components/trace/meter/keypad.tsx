@@ -19,7 +19,7 @@ const places = [
 ] as const
 
 const key =
-  'flex items-center justify-center rounded-field border-control border-edge text-title font-bold select-none ' +
+  'flex items-center justify-center rounded-field border-control border-edge font-bold select-none ' +
   'min-h-14 max-tablet:min-h-key transition-colors duration-press active:bg-ink active:text-on-ink hover:border-ink'
 
 /** Digits, OL, sign, take back, and the key that logs the reading. */
@@ -40,7 +40,7 @@ export function Keypad({
           type="button"
           aria-label={digit === '.' ? 'point' : digit}
           onClick={() => onPress(digit)}
-          className={classNames(key, 'bg-window', places[index])}
+          className={classNames(key, 'text-title bg-window', places[index])}
         >
           {digit}
         </button>
