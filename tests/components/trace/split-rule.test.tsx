@@ -74,7 +74,7 @@ describe('the split rule on screen', () => {
         circuit={sender}
         legs={own}
         answer={answer}
-        started
+        started={false}
         next={null}
         nextTitle=""
         onPlace={() => undefined}
