@@ -143,7 +143,7 @@ export const arbitraryCircuit = fc
         label,
         amount(0.01, 100),
         fc.option(positive, { nil: null }),
-        fc.array(fc.record({ x: amount(-1e6, 1e6), y: amount(-1e6, 1e6) }), { maxLength: 3 }),
+        fc.array(fc.record({ x: amount(-1e5, 1e5), y: amount(-1e5, 1e5) }), { maxLength: 3 }),
       ),
       { maxLength: 12 },
     ),
