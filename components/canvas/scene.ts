@@ -63,6 +63,7 @@ export function buildScene(circuit: Circuit, overlay: Overlay, picked: string | 
     overlay,
     wires: drawWires(circuit, verdicts, [
       ...[...flags, ...plates].map((one) => grow(one.box, 2)),
+      ...flags.map((flag) => flag.pointer),
       ...glyphs,
       ...tails,
     ]),

@@ -65,7 +65,10 @@ export function circuitPrimitives(circuit: Circuit, overlay: Overlay): Primitive
   const flags = readingFlags(circuit, overlay.flags ?? [], [...obstacles, ...glyphs, ...runBoxes(bare)])
   // Labels give way to flags and glyphs; the plates take what is left.
   const wires = [
-    ...drawWires(circuit, verdicts, [...flags.map((flag) => grow(flag.box, 2)), ...glyphs]).values(),
+    ...drawWires(circuit, verdicts, [
+      ...flags.flatMap((flag) => [grow(flag.box, 2), flag.pointer]),
+      ...glyphs,
+    ]).values(),
   ]
   const plates = voltsPlates(circuit, overlay.volts ?? new Map(), [
     ...obstacles,

@@ -8,6 +8,8 @@ import { wireRoute } from './wire-route'
 
 export interface PlacedFlag {
   box: Box
+  /** What its pointer covers. */
+  pointer: Box
   primitives: Primitive[]
 }
 
@@ -51,7 +53,12 @@ export function readingFlags(
       if (!best || cost < best.cost) best = { box, cost }
       if (cost === 0) break
     }
-    if (best) placed.push({ box: best.box, primitives: drawFlag(flag, target, best.box) })
+    if (best)
+      placed.push({
+        box: best.box,
+        pointer: pointerBox(best.box, target),
+        primitives: drawFlag(flag, target, best.box),
+      })
   }
   return placed
 }
@@ -62,11 +69,15 @@ function spots({ x, y }: Place, width: number): Box[] {
   return levels.flatMap((top) => [box(x - width / 2, top), box(x - width + 14, top), box(x - 14, top)])
 }
 
-/** Whether a flag's pointer runs over something that does not itself hold the point it points at. */
-function crosses(flag: Box, target: Place, other: Box): boolean {
+function pointerBox(flag: Box, target: Place): Box {
   const top = flag.y > target.y ? target.y : flag.y + flag.height
   const bottom = flag.y > target.y ? flag.y : target.y
-  const pointer = { x: target.x - 3, y: top, width: 6, height: bottom - top }
+  return { x: target.x - 3, y: top, width: 6, height: bottom - top }
+}
+
+/** Whether a flag's pointer runs over something that does not itself hold the point it points at. */
+function crosses(flag: Box, target: Place, other: Box): boolean {
+  const pointer = pointerBox(flag, target)
   return (
     boxesMeet(pointer, other) && !boxesMeet({ x: target.x - 1, y: target.y - 1, width: 2, height: 2 }, other)
   )
