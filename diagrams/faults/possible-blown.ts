@@ -6,7 +6,7 @@ import type { FuseState, Network } from '../solver/network'
 import type { Study } from '../solver/study'
 import { restingRange } from './battery-range'
 import { predictAmps } from './prediction'
-import { eager, reluctant } from './reluctance'
+import { eager, isCertain, reluctant } from './reluctance'
 
 /** The battery alone moves a current by less than this; far from the limit nothing else matters. */
 const battery = { low: 0.93, high: 1.02 }
@@ -53,24 +53,34 @@ interface Load {
 
 /** Least and most that each fuse may carry, in times its rating, over all driving conditions. */
 function overloads(network: Network, cases: readonly Case[], severity: number): Load[] {
-  const byDoubt = [1, eager, reluctant].map((reluctance) => {
-    const loads = network.fuses.map((): Load => ({ least: 0, most: 0 }))
-    for (const given of cases) {
-      const scale =
-        reluctance === 1 ? given.scaleFor(severity) : reluctance < 1 ? restingRange.high : restingRange.low
-      const settled = given.settle(severity, scale, reluctance)
-      const states: Settled[] = settled ? [settled] : given.passed
-      for (const state of states)
-        network.fuses.forEach((fuse, i) => {
-          const load = loadOf(given, state, fuse)
-          loads[i] = {
-            least: Math.max(loads[i]!.least, load.least),
-            most: Math.max(loads[i]!.most, load.most),
-          }
-        })
+  const none = () => network.fuses.map((): Load => ({ least: 0, most: 0 }))
+  // As drawn, a little eager, a little reluctant.
+  const byDoubt = [none(), none(), none()] as const
+  const note = (loads: Load[], given: Case, states: readonly Settled[]) => {
+    for (const state of states)
+      network.fuses.forEach((fuse, i) => {
+        const load = loadOf(given, state, fuse)
+        const { least, most } = loads[i]!
+        loads[i] = { least: Math.max(least, load.least), most: Math.max(most, load.most) }
+      })
+  }
+  for (const given of cases) {
+    const settled = given.settle(severity)
+    const states = settled ? [settled] : given.passed
+    note(byDoubt[0], given, states)
+    if (settled && given.passed.every((state) => isCertain(given, state))) {
+      note(byDoubt[1], given, states)
+      note(byDoubt[2], given, states)
+      continue
     }
-    return loads
-  })
+    for (const [loads, scale, reluctance] of [
+      [byDoubt[1], restingRange.high, eager],
+      [byDoubt[2], restingRange.low, reluctant],
+    ] as const) {
+      const other = given.settle(severity, scale, reluctance)
+      note(loads, given, other ? [other] : given.passed)
+    }
+  }
   return network.fuses.map((_, i) => ({
     least: Math.min(...byDoubt.map((loads) => loads[i]!.least)),
     most: Math.max(...byDoubt.map((loads) => loads[i]!.most)),

@@ -1,13 +1,13 @@
 import type { Probe } from '../document/reading-schema'
 import { alterationKey, noAlteration, type Alteration } from '../solver/alteration'
 import { buildNetwork } from '../solver/build-network'
-import { Case, coilVolts, elementVolts, voltsBetween, type Settled } from '../solver/case'
+import { Case, type Settled } from '../solver/case'
 import type { Network } from '../solver/network'
 import { stateKey, Study, type States } from '../solver/study'
 import { chargingRange, restingRange, weakRange, type ScaleRange } from './battery-range'
 import type { Cell, Hypothesis } from './hypothesis'
 import { predict, type Prediction } from './prediction'
-import { eager, reluctant } from './reluctance'
+import { eager, isCertain, reluctant } from './reluctance'
 
 /** What one cell foretells for one reading. */
 export interface CellPrediction {
@@ -147,24 +147,6 @@ function combinations(states: readonly States[]): States[] | null {
       all = all.flatMap((state) => [state, { ...state, [kind]: state[kind].with(i, !on) }])
     })
   return doubtful > mostDoubtful ? null : all
-}
-
-/**
- * True when neither battery nor tolerances can turn a relay, module or diode: far from where it
- * changes, by more than what `eager` and `reluctant` allow together with the battery's range.
- */
-function isCertain(given: Case, settled: Settled): boolean {
-  // A weak battery ranges too widely to say.
-  if (given.alteration.weak) return false
-  const { relays, modules, diodes } = given.study.network
-  const far = (part: number) => part < 0.85 || part > 1.22
-  return (
-    relays.every((relay, i) => far(coilVolts(given, settled, i) / relay.pullIn)) &&
-    modules.every((module) =>
-      module.supplies.every((pin) => far(voltsBetween(settled, pin, module.innerGround) / module.runsFrom)),
-    ) &&
-    diodes.every((diode) => elementVolts(given, settled, diode.branch) < diode.volts / 2)
-  )
 }
 
 /** A study for a probe's condition, with the leads it adds. */
