@@ -22,7 +22,7 @@ export function wireOhms(wire: Wire): number {
   return wire.ohms ?? (copperOhmMm2PerMetre * wire.length) / wire.mm2
 }
 
-type Draft = Omit<Network, 'order' | 'places' | 'branchIndex' | 'unknownOf' | 'middleOf'> & {
+type Draft = Omit<Network, 'order' | 'places' | 'branchIndex' | 'leaking' | 'unknownOf' | 'middleOf'> & {
   unknownOf: Map<string, number>
   middleOf: Map<string, number>
 }

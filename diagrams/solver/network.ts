@@ -96,6 +96,8 @@ export interface Network {
   circuit: Circuit
   added: Condition['added']
   size: number
+  /** Unknowns below this number leak to chassis; those of a held fault, inside a part, do not. */
+  leaking: number
   order: EliminationOrder
   branches: Branch[]
   branchIndex: ReadonlyMap<string, number>
@@ -116,7 +118,9 @@ export interface Network {
 /** Slot numbers for `places`; a branch with both ends on the same unknown goes nowhere. */
 export const nowhere = -0x40000000
 
-export function finishNetwork(parts: Omit<Network, 'order' | 'places' | 'branchIndex'>): Network {
+export function finishNetwork(
+  parts: Omit<Network, 'order' | 'places' | 'branchIndex' | 'leaking'> & { leaking?: number },
+): Network {
   const inside = parts.branches.filter((x) => x.a >= 0 && x.b >= 0 && x.a !== x.b)
   const order = orderElimination(
     parts.size,
@@ -125,5 +129,11 @@ export function finishNetwork(parts: Omit<Network, 'order' | 'places' | 'branchI
   const places = Int32Array.from(parts.branches, (x) =>
     x.a === x.b ? nowhere : x.a < 0 ? -1 - x.b : x.b < 0 ? -1 - x.a : order.slotOf(x.a, x.b),
   )
-  return { ...parts, order, places, branchIndex: new Map(parts.branches.map((x, i) => [x.name, i])) }
+  return {
+    leaking: parts.size,
+    ...parts,
+    order,
+    places,
+    branchIndex: new Map(parts.branches.map((x, i) => [x.name, i])),
+  }
 }

@@ -56,7 +56,7 @@ export function netlistOf(given: Case, settled: Settled): SettledNetlist {
   })
   if (altered < 0 && z !== null)
     elements.push({ name: 'short', a: p + 1, b: q + 1, ohms: settled.severity, volts: 0 })
-  for (let unknown = 0; unknown < network.size; unknown++)
+  for (let unknown = 0; unknown < network.leaking; unknown++)
     elements.push({ name: `leak:${unknown}`, a: unknown + 1, b: 0, ohms: 1 / leakSiemens, volts: 0 })
   return {
     nets: network.size + 1,

@@ -169,7 +169,7 @@ export function stateKey(states: States): string {
 /** Factors the conductance matrix, leaving branch `without` out (−1: none). */
 function factorNetwork(network: Network, conductance: Float64Array, without: number, leak: number): Factor {
   const edge = new Float64Array(network.order.neighbour.length)
-  const toChassis = new Float64Array(network.size).fill(leak)
+  const toChassis = new Float64Array(network.size).fill(leak, 0, network.leaking)
   const { places } = network
   for (let i = 0; i < places.length; i++) {
     const place = places[i]!
