@@ -1,99 +1,149 @@
-import type { CodeEntry } from '../document/circuit-schema'
-import { noAlteration } from '../solver/alteration'
-import { drivingStudies } from '../solver/blown-fuses'
-import { Case } from '../solver/case'
-import { inputSees } from '../solver/operating-point'
+import type { Circuit, CodeEntry } from '../document/circuit-schema'
+import { parseTroubleCode, type TroubleCode } from '../tables/trouble-code'
+import { causeOf, failureTypeView, type Cause, type FailureTypeView } from './failure-type-view'
 import type { FaultModel } from './fault-model'
+import type { Hypothesis } from './hypothesis'
+import { moduleViews, type View } from './module-view'
+import { nothingReported, type ReportEvidence } from './report-evidence'
+
+export type CodeEvidence = ReportEvidence
 
 /** About one code in fifty points wrong (engine's page; no published figure found). */
 const pointsWrong = 0.02
-/** Where the module's own view of the circuit says nothing, its document's list of places is a softer hint. */
-const unlisted = 0.1
-
-/** ln of the probability of the codes that are set. Cells in the order of the model's hypotheses. */
-export interface CodeEvidence {
-  good: number
-  cells: Float64Array[]
-}
+/** A module sees a level, and takes a parted wire for a joined one of the same level this often (a guess). */
+const mistaken = 0.3
+/** Where the module's own view says nothing of a listed place, the list itself is a softer hint. */
+const unseen = 0.1
 
 /**
- * Codes as evidence through the module's own view: a fault sets a code when it changes an input's
- * level, in some driving condition, in a way that a fault of the places listed with the code does,
- * and that its failure type names. Evidence, not a filter: nothing is cleared by a code. Null when
- * none of the codes is described in the circuit.
+ * Codes as evidence through the module's own view: a fault sets a code when it changes one of the module's pins, in
+ * some driving condition, as a fault of the places listed with the code does and as its failure type names.
+ * Evidence, not a filter: nothing is cleared by a code. Null when none of the codes says anything of this circuit.
  */
 export function codeEvidence(model: FaultModel, codes: readonly string[]): CodeEvidence | null {
-  const entries = model.circuit.codes.filter(
-    (entry) => entry.sites.length > 0 && codes.some((code) => names(code, entry)),
-  )
-  if (entries.length === 0) return null
-  const changes = model.inputChanges(() => findInputChanges(model))
-  const found: CodeEvidence = {
-    good: 0,
-    cells: model.hypotheses.map((h) => new Float64Array(h.cells.length)),
-  }
-  for (const entry of entries) {
-    const watched = new Set<string>()
-    model.hypotheses.forEach((hypothesis, h) => {
-      if (!entry.sites.includes(hypothesis.site)) return
-      for (const cell of changes[h]!)
-        for (const change of cell) if (isOfType(change, entry.failureType)) watched.add(change)
-    })
+  const told = [...new Set(codes)].flatMap((text) => {
+    const code = parseTroubleCode(text)
+    const entries = code ? entriesOf(model.circuit, code) : []
+    return code && entries.length > 0 ? [entries.map((entry) => setBy(model, entry, code))] : []
+  })
+  const speaking = told.filter((entries) => entries.some((entry) => entry !== null))
+  if (speaking.length === 0) return null
+  const found = nothingReported(model)
+  for (const entries of speaking) {
     found.good += Math.log(pointsWrong)
-    model.hypotheses.forEach((hypothesis, h) => {
-      const listed = entry.sites.includes(hypothesis.site)
-      hypothesis.cells.forEach((_, c) => {
-        const sets = watched.size > 0 ? changes[h]![c]!.some((change) => watched.has(change)) : listed
-        found.cells[h]![c]! += Math.log(sets ? 1 - pointsWrong : watched.size > 0 ? pointsWrong : unlisted)
-      })
-    })
+    // A code without its type stands for any one of its entries.
+    found.cells.forEach((cells, h) =>
+      cells.forEach((_, c) => {
+        cells[c]! += Math.log(Math.max(...entries.map((entry) => entry?.[h]![c] ?? pointsWrong)))
+      }),
+    )
   }
   return found
 }
 
-/** "B1042" names every entry of that code, "B1042-13" the one with its failure type, or one without any. */
-function names(code: string, entry: CodeEntry): boolean {
-  const [plain, type] = code.split('-')
-  return (
-    entry.code === plain &&
-    (type === undefined || entry.failureType === undefined || entry.failureType === type)
+/** The entries a code names: those of its failure type, else those without one, else every entry of that code. */
+function entriesOf(circuit: Circuit, { code, failureType }: TroubleCode): CodeEntry[] {
+  const same = circuit.codes.filter((entry) => entry.code === code)
+  if (failureType === null) return same
+  const exact = same.filter((entry) => entry.failureType === failureType)
+  if (exact.length > 0) return exact
+  const open = same.filter((entry) => entry.failureType === undefined)
+  return open.length > 0 ? open : same
+}
+
+/** Probability that each cell sets this code; null when its failure type says nothing of the circuit. */
+function setBy(model: FaultModel, entry: CodeEntry, { failureType }: TroubleCode): Float64Array[] | null {
+  const type = failureTypeView(failureType ?? entry.failureType ?? null)
+  const listed = new Set(entry.sites)
+  switch (type.of) {
+    case 'nothing':
+      return null
+    case 'places':
+      return listed.size === 0 ? null : setByPlaces(model, type, listed)
+    case 'pin':
+      return setByPin(model, type, listed, entry.code.startsWith('U'))
+  }
+}
+
+function setByPin(
+  model: FaultModel,
+  type: Extract<FailureTypeView, { of: 'pin' }>,
+  listed: ReadonlySet<string>,
+  network: boolean,
+): Float64Array[] | null {
+  const views = moduleViews(model)
+  const pins = pinsOf(model.circuit, listed)
+  // A network code is set by the others when a module does not answer.
+  const isNamed = ({ point, aspect }: View, cause: Cause) =>
+    aspect === 'asleep' ? network : type[cause].includes(aspect) && (pins.size === 0 || pins.has(point))
+  const key = (view: View) => `${view.point} ${view.aspect} ${view.condition}`
+  /** Views that a fault of a listed place gives, by whether it parts or joins. */
+  const watched = { parted: new Set<string>(), joined: new Set<string>() }
+  const seen = new Set<string>()
+  model.hypotheses.forEach(({ site, mode }, h) => {
+    if (listed.size > 0 && !listed.has(site)) return
+    const cause = causeOf(mode)
+    for (const cell of views[h]!)
+      for (const view of cell)
+        if (isNamed(view, cause)) {
+          watched[cause].add(key(view))
+          seen.add(site)
+        }
+  })
+  if (seen.size === 0 && listed.size === 0) return null
+  // With no place listed, any pin may be meant: that says less.
+  const not = listed.size > 0 && seen.size > 0 ? pointsWrong : unseen
+  return model.hypotheses.map(({ site, mode, cells }, h) => {
+    const cause = causeOf(mode)
+    const other = cause === 'parted' ? 'joined' : 'parted'
+    const onList = listed.has(site)
+    const ofList = type[cause].length > 0 ? 1 - pointsWrong : mistaken
+    return Float64Array.from(cells, (_, c) => {
+      const keys = views[h]![c]!.map(key)
+      if (keys.some((view) => watched[cause].has(view))) return 1 - pointsWrong
+      if (keys.some((view) => watched[other].has(view))) return mistaken
+      if (onList && seen.size === 0) return ofList
+      return onList && !seen.has(site) ? unseen : not
+    })
+  })
+}
+
+/** By the list, whatever the pins show; a module's inside only by its own pins and itself. */
+function setByPlaces(
+  model: FaultModel,
+  type: Extract<FailureTypeView, { of: 'places' }>,
+  listed: ReadonlySet<string>,
+): Float64Array[] {
+  const views = type.asleep ? moduleViews(model) : null
+  const modules = new Set([...pinsOf(model.circuit, listed)].map((point) => point.split('.')[0]!))
+  for (const site of listed) if (site.startsWith('module:')) modules.add(site.slice('module:'.length))
+  const meant = ({ site }: Hypothesis) =>
+    type.inside
+      ? (site.startsWith('pin:') || site.startsWith('module:')) &&
+        (modules.size === 0 || modules.has(site.slice(site.indexOf(':') + 1).split('.')[0]!))
+      : listed.has(site)
+  return model.hypotheses.map((hypothesis, h) =>
+    Float64Array.from(hypothesis.cells, (_, c) =>
+      meant(hypothesis) || views?.[h]![c]!.some((view) => view.aspect === 'asleep')
+        ? 1 - pointsWrong
+        : unseen,
+    ),
   )
 }
 
-/**
- * Failure types of SAE J2012, electrical group: 11 and 14 speak of a line held low (14 also of an open
- * one), 12 and 15 of one held high (15 also of an open one); the others may be either.
- */
-function isOfType(change: string, failureType: string | undefined): boolean {
-  if (failureType === '11' || failureType === '14') return change.endsWith('low')
-  if (failureType === '12' || failureType === '15') return change.endsWith('high')
-  return true
-}
-
-/** Per hypothesis and cell: "condition input level" for every input whose level differs from the good circuit's. */
-function findInputChanges(model: FaultModel): string[][][] {
-  const { network } = model
-  if (network.inputs.length === 0) return model.hypotheses.map((h) => h.cells.map(() => []))
-  const studies = drivingStudies(network)
-  const good = studies.map((study) => {
-    const given = new Case(study, noAlteration)
-    const settled = given.settle(0)
-    return settled && network.inputs.map((_, i) => inputSees(given, settled, i))
-  })
-  return model.hypotheses.map((hypothesis) => {
-    const alteration = hypothesis.alteration(network)
-    const cases = studies.map((study) => new Case(study, alteration))
-    return hypothesis.cells.map(({ low, high }) => {
-      const severity = hypothesis.mode === 'weak' || low === 0 ? (low + high) / 2 : Math.sqrt(low * high)
-      return cases.flatMap((given, s) => {
-        const before = good[s]
-        const settled = before && given.settle(severity)
-        if (!settled) return []
-        return network.inputs.flatMap((_, i) => {
-          const level = inputSees(given, settled, i)
-          return level === before[i] ? [] : [`${s} ${i} ${level}`]
-        })
-      })
-    })
-  })
+/** Module pins that the listed places lie at: the pin itself, its contact, or a wire that ends there. */
+function pinsOf(circuit: Circuit, listed: ReadonlySet<string>): Set<string> {
+  const points = new Set(
+    circuit.nodes.flatMap((node) =>
+      node.kind === 'module' ? node.pins.map((pin) => `${node.id}.${pin.pin}`) : [],
+    ),
+  )
+  const wires = new Map(circuit.wires.map((wire) => [wire.id, wire]))
+  const found = new Set<string>()
+  for (const site of listed) {
+    const [what, rest = ''] = site.split(':')
+    const wire = what === 'wire' ? wires.get(rest) : undefined
+    for (const point of wire ? [wire.from, wire.to] : [rest]) if (points.has(point)) found.add(point)
+  }
+  return found
 }

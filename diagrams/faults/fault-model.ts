@@ -11,7 +11,6 @@ import { predictAll, studyFor, type PredictionTable } from './prediction-table'
 export class FaultModel {
   readonly network: Network
   readonly hypotheses: readonly Hypothesis[]
-  private changes: string[][][] | undefined
   private readonly tables = new Map<string, PredictionTable>()
   private readonly studies = new Map<string, Study>()
 
@@ -29,11 +28,6 @@ export class FaultModel {
       network: this.network,
       hypotheses: this.hypotheses.filter((hypothesis) => hypothesis.site === site),
     })
-  }
-
-  /** What each hypothesis changes at the modules' inputs; worked out once, when a code first asks. */
-  inputChanges(find: () => string[][][]): string[][][] {
-    return (this.changes ??= find())
   }
 
   table(reading: Reading | Probe): PredictionTable {
