@@ -30,6 +30,8 @@ const layers = {
   solver: ['tables', 'document'],
   faults: ['tables', 'document', 'solver'],
   planner: ['tables', 'document', 'solver', 'faults'],
+  distance: ['tables', 'document', 'solver'],
+  'fault-table': ['tables', 'document', 'solver'],
   drawing: ['tables', 'document'],
   samples: ['tables', 'document'],
 }

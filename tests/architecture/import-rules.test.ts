@@ -17,6 +17,13 @@ const planted: [rule: string, file: string, content: string, besides?: Record<st
   ['diagrams-solver', 'diagrams/solver/a.ts', `import '../faults/b'`, { 'diagrams/faults/b.ts': '' }],
   ['diagrams-faults', 'diagrams/faults/a.ts', `import '../planner/b'`, { 'diagrams/planner/b.ts': '' }],
   ['diagrams-planner', 'diagrams/planner/a.ts', `import '../drawing/b'`, { 'diagrams/drawing/b.ts': '' }],
+  ['diagrams-distance', 'diagrams/distance/a.ts', `import '../faults/b'`, { 'diagrams/faults/b.ts': '' }],
+  [
+    'diagrams-fault-table',
+    'diagrams/fault-table/a.ts',
+    `import '../faults/b'`,
+    { 'diagrams/faults/b.ts': '' },
+  ],
   ['diagrams-drawing', 'diagrams/drawing/a.ts', `import '../faults/b'`, { 'diagrams/faults/b.ts': '' }],
   ['diagrams-samples', 'diagrams/samples/a.ts', `import '../drawing/b'`, { 'diagrams/drawing/b.ts': '' }],
   ['diagrams-layers-only', 'lib/shared/a.ts', `import '@/diagrams/odd/b'`, { 'diagrams/odd/b.ts': '' }],
