@@ -23,13 +23,13 @@ const worthwhileBits = 0.05
  * what to read next. The request comes from `openEvaluationRequest`, so it is sound.
  */
 export function evaluate(request: EvaluationRequest): Answer {
-  const { circuit, readings, codes, priors } = request
+  const { circuit, readings, codes, priors, odds } = request
   const model = faultModelOf(circuit)
   const full = weighReadings(model, readings)
   const fits = [full.good, ...full.cells.flat()].some((cell) => fitsAll(full, cell, readings))
-  const aside = readingToSetAside(model, readings, full, fits, priors)
+  const aside = readingToSetAside(model, readings, full, fits, priors, odds)
   const evidence = aside === null ? full : weighReadings(model, readings, new Set([aside]))
-  const posterior = posteriorOf(model, evidence, priors, codeEvidence(model, codes))
+  const posterior = posteriorOf(model, evidence, priors, codeEvidence(model, codes), odds)
   const kept = aside === null ? readings : readings.filter((_, r) => r !== aside)
   const plan = planNext(model, posterior, kept)
 

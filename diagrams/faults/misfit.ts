@@ -3,6 +3,7 @@ import { nominalBatteryVolts } from '../solver/constants'
 import { chargingRange, restingRange } from './battery-range'
 import { fitsAll, weighReadings, type Evidence } from './evidence'
 import type { FaultModel } from './fault-model'
+import type { Odds } from './odds-schema'
 import { posteriorOf } from './posterior'
 import type { PriorKind } from './request'
 import { windowsOf } from './tolerance-rule'
@@ -18,6 +19,7 @@ export function readingToSetAside(
   evidence: Evidence,
   fits: boolean,
   kind: PriorKind,
+  odds?: Odds,
 ): number | null {
   const above = readings.findIndex((reading) => isAboveSources(model, reading))
   if (above >= 0) return above
@@ -30,7 +32,13 @@ export function readingToSetAside(
   let best = candidates[0]!
   let bestLog = -Infinity
   for (const out of candidates) {
-    const { logEvidence } = posteriorOf(model, weighReadings(model, readings, new Set([out])), kind)
+    const { logEvidence } = posteriorOf(
+      model,
+      weighReadings(model, readings, new Set([out])),
+      kind,
+      null,
+      odds,
+    )
     if (logEvidence > bestLog) {
       bestLog = logEvidence
       best = out

@@ -2,6 +2,7 @@ import type { CodeEvidence } from './code-evidence'
 import type { Evidence } from './evidence'
 import type { FaultModel } from './fault-model'
 import type { Hypothesis } from './hypothesis'
+import type { Odds } from './odds-schema'
 import { modeWeight, noFaultPrior } from './priors'
 import type { PriorKind } from './request'
 
@@ -19,8 +20,9 @@ export function posteriorOf(
   evidence: Evidence,
   kind: PriorKind,
   codes: CodeEvidence | null = null,
+  odds?: Odds,
 ): Posterior {
-  const logPrior = logPriors(model, kind)
+  const logPrior = logPriors(model, kind, odds)
   const logNoFault = model.hypotheses.length === 0 ? 0 : Math.log(noFaultPrior)
   const logs = model.hypotheses.map((hypothesis, h) =>
     Float64Array.from(
@@ -41,7 +43,7 @@ export function posteriorOf(
 }
 
 /** ln of each cell's share of the 0.9 that faults have before any reading. */
-function logPriors(model: FaultModel, kind: PriorKind): Float64Array[] {
+function logPriors(model: FaultModel, kind: PriorKind, odds?: Odds): Float64Array[] {
   // A mode's odds are spread over those of its severities that show.
   const shareOf = new Map<string, number>()
   const key = (h: Hypothesis) => `${h.site} ${h.mode} ${h.other} ${h.wire}`
@@ -50,7 +52,7 @@ function logPriors(model: FaultModel, kind: PriorKind): Float64Array[] {
       shareOf.set(key(hypothesis), (shareOf.get(key(hypothesis)) ?? 0) + cell.share)
   const weights = model.hypotheses.map((hypothesis) => {
     const all = shareOf.get(key(hypothesis))!
-    const weight = modeWeight(model.circuit, hypothesis.site, hypothesis.mode, kind) * hypothesis.part
+    const weight = modeWeight(model.circuit, hypothesis.site, hypothesis.mode, kind, odds) * hypothesis.part
     return Float64Array.from(hypothesis.cells, (cell) => (all > 0 ? (weight * cell.share) / all : 0))
   })
   let total = 0

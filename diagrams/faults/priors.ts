@@ -1,46 +1,51 @@
 import type { Circuit } from '../document/circuit-schema'
 import type { Mode } from '../document/sites'
+import type { Odds } from './odds-schema'
+import { partClassOf, type PartClass } from './part-class'
 import type { PriorKind } from './request'
 
 /** Share of vehicles with a complaint and nothing wrong in this circuit. A guess, as are all weights here. */
 export const noFaultPrior = 0.1
 
 /**
- * Relative odds of one mode of one site. `trade`: contacts over wires, opens over shorts; weights of
- * the engine's page (no published frequencies found; common practice, no source). `even`: all alike.
+ * The `trade` table: relative odds of one way to fail at one place. Contacts over wires, opens over shorts; weights of the
+ * engine's page (no published frequencies found; common practice, no source).
  */
-export function modeWeight(circuit: Circuit, site: string, mode: Mode, kind: PriorKind): number {
+export const tradeTable: Readonly<Record<PartClass, Readonly<Partial<Record<Mode, number>>>>> = {
+  wire: {
+    open: 1,
+    resistive: 0.7,
+    'short-to-ground': 0.25,
+    'short-to-supply': 0.25,
+    'short-to-wire': 0.25,
+  },
+  contact: { open: 3, resistive: 4 },
+  splice: { open: 0.5, resistive: 1 },
+  ground: { open: 1, resistive: 3 },
+  fuse: { blown: 1.5, resistive: 0.5 },
+  load: { open: 3, resistive: 0.3, shorted: 0.3 },
+  resistor: { open: 0.5, resistive: 0.5, shorted: 0.3 },
+  diode: { open: 0.5, resistive: 0.5, shorted: 0.3 },
+  'switch-contact': { 'stuck-open': 1, 'stuck-closed': 0.5, resistive: 1.2 },
+  'relay-coil': { open: 1, shorted: 0.3 },
+  'relay-contact': { 'stuck-open': 1.2, 'stuck-closed': 0.5, resistive: 1 },
+  pin: { open: 0.5, resistive: 0.5, dead: 0.6, 'stuck-on': 0.6 },
+  module: { dead: 0.3 },
+  battery: { open: 0.5, resistive: 0.5, shorted: 0.3, weak: 1 },
+  feed: { open: 0.5, resistive: 0.5 },
+}
+
+/** Weight of a way to fail of a class: as the organisation found it, else as the trade has it. */
+export function classWeight(name: PartClass, mode: Mode, odds?: Odds): number {
+  return odds?.classes[name]?.[mode] ?? tradeTable[name][mode] ?? 0.5
+}
+
+/**
+ * Relative odds of one mode of one site. `trade`: those of the organisation, where given, over the trade's own;
+ * `even`: all alike.
+ */
+export function modeWeight(circuit: Circuit, site: string, mode: Mode, kind: PriorKind, odds?: Odds): number {
   if (kind === 'even') return 1
-  const [what, rest = ''] = site.split(':')
-  const nodeId = rest.split('.')[0]!
-  switch (what) {
-    case 'wire':
-      return mode === 'open' ? 1 : mode === 'resistive' ? 0.7 : 0.25
-    case 'contact':
-      return mode === 'open' ? 3 : 4
-    case 'module':
-      return 0.3
-    case 'pin':
-      return mode === 'open' || mode === 'resistive' ? 0.5 : 0.6
-  }
-  const node = circuit.nodes.find((n) => n.id === nodeId)
-  switch (node?.kind) {
-    case 'load':
-      return mode === 'open' ? 3 : 0.3
-    case 'fuse':
-      return mode === 'blown' ? 1.5 : 0.5
-    case 'relay':
-      if (rest.endsWith('.coil')) return mode === 'open' ? 1 : 0.3
-      return mode === 'stuck-open' ? 1.2 : mode === 'resistive' ? 1 : 0.5
-    case 'ground':
-      return mode === 'open' ? 1 : 3
-    case 'switch':
-      return mode === 'stuck-open' ? 1 : mode === 'resistive' ? 1.2 : 0.5
-    case 'splice':
-      return mode === 'open' ? 0.5 : 1
-    case 'battery':
-      return mode === 'weak' ? 1 : mode === 'shorted' ? 0.3 : 0.5
-    default:
-      return mode === 'shorted' ? 0.3 : 0.5
-  }
+  const own = odds && Object.hasOwn(odds.sites, site) ? odds.sites[site]![mode] : undefined
+  return own ?? classWeight(partClassOf(circuit, site), mode, odds)
 }

@@ -4,6 +4,7 @@ import { circuitSchema, type Circuit } from '../document/circuit-schema'
 import { problemsOf, type Opened } from '../document/open-circuit'
 import { readingSchema, type Reading } from '../document/reading-schema'
 import { refuseReading } from '../solver/legal-reading'
+import { checkOdds, oddsSchema } from './odds-schema'
 
 export const priorKinds = ['trade', 'even'] as const
 export type PriorKind = (typeof priorKinds)[number]
@@ -21,6 +22,8 @@ export const evaluationRequestSchema = z.strictObject({
     .max(100)
     .default([]),
   priors: z.enum(priorKinds).default('trade'),
+  /** Over the trade's table, which it leaves as it is where absent; `even` asks neither. */
+  odds: oddsSchema.optional(),
 })
 export type EvaluationRequest = z.infer<typeof evaluationRequestSchema>
 
@@ -33,7 +36,10 @@ export function openEvaluationRequest(input: unknown): Opened<EvaluationRequest>
     ...problem,
     path: problem.path ? `circuit.${problem.path}` : 'circuit',
   }))
-  if (problems.length === 0) problems.push(...checkReadings(request.circuit, request.readings))
+  if (problems.length === 0) {
+    problems.push(...checkReadings(request.circuit, request.readings))
+    if (request.odds) problems.push(...checkOdds(request.circuit, request.odds))
+  }
   return problems.length === 0 ? { ok: true, value: request } : { ok: false, problems }
 }
 
