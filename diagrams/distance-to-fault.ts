@@ -108,7 +108,7 @@ export function distanceToFault(request: DistanceRequest): FoundDistance {
       faultOhms: found.faultOhms,
       useful: words.useful,
       says: beside && words.useful ? `${words.says} This takes both wires to run side by side.` : words.says,
-      readings: [...new Set(taken.used)],
+      readings: request.readings.map((reading) => reading.id).filter((id) => taken.used.includes(id)),
     },
   }
 }

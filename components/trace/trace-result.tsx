@@ -6,6 +6,7 @@ import type { Answer, NextReading } from '@/diagrams/faults/answer'
 import { conditionWords, measuredWords, valueWords } from '@/lib/client/meter/reading-words'
 import { Button } from '../ui/button'
 import { RuledLines } from '../ui/ruled-lines'
+import { DistanceToFault } from './distance/distance-to-fault'
 import { PngButton } from './export/png-button'
 import { NextSplit } from './next-split'
 import { modeWords } from './site-words'
@@ -49,6 +50,7 @@ export function TraceResult({
             <Button look="filled" className="flex-1" onClick={onFinish}>
               {trace.finding ? 'Prove the repair' : 'Record and prove the repair'}
             </Button>
+            <DistanceToFault circuit={circuit} readings={readings} answer={answer} />
             {png}
           </>
         }
