@@ -14,9 +14,11 @@ export function useTraceSession(initial: Trace) {
   const { trace, readings } = work
   // The edition a trace was started on never changes, so the circuit keeps its identity over every answer.
   const [circuit] = useState(initial.circuit.document)
+  // What the shop found in other traces meanwhile is for the next visit: odds do not change under one's hands.
+  const [odds] = useState(initial.odds)
   const codesKey = trace.codes.join(' ')
   const codes = useMemo(() => (codesKey === '' ? [] : codesKey.split(' ')), [codesKey])
-  const { answer, current, failed } = useAnswer(circuit, readings, codes)
+  const { answer, current, failed } = useAnswer(circuit, readings, codes, odds)
   const started = readings.length > 0
   const done = trace.state === 'done'
 

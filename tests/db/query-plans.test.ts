@@ -71,6 +71,8 @@ describe('the plans of the searches', () => {
       await sql`insert into traces select organisation_id, k.id, k.id, 1, created_by, '', '', '[]', null,
         case when n % 100 = 0 then 'open' else 'done' end, updated_at, updated_at
         from circuits c join copies k on k.id = c.id`.execute(trx)
+      await sql`insert into trace_findings select organisation_id, id, 'contact:c7-2', 'open', '', true, started_by, started_at
+        from traces where state = 'done'`.execute(trx)
     })
     await sql`analyze`.execute(database.owner)
   }
@@ -129,6 +131,12 @@ describe('the plans of the searches', () => {
       (context) => listTraces(context, { open: '1' }),
       /"traces"/,
       /traces_by_state.*\n.*Index Cond: .*state = /,
+    ],
+    [
+      'what was found lately',
+      (context) => listTraces(context, { open: '1' }),
+      /trace_findings/,
+      /Limit[^]*traces_by_state[^]*Index Cond: .*state = /,
     ],
   ]
   for (const [name, work, pick, index] of cases)

@@ -1,12 +1,14 @@
 import type { Circuit } from '@/diagrams/document/circuit-schema'
 import type { Reading } from '@/diagrams/document/reading-schema'
 import type { Answer } from '@/diagrams/faults/answer'
+import type { Odds } from '@/diagrams/faults/odds-schema'
 
 export interface Question {
   circuit: Circuit
   readings: Reading[]
   codes: string[]
   priors: 'trade' | 'even'
+  odds?: Odds
 }
 
 /** To the worker and back; the number tells the newest question from one that is no longer asked. */

@@ -2,6 +2,7 @@ import { useEffect, useMemo, useRef, useState } from 'react'
 import type { Circuit } from '@/diagrams/document/circuit-schema'
 import type { Reading } from '@/diagrams/document/reading-schema'
 import type { Answer } from '@/diagrams/faults/answer'
+import type { Odds } from '@/diagrams/faults/odds-schema'
 import { Evaluator, type Thread } from './evaluator'
 import type { Question } from './messages'
 import { numberedReadings } from './numbered-readings'
@@ -22,10 +23,17 @@ export function useAnswer(
   circuit: Circuit,
   readings: readonly Reading[],
   codes: readonly string[],
+  odds: Odds | null,
 ): AnswerState {
   const question = useMemo<Question>(
-    () => ({ circuit, readings: numberedReadings(readings), codes: [...codes], priors: 'trade' }),
-    [circuit, readings, codes],
+    () => ({
+      circuit,
+      readings: numberedReadings(readings),
+      codes: [...codes],
+      priors: 'trade',
+      ...(odds ? { odds } : {}),
+    }),
+    [circuit, readings, codes, odds],
   )
   const [given, setGiven] = useState<{ question: Question; answer: Answer } | null>(null)
   const [failure, setFailure] = useState<{ question: Question; message: string } | null>(null)

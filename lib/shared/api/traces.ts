@@ -2,6 +2,7 @@ import { z } from 'zod'
 import { circuitSchema } from '@/diagrams/document/circuit-schema'
 import { readingSchema } from '@/diagrams/document/reading-schema'
 import { modes } from '@/diagrams/document/sites'
+import { oddsSchema } from '@/diagrams/faults/odds-schema'
 
 const uuid = (field: string) => z.uuid({ error: `${field}: expected a UUID` })
 const text = (field: string, most: number) =>
@@ -77,6 +78,8 @@ export const traceSchema = z.object({
   cautionsAnsweredAt: z.string().nullable(),
   finding: finding.nullable(),
   proof: proof.nullable(),
+  /** What the organisation found so far, for the evaluator; null while there is nothing. */
+  odds: oddsSchema.nullable().default(null),
   /** Done once a proof says that it works. */
   state: z.enum(traceStates),
   by: z.string(),

@@ -28,6 +28,7 @@ function makeTrace(more: Partial<Trace> = {}): Trace {
     cautionsAnsweredAt: null,
     finding: null,
     proof: null,
+    odds: null,
     state: 'open',
     by: 'Noor',
     mine: true,

@@ -4,6 +4,7 @@ import { findFinding, findProof, findTrace } from '@/db/queries/traces'
 import type { Trx } from '@/db/tables/database'
 import type { Trace } from '@/lib/shared/api/traces'
 import type { Actor } from '../../context'
+import { organisationFindings, organisationOdds } from './organisation-odds'
 
 /** A whole trace as the actor sees it. */
 export async function describeTrace(trx: Trx, actor: Actor, id: string): Promise<Trace> {
@@ -12,13 +13,10 @@ export async function describeTrace(trx: Trx, actor: Actor, id: string): Promise
   if (!head) throw new Error(`trace ${id} is not there although it was just found`)
   const finding = await findFinding(trx, of, id)
   const proof = await findProof(trx, of, id)
+  const document = await loadRevision(trx, of, head.circuit_id, head.revision)
   return {
     id,
-    circuit: {
-      id: head.circuit_id,
-      revision: head.revision,
-      document: await loadRevision(trx, of, head.circuit_id, head.revision),
-    },
+    circuit: { id: head.circuit_id, revision: head.revision, document },
     vehicle: head.vehicle,
     complaint: head.complaint,
     codes: head.codes,
@@ -34,6 +32,7 @@ export async function describeTrace(trx: Trx, actor: Actor, id: string): Promise
         }
       : null,
     proof: proof ? { reading: proof.reading, works: proof.works, at: proof.proved_at.toISOString() } : null,
+    odds: organisationOdds(await organisationFindings(trx, of, id), { id: head.circuit_id, document }),
     state: head.state,
     by: head.starter ?? '',
     mine: head.started_by === actor.userId,

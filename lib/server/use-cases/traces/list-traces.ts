@@ -9,6 +9,7 @@ import { type Result, succeed } from '@/lib/shared/result'
 import type { Context } from '../../context'
 import { inTransaction } from '../in-transaction'
 import { parseInput } from '../parse'
+import { organisationFindings, organisationOdds } from './organisation-odds'
 import { traceProgress } from './trace-progress'
 
 const most = { rows: 100, evaluated: 12 } as const
@@ -28,17 +29,17 @@ export async function listTraces(context: Context, input: unknown): Promise<Resu
     })
     const rows: { head: (typeof heads)[number]; work: Omit<EvaluationRequest, 'codes' | 'priors'> | null }[] =
       []
+    const findings = await organisationFindings(trx, actor.organisationId)
     for (const head of heads) {
       const evaluated = head.state === 'open' && rows.length < most.evaluated
-      rows.push({
-        head,
-        work: evaluated
-          ? {
-              circuit: await loadRevision(trx, actor.organisationId, head.circuit_id, head.revision),
-              readings: await listReadings(trx, actor.organisationId, head.id),
-            }
-          : null,
-      })
+      if (!evaluated) {
+        rows.push({ head, work: null })
+        continue
+      }
+      const circuit = await loadRevision(trx, actor.organisationId, head.circuit_id, head.revision)
+      const odds = organisationOdds(findings, { id: head.circuit_id, document: circuit })
+      const readings = await listReadings(trx, actor.organisationId, head.id)
+      rows.push({ head, work: { circuit, readings, ...(odds ? { odds } : {}) } })
     }
     return succeed(rows)
   })
