@@ -5,6 +5,7 @@ import { problemsOf, type Opened } from '../document/open-circuit'
 import { readingSchema, type Reading } from '../document/reading-schema'
 import { refuseReading } from '../solver/legal-reading'
 import { checkOdds, oddsSchema } from './odds-schema'
+import { checkSymptoms, symptomsSchema } from './symptom-schema'
 
 export const priorKinds = ['trade', 'even'] as const
 export type PriorKind = (typeof priorKinds)[number]
@@ -24,6 +25,8 @@ export const evaluationRequestSchema = z.strictObject({
   priors: z.enum(priorKinds).default('trade'),
   /** Over the trade's table, which it leaves as it is where absent; `even` asks neither. */
   odds: oddsSchema.optional(),
+  /** What the driver tells of it. */
+  symptoms: symptomsSchema.optional(),
 })
 export type EvaluationRequest = z.infer<typeof evaluationRequestSchema>
 
@@ -38,6 +41,7 @@ export function openEvaluationRequest(input: unknown): Opened<EvaluationRequest>
   }))
   if (problems.length === 0) {
     problems.push(...checkReadings(request.circuit, request.readings))
+    if (request.symptoms) problems.push(...checkSymptoms(request.circuit, request.symptoms))
     if (request.odds) problems.push(...checkOdds(request.circuit, request.odds))
   }
   return problems.length === 0 ? { ok: true, value: request } : { ok: false, problems }
