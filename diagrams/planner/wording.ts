@@ -1,7 +1,7 @@
 import type { Circuit } from '../document/circuit-schema'
 import type { Condition } from '../document/condition-schema'
-import { positionsIn } from '../document/condition'
-import { connectorName, nodeName, pointName } from '../document/points'
+import { conditionParts } from '../document/condition-words'
+import { nodeName, pointName } from '../document/points'
 import type { Probe } from '../document/reading-schema'
 import { siteName } from '../document/sites'
 import type { NextOutcome } from '../faults/answer'
@@ -23,20 +23,9 @@ function short(value: number): string {
   return size >= 100 ? value.toFixed(0) : size >= 9.95 ? value.toFixed(1) : value.toFixed(2)
 }
 
-/** "Key on, hold Button pressed, C7 unplugged", empty for everything plugged in and at rest. */
+/** "Key on, C7 unplugged", empty for everything plugged in and at rest. */
 export function conditionWords(circuit: Circuit, condition: Condition): string {
-  const positions = positionsIn(circuit, condition.controls)
-  const parts = circuit.controls
-    .filter((control) => positions[control.id] !== control.rest)
-    .map((control) => `${control.label || control.id} ${positions[control.id]}`)
-  if (!condition.battery) parts.push('battery disconnected')
-  for (const id of condition.unplugged) {
-    const connector = circuit.connectors.find((c) => c.id === id)
-    const node = circuit.nodes.find((n) => n.id === id)
-    parts.push(connector ? `${connectorName(connector)} unplugged` : `${node ? nodeName(node) : id} pulled`)
-  }
-  if (condition.charging) parts.push('engine running')
-  return parts.join(', ')
+  return conditionParts(circuit, condition).join(', ')
 }
 
 /** "C7 cavity 2, dash side. Back-probe volts to chassis. Key on. 12.6 V leaves 2, 0 V leaves 5. About 3 minutes." */
