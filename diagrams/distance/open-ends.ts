@@ -1,8 +1,8 @@
 import type { Circuit, Wire } from '../document/circuit-schema'
 import type { Condition } from '../document/condition-schema'
 import { hasContact, portsOf, splitEnd } from '../document/ports'
+import { theveninOhms } from '../solver/case'
 import { openCase } from '../solver/faulted-case'
-import { theveninOhms } from '../solver/meter'
 
 /** More than this between a wire's end and anything else, and the end is open: no wire has a millionth of it. */
 const openFromOhms = 1e6

@@ -1,4 +1,4 @@
-import { coilVolts, elementVolts, voltsBetween, type Case, type Settled } from '../solver/case'
+import { coilVolts, diodeVolts, supplyParts, type Case, type Settled } from '../solver/case'
 
 /** Relays and modules are looked at a little eager and a little reluctant: all that tolerances can do to them. */
 export const eager = 0.89
@@ -15,9 +15,7 @@ export function isCertain(given: Case, settled: Settled): boolean {
   const far = (part: number) => part < 0.85 || part > 1.22
   return (
     relays.every((relay, i) => far(coilVolts(given, settled, i) / relay.pullIn)) &&
-    modules.every((module) =>
-      module.supplies.every((pin) => far(voltsBetween(settled, pin, module.innerGround) / module.runsFrom)),
-    ) &&
-    diodes.every((diode) => elementVolts(given, settled, diode.branch) < diode.volts / 2)
+    modules.every((_, i) => supplyParts(given, settled, i).every(far)) &&
+    diodes.every((diode, i) => diodeVolts(given, settled, i) < diode.volts / 2)
   )
 }

@@ -1,10 +1,11 @@
 import type { Probe } from '../document/reading-schema'
 import type { FaultModel } from '../faults/fault-model'
 import { alterationKey, noAlteration } from '../solver/alteration'
-import { at, branchAmps, Case, unitCurrent, voltsBetween, type Settled } from '../solver/case'
+import { at, branchAmps, Case, unitOfFault, voltsBetween, type Settled } from '../solver/case'
 import { deadVolts } from '../solver/constants'
-import { loadWorks } from '../solver/operating-point'
-import { Study, type Base } from '../solver/study'
+import { inputSees, loadWorks } from '../solver/operating-point'
+import type { Base } from '../solver/base'
+import { Study } from '../solver/study'
 import type { CandidateSet } from './candidates'
 import type { Particle } from './particles'
 
@@ -51,6 +52,7 @@ class ProbeReader {
   private readonly leads: (readonly [number, number])[]
   private readonly branches: number[]
   private readonly loads: number[]
+  private readonly inputs: number[]
   /** Thevenin resistance of every ohms probe in each base network, the fault not in it. */
   private readonly baseOhms = new WeakMap<Base, Float64Array>()
 
@@ -70,6 +72,9 @@ class ProbeReader {
     this.loads = probes.map((probe) =>
       probe.kind === 'works' ? network.loads.findIndex((l) => l.node === probe.node) : -1,
     )
+    this.inputs = probes.map((probe) =>
+      probe.kind === 'sees' ? network.inputs.findIndex((input) => input.point === probe.pin) : -1,
+    )
   }
 
   read(given: Case, settled: Settled, i: number): number {
@@ -83,24 +88,20 @@ class ProbeReader {
       case 'works':
         return loadWorks(given, settled, this.loads[i]!) ? 1 : 0
       case 'sees':
-        return Number.NaN
+        return inputSees(given, settled, this.inputs[i]!) === 'high' ? 1 : 0
     }
   }
 
-  /**
-   * From the resistance R of the whole network and z of the network without the altered branch:
-   * R + (z(a) − z(b))²·(g₀ − g) / ((1 + g₀·L)(1 + g·L)), g₀ and g the branch before and after.
-   */
+  /** From the resistance of the whole network and the volts that one ampere through the fault's place adds. */
   private ohms(settled: Settled, i: number): number {
     const [a, b] = this.leads[i]!
     if (Math.abs(voltsBetween(settled, a, b)) > deadVolts) return Number.NaN
-    const { located, siemens } = settled
+    const { located, unitSiemens } = settled
     const whole = this.wholeOhms(located.base)[i]!
-    if (located.z === null) return whole
-    const before = located.branch >= 0 ? 1 / located.ownOhms : 0
-    const moved = at(located.z, a) - at(located.z, b)
-    const L = located.loopOhms
-    return Math.max(0, whole + (moved * moved * (before - siemens)) / ((1 + before * L) * (1 + siemens * L)))
+    if (!located.touches) return whole
+    const z = unitOfFault(located)
+    const moved = at(z, a) - at(z, b)
+    return Math.max(0, whole - unitSiemens * moved * moved)
   }
 
   private wholeOhms(base: Base): Float64Array {
@@ -108,7 +109,7 @@ class ProbeReader {
     if (!found) {
       found = Float64Array.from(this.leads, ([a, b], i) => {
         if (this.probes[i]!.kind !== 'ohms') return 0
-        const y = unitCurrent(this.study.network.size, base.factor, a, b)
+        const y = base.unitOnce(a, b)
         return at(y, a) - at(y, b)
       })
       this.baseOhms.set(base, found)

@@ -22,7 +22,18 @@ export function wireOhms(wire: Wire): number {
   return wire.ohms ?? (copperOhmMm2PerMetre * wire.length) / wire.mm2
 }
 
-type Draft = Omit<Network, 'order' | 'places' | 'branchIndex' | 'leaking' | 'unknownOf' | 'middleOf'> & {
+type Draft = Omit<
+  Network,
+  | 'order'
+  | 'places'
+  | 'besides'
+  | 'watched'
+  | 'watchedPivots'
+  | 'branchIndex'
+  | 'leaking'
+  | 'unknownOf'
+  | 'middleOf'
+> & {
   unknownOf: Map<string, number>
   middleOf: Map<string, number>
 }
@@ -87,6 +98,7 @@ class NetworkBuilder {
         b,
         exact: false,
         supply: 'fixed',
+        varies: false,
         conducts: () => true,
         emf: () => 0,
         ...input,
@@ -158,6 +170,7 @@ class NetworkBuilder {
       case 'fuse': {
         const branch = this.branch(part, this.at(node, 'in'), this.at(node, 'out'), {
           ohms: fuseOhmAmps / node.amps,
+          varies: true,
           conducts: (s) => !pulled(s) && !s.forced.off.has(part),
         })
         this.draft.fuses.push({ node: node.id, branch, amps: node.amps })
@@ -207,6 +220,7 @@ class NetworkBuilder {
   private addSwitched(name: string, a: number, b: number, closed: When) {
     this.branch(name, a, b, {
       ohms: closedContactOhms,
+      varies: true,
       conducts: (s) => s.forced.on.has(name) || (!s.forced.off.has(name) && holds(closed, s.positions)),
     })
   }
@@ -221,6 +235,7 @@ class NetworkBuilder {
     const index = this.draft.diodes.length
     const branch = this.branch(name, anode, cathode, {
       ohms: diodeOhms,
+      varies: true,
       conducts: (s) => s.diodes[index]! && present(s),
       emf: (s) => (s.battery ? volts : 0),
     })
@@ -239,6 +254,7 @@ class NetworkBuilder {
     const contact = (pulledIn: boolean, port: string) =>
       this.branch(`${part}.contact/${port}`, this.at(node, '30'), this.at(node, port), {
         ohms: closedContactOhms,
+        varies: true,
         conducts: (s) => present(s) && s.relays[index] === pulledIn,
       })
     contact(true, '87')
@@ -286,29 +302,36 @@ class NetworkBuilder {
         case 'pull-up':
           this.branch(name, here, innerGround, {
             ohms: circuit.ohms,
+            varies: true,
             conducts: kept,
             emf: (s) => (awake(s) ? circuit.volts : 0),
           })
           input(circuit.volts / 2)
           break
         case 'pull-down':
-          this.branch(name, here, innerGround, { ohms: circuit.ohms, conducts: kept })
+          this.branch(name, here, innerGround, { ohms: circuit.ohms, varies: true, conducts: kept })
           input(6)
           break
         case 'low-side':
           this.branch(name, here, innerGround, {
             ohms: circuit.onOhms,
+            varies: true,
             conducts: (s) => driven(s, circuit.on),
           })
           break
         case 'high-side': {
           const from = inner.get(circuit.from ?? supplies[0]!.pin)!
-          this.branch(name, from, here, { ohms: circuit.onOhms, conducts: (s) => driven(s, circuit.on) })
+          this.branch(name, from, here, {
+            ohms: circuit.onOhms,
+            varies: true,
+            conducts: (s) => driven(s, circuit.on),
+          })
           break
         }
         case 'source':
           this.branch(name, here, innerGround, {
             ohms: circuit.ohms,
+            varies: true,
             conducts: kept,
             emf: (s) => (s.battery && driven(s, circuit.on) ? circuit.volts : 0),
           })

@@ -1,32 +1,42 @@
 import type { Alteration } from './alteration'
+import type { Base } from './base'
 import { nominalBatteryVolts } from './constants'
-import { solveInPlace, type Factor } from './factor'
-import { stateKey, type Base, type States, type Study } from './study'
+import type { States, Study } from './study'
+import { openUnit, takeOut } from './taken-out'
 
 /**
  * One state of a faulted network, ready for every severity.
  *
- * For a series fault the branch is taken out and put back as a conductance g ≥ 0 between its ends
- * p and q; for a short g is added between p and q. With z the volts for one ampere from q to p and
- * R = z(p) − z(q), the branch carries i = g·(Vpq − E)/(1 + g·R) and v = v₀ − i·z. Both terms of the
- * denominator are positive, so nothing cancels, also on floating parts.
+ * The fault changes one branch or adds one between p and q. With z the volts for one ampere from q
+ * to p, the volts are those of the base less some amperes times z.
+ *
+ * In series with a branch of own resistance r, severity s: with R and V the ohms and volts between p
+ * and q once the branch is taken out, it carries i = (V − E)/(r + s + R), and the base
+ * lacks −i·s/(r + R). R, V and z are those of the network with the branch taken out, from sums of
+ * positive numbers (`takeOut`), so nothing cancels, also where the branch is the only way and the
+ * rest floats. Across p and q: i = V/(s + R), with V, R and z of the base itself.
  */
 export interface Located {
   base: Base
-  /** The network without the altered branch; null where it follows from the whole one. */
-  factor: Factor | null
+  /** False where the fault touches nothing here: base and located are one. */
+  touches: boolean
   p: number
   q: number
-  z: Float64Array | null
-  loopOhms: number
-  /** The altered branch, or −1. */
+  /** The altered branch, or −1 for an added one. */
   branch: number
   /** Ohm of the altered branch itself; 0 for a short. */
   ownOhms: number
-  emfBattery: number
-  emfFixed: number
-  voltsBattery: Float64Array
-  voltsFixed: Float64Array
+  /** R, ohm. */
+  loopOhms: number
+  /** V − E from the battery's sources and from fixed ones. */
+  drivenBattery: number
+  drivenFixed: number
+  /** Volts of every watched pair in the base, and what one ampere from q to p adds. */
+  watchedBattery: Float64Array
+  watchedFixed: Float64Array
+  watchedUnit: Float64Array | null
+  /** z, once it has been asked for. */
+  z: Float64Array | null
 }
 
 /** A faulted network with its parts settled; its volts are worked out where they are asked for. */
@@ -40,13 +50,18 @@ export interface Settled {
   /** The battery's volts over those drawn. */
   scale: number
   /** Amperes through the altered or added element, from the battery's sources and from fixed ones. */
+  throughBattery: number
+  throughFixed: number
+  /** Amperes that the base lacks between p and q. */
   ampsBattery: number
   ampsFixed: number
+  /** Siemens κ with which volts y for one ampere from b to a follow from the base: y − κ·(z(a) − z(b))·z. */
+  unitSiemens: number
 }
 
 /** A study with one fault in it. Settles for any severity; factorisations are shared between severities. */
 export class Case {
-  private readonly located = new Map<string, Located>()
+  private readonly located = new Map<States, Located>()
   /** Every state passed through in the last settling, in order, for fuses that a chatter would blow. */
   passed: Settled[] = []
 
@@ -55,10 +70,13 @@ export class Case {
     readonly alteration: Alteration,
   ) {}
 
-  locate(states: States): Located {
-    const key = stateKey(states)
-    let found = this.located.get(key)
-    if (!found) this.located.set(key, (found = locate(this.study, this.alteration, states)))
+  locate(given: States): Located {
+    let found = this.located.get(given)
+    if (!found) {
+      const states = this.study.same(given)
+      found = this.located.get(states) ?? locate(this.study, this.alteration, states)
+      this.located.set(states, found)
+    }
     return found
   }
 
@@ -69,19 +87,35 @@ export class Case {
   /** Solves with the parts held in the given states. */
   solve(states: States, severity: number, scale: number): Settled {
     const located = this.locate(states)
-    const { z, loopOhms, p, q } = located
-    const own = located.ownOhms + severity
-    const siemens = z === null ? 0 : 1 / own
-    const ampsFor = (volts: Float64Array, emf: number): number =>
-      z === null ? 0 : (siemens * (at(volts, p) - at(volts, q) - emf)) / (1 + siemens * loopOhms)
+    const { touches, branch, ownOhms, loopOhms: R } = located
+    if (!touches)
+      return {
+        states,
+        located,
+        siemens: 0,
+        severity,
+        scale,
+        throughBattery: 0,
+        throughFixed: 0,
+        ampsBattery: 0,
+        ampsFixed: 0,
+        unitSiemens: 0,
+      }
+    const around = 1 / (ownOhms + severity + R)
+    const throughBattery = located.drivenBattery * around
+    const throughFixed = located.drivenFixed * around
+    const lacks = branch < 0 ? 1 : -severity / (ownOhms + R)
     return {
       states,
       located,
-      siemens,
+      siemens: 1 / (ownOhms + severity),
       severity,
       scale,
-      ampsBattery: ampsFor(located.voltsBattery, located.emfBattery),
-      ampsFixed: ampsFor(located.voltsFixed, located.emfFixed),
+      throughBattery,
+      throughFixed,
+      ampsBattery: lacks * throughBattery,
+      ampsFixed: lacks * throughFixed,
+      unitSiemens: lacks * around,
     }
   }
 
@@ -91,35 +125,47 @@ export class Case {
    * ask for: what real parts, a little off the drawing, might do.
    */
   settle(severity: number, scale = this.scaleFor(severity), reluctance = 1): Settled | null {
-    const { network, condition } = this.study
+    const { network } = this.study
     let states = this.study.atRest()
-    const seen = new Set<string>()
+    const seen: States[] = []
     this.passed = []
     for (;;) {
       const solved = this.settleDiodes(states, severity, scale)
       if (!solved) return null
       this.passed.push(solved)
       if (network.relays.length === 0 && network.modules.length === 0) return solved
-      const next: States = {
-        relays: network.relays.map(
-          (_, i) => coilVolts(this, solved, i) >= reluctance * network.relays[i]!.pullIn,
-        ),
-        modules: network.modules.map(
-          (module) =>
-            condition.battery &&
-            !this.alteration.forced.deadModules.has(module.node) &&
-            module.supplies.every(
-              (pin) => voltsBetween(solved, pin, module.innerGround) >= reluctance * module.runsFrom,
-            ),
-        ),
-        diodes: solved.states.diodes,
-      }
-      const key = stateKey(next)
-      if (key === stateKey(solved.states)) return solved
-      if (seen.has(key)) return null
-      seen.add(key)
+      const next = this.nextStates(solved, reluctance)
+      if (next === null) return solved
+      if (seen.includes(next)) return null
+      seen.push(next)
       states = next
     }
+  }
+
+  /** What relays and modules do in these volts; null when they stay as they are. */
+  private nextStates(solved: Settled, reluctance: number): States | null {
+    const { network } = this.study
+    const { states } = solved
+    let relays: boolean[] | null = null
+    for (let i = 0; i < network.relays.length; i++) {
+      const pulledIn = coilVolts(this, solved, i) >= reluctance * network.relays[i]!.pullIn
+      if (pulledIn !== states.relays[i]) (relays ??= states.relays.slice())[i] = pulledIn
+    }
+    let modules: boolean[] | null = null
+    let supply = network.relays.length + network.diodes.length
+    for (let i = 0; i < network.modules.length; i++) {
+      const { node, supplies, runsFrom } = network.modules[i]!
+      let awake = this.study.condition.battery && !this.alteration.forced.deadModules.has(node)
+      for (let pin = 0; pin < supplies.length; pin++, supply++)
+        awake &&= watchedVolts(solved, supply) >= reluctance * runsFrom
+      if (awake !== states.modules[i]) (modules ??= states.modules.slice())[i] = awake
+    }
+    if (!relays && !modules) return null
+    return this.study.same({
+      relays: relays ?? states.relays,
+      modules: modules ?? states.modules,
+      diodes: states.diodes,
+    })
   }
 
   /**
@@ -132,143 +178,117 @@ export class Case {
     let solved = this.solve(states, severity, scale)
     for (let round = 0; diodes.length > 0; round++) {
       if (round > 50 + 20 * diodes.length) return null
-      const wrong = diodes.findIndex((diode, i) => {
-        const volts = elementVolts(this, solved, diode.branch)
-        // With the battery off nothing drives a diode.
-        if (!this.study.condition.battery) return solved.states.diodes[i]
-        // A hair of slack on either side, so that rounding cannot make one flicker.
-        return solved.states.diodes[i] ? volts < diode.volts - 1e-9 : volts > diode.volts + 1e-9
-      })
+      const wrong = this.wrongDiode(solved)
       if (wrong < 0) break
-      const flipped = solved.states.diodes.map((on, i) => (i === wrong ? !on : on))
-      solved = this.solve({ ...solved.states, diodes: flipped }, severity, scale)
+      const flipped = solved.states.diodes.slice()
+      flipped[wrong] = !flipped[wrong]
+      solved = this.solve(this.study.same({ ...solved.states, diodes: flipped }), severity, scale)
     }
     return solved
+  }
+
+  private wrongDiode(solved: Settled): number {
+    const { network, condition } = this.study
+    for (let i = 0; i < network.diodes.length; i++) {
+      const on = solved.states.diodes[i]!
+      // With the battery off nothing drives a diode.
+      if (!condition.battery) {
+        if (on) return i
+        continue
+      }
+      const { volts: from } = network.diodes[i]!
+      const volts = diodeVolts(this, solved, i)
+      // A hair of slack on either side, so that rounding cannot make one flicker.
+      if (on ? volts < from - 1e-9 : volts > from + 1e-9) return i
+    }
+    return -1
   }
 }
 
 function locate(study: Study, alteration: Alteration, states: States): Located {
   const { network } = study
   const base = study.base(states, alteration.forced)
+  const watchedBattery = watchedIn(base, base.voltsBattery)
+  const watchedFixed = watchedIn(base, base.voltsFixed)
   const untouched: Located = {
     base,
-    factor: base.factor,
+    touches: false,
     p: -1,
     q: -1,
-    z: null,
-    loopOhms: 0,
     branch: -1,
     ownOhms: 0,
-    emfBattery: 0,
-    emfFixed: 0,
-    voltsBattery: base.voltsBattery,
-    voltsFixed: base.voltsFixed,
+    loopOhms: 0,
+    drivenBattery: 0,
+    drivenFixed: 0,
+    watchedBattery,
+    watchedFixed,
+    watchedUnit: null,
+    z: null,
   }
   const branch = alteration.series.find((series) => base.conductance[series]! > 0)
-  if (branch !== undefined) return withoutBranch(study, base, branch)
+  if (branch !== undefined) {
+    const { a: p, b: q } = network.branches[branch]!
+    const open = takeOut(base, branch)
+    return {
+      ...untouched,
+      touches: true,
+      p,
+      q,
+      branch,
+      ownOhms: 1 / base.conductance[branch]!,
+      loopOhms: open.ohms,
+      drivenBattery: open.voltsBattery - base.emfBattery[branch]!,
+      drivenFixed: open.voltsFixed - base.emfFixed[branch]!,
+      watchedUnit: open.watched,
+    }
+  }
   if (alteration.shunt) {
     const [p, q] = alteration.shunt
-    const z = unitCurrent(network.size, base.factor, p, q)
-    return { ...untouched, p, q, z, loopOhms: at(z, p) - at(z, q) }
+    const z = base.unitOnce(p, q)
+    return {
+      ...untouched,
+      touches: true,
+      p,
+      q,
+      loopOhms: Math.max(0, at(z, p) - at(z, q)),
+      drivenBattery: at(base.voltsBattery, p) - at(base.voltsBattery, q),
+      drivenFixed: at(base.voltsFixed, p) - at(base.voltsFixed, q),
+      watchedUnit: watchedIn(base, z),
+      z,
+    }
   }
   return untouched
 }
 
-/** Below this part of a branch's own conductance there is no other way round, and the shortcut would cancel. */
-const otherWayFrom = 1e-5
-
-/**
- * The network with one branch taken out. Where current has another way round, it follows from the
- * whole network: with z₁ the volts for one ampere through the whole from q to p, g the branch and
- * R₁ = z₁(p) − z₁(q), z = z₁/(1 − g·R₁), and its sources' volts gain i·z, i the branch's current. Where
- * the branch is the only way, 1 − g·R₁ would cancel, and on dead circuits the volts of what floats
- * would; then the network is factored again without it.
- */
-function withoutBranch(study: Study, base: Base, branch: number): Located {
-  const { network } = study
-  const siemens = base.conductance[branch]!
-  const { a, b } = network.branches[branch]!
-  const common = {
-    base,
-    p: a,
-    q: b,
-    branch,
-    ownOhms: 1 / siemens,
-    emfBattery: base.emfBattery[branch]!,
-    emfFixed: base.emfFixed[branch]!,
-  }
-  if (study.condition.battery) {
-    const z = unitCurrent(network.size, base.factor, a, b)
-    const left = 1 - siemens * (at(z, a) - at(z, b))
-    if (left > otherWayFrom) {
-      for (let i = 0; i < z.length; i++) z[i]! /= left
-      const regained = (volts: Float64Array, emf: number): Float64Array => {
-        const amps = siemens * (at(volts, a) - at(volts, b) - emf)
-        return amps === 0 ? volts : volts.map((value, i) => value + amps * z[i]!)
-      }
-      return {
-        ...common,
-        factor: null,
-        z,
-        loopOhms: at(z, a) - at(z, b),
-        voltsBattery: regained(base.voltsBattery, common.emfBattery),
-        voltsFixed: regained(base.voltsFixed, common.emfFixed),
-      }
-    }
-  }
-  const factor = study.factorWithout(base.conductance, branch)
-  const z = unitCurrent(network.size, factor, a, b)
-  return {
-    ...common,
-    factor,
-    z,
-    loopOhms: at(z, a) - at(z, b),
-    voltsBattery: study.solveSources(factor, base.conductance, base.emfBattery, branch),
-    voltsFixed: study.solveSources(factor, base.conductance, base.emfFixed, branch),
-  }
+function watchedIn({ network }: Base, volts: Float64Array): Float64Array {
+  return Float64Array.from(network.watched, ([a, b]) => at(volts, a) - at(volts, b))
 }
 
-/** Volts per unknown for one ampere put in at p and taken out at q (−1 is chassis). */
-export function unitCurrent(size: number, factor: Factor, p: number, q: number): Float64Array {
-  const x = new Float64Array(size)
-  if (p >= 0) x[p]! += 1
-  if (q >= 0) x[q]! -= 1
-  return p === q ? x : solveInPlace(factor, x)
+/** z of a located fault: volts per unknown for one ampere from q to p, an altered branch taken out. Not to be changed. */
+export function unitOfFault(located: Located): Float64Array {
+  return (located.z ??=
+    located.branch < 0 ? located.base.unitOnce(located.p, located.q) : openUnit(located.base, located.branch))
 }
 
 /** Volts per unknown of a settled network for one ampere from b to a: the adjoint of measuring a against b. Not to be changed. */
 export function unitCurrentIn(settled: Settled, a: number, b: number): Float64Array {
-  const { located, siemens } = settled
-  const y = unaltered(located, a, b)
-  const { z, p, q, loopOhms } = located
-  if (z === null) return y
-  const amps = (siemens * (at(y, p) - at(y, q))) / (1 + siemens * loopOhms)
-  return amps === 0 ? y : y.map((value, i) => value - amps * z[i]!)
+  const { located, unitSiemens } = settled
+  const y = located.base.unit(a, b)
+  if (unitSiemens === 0) return y
+  const z = unitOfFault(located)
+  const amps = unitSiemens * (at(z, a) - at(z, b))
+  if (amps === 0) return y
+  return y.map((value, i) => value - amps * z[i]!)
 }
 
-/** The same for the network without the altered branch or added short; kept, since every severity asks. */
-function unaltered(located: Located, a: number, b: number): Float64Array {
-  const { base, factor, z, p, q, branch } = located
-  const size = base.voltsBattery.length
-  const key = a * (size + 1) + b
-  if (factor !== null && factor !== base.factor)
-    return kept(factor, key, () => unitCurrent(size, factor, a, b))
-  const whole = kept(base.factor, key, () => unitCurrent(size, base.factor, a, b))
-  if (factor !== null || z === null) return whole
-  return kept(located, key, () => {
-    const amps = base.conductance[branch]! * (at(whole, p) - at(whole, q))
-    return amps === 0 ? whole : whole.map((value, i) => value + amps * z[i]!)
-  })
-}
-
-const keptByOwner = new WeakMap<object, Map<number, Float64Array>>()
-
-function kept(owner: object, key: number, find: () => Float64Array): Float64Array {
-  let map = keptByOwner.get(owner)
-  if (!map) keptByOwner.set(owner, (map = new Map()))
-  let found = map.get(key)
-  if (!found) map.set(key, (found = find()))
-  return found
+/** Thevenin resistance between two unknowns of a settled network, ohm. */
+export function theveninOhms({ located, unitSiemens }: Settled, a: number, b: number): number {
+  const y = located.base.unit(a, b)
+  const whole = at(y, a) - at(y, b)
+  if (unitSiemens === 0) return Math.max(0, whole)
+  const z = unitOfFault(located)
+  const moved = at(z, a) - at(z, b)
+  return Math.max(0, whole - unitSiemens * moved * moved)
 }
 
 export function at(volts: Float64Array, unknown: number): number {
@@ -282,19 +302,29 @@ export function voltsAt(settled: Settled, unknown: number): number {
 /** Volts that the battery's sources alone cause, at their drawn volts. */
 export function batteryVoltsAt({ located, ampsBattery }: Settled, unknown: number): number {
   if (unknown < 0) return 0
-  const volts = located.voltsBattery[unknown]!
-  return ampsBattery === 0 ? volts : volts - ampsBattery * located.z![unknown]!
+  const volts = located.base.voltsBattery[unknown]!
+  return ampsBattery === 0 ? volts : volts - ampsBattery * unitOfFault(located)[unknown]!
 }
 
 /** Volts that sources of their own volts alone cause: pull-ups, regulated outputs, diodes. */
 export function fixedVoltsAt({ located, ampsFixed }: Settled, unknown: number): number {
   if (unknown < 0) return 0
-  const volts = located.voltsFixed[unknown]!
-  return ampsFixed === 0 ? volts : volts - ampsFixed * located.z![unknown]!
+  const volts = located.base.voltsFixed[unknown]!
+  return ampsFixed === 0 ? volts : volts - ampsFixed * unitOfFault(located)[unknown]!
 }
 
 export function voltsBetween(settled: Settled, a: number, b: number): number {
   return voltsAt(settled, a) - voltsAt(settled, b)
+}
+
+/** Volts over one of the network's watched pairs. */
+function watchedVolts({ located, scale, ampsBattery, ampsFixed }: Settled, pair: number): number {
+  const unit = located.watchedUnit === null ? 0 : located.watchedUnit[pair]!
+  return (
+    scale * (located.watchedBattery[pair]! - ampsBattery * unit) +
+    located.watchedFixed[pair]! -
+    ampsFixed * unit
+  )
 }
 
 /** Part of a branch's volts that stands over its own element, when the fault sits in series with it. */
@@ -305,25 +335,51 @@ export function ownShare(settled: Settled, branch: number): number {
 
 /** Volts over an element, a over b, a series fault inside its part not counted. */
 export function elementVolts(given: Case, settled: Settled, branch: number): number {
+  if (settled.located.branch === branch) return overAltered(settled)
   const { a, b } = given.study.network.branches[branch]!
-  const volts = voltsBetween(settled, a, b)
-  const share = ownShare(settled, branch)
-  if (share === 1) return volts
-  const emf = settled.scale * settled.located.emfBattery + settled.located.emfFixed
-  return emf + (volts - emf) * share
+  return voltsBetween(settled, a, b)
+}
+
+/** Volts over the altered branch's own element: its source and what its current drops in it. */
+function overAltered({ located, scale, throughBattery, throughFixed }: Settled): number {
+  const { base, branch, ownOhms } = located
+  return (
+    scale * (base.emfBattery[branch]! + throughBattery * ownOhms) +
+    base.emfFixed[branch]! +
+    throughFixed * ownOhms
+  )
 }
 
 export function coilVolts(given: Case, settled: Settled, relay: number): number {
   const { coil, node } = given.study.network.relays[relay]!
   // An open or shorted coil never pulls in.
-  return given.alteration.forced.idle.has(node) ? 0 : Math.abs(elementVolts(given, settled, coil))
+  if (given.alteration.forced.idle.has(node)) return 0
+  return Math.abs(settled.located.branch === coil ? overAltered(settled) : watchedVolts(settled, relay))
+}
+
+export function diodeVolts(given: Case, settled: Settled, diode: number): number {
+  const { network } = given.study
+  const { branch } = network.diodes[diode]!
+  return settled.located.branch === branch
+    ? overAltered(settled)
+    : watchedVolts(settled, network.relays.length + diode)
+}
+
+/** Least volts over a module's supplies, as parts of what it runs from. */
+export function supplyParts(given: Case, settled: Settled, module: number): number[] {
+  const { network } = given.study
+  let first = network.relays.length + network.diodes.length
+  for (let i = 0; i < module; i++) first += network.modules[i]!.supplies.length
+  const { supplies, runsFrom } = network.modules[module]!
+  return supplies.map((_, pin) => watchedVolts(settled, first + pin) / runsFrom)
 }
 
 /** Amperes from a to b inside a branch. */
 export function branchAmps(given: Case, settled: Settled, branch: number): number {
-  const { base } = settled.located
+  const { located, scale } = settled
+  if (located.branch === branch) return scale * settled.throughBattery + settled.throughFixed
+  const { base } = located
   const { a, b } = given.study.network.branches[branch]!
-  const siemens = settled.located.branch === branch ? settled.siemens : base.conductance[branch]!
-  const emf = settled.scale * base.emfBattery[branch]! + base.emfFixed[branch]!
-  return siemens * (voltsBetween(settled, a, b) - emf)
+  const emf = scale * base.emfBattery[branch]! + base.emfFixed[branch]!
+  return base.conductance[branch]! * (voltsBetween(settled, a, b) - emf)
 }

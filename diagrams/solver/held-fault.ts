@@ -48,6 +48,7 @@ function resistance(name: string, a: number, b: number): Branch {
     // A severity is what it is: no tolerance on top.
     exact: true,
     supply: 'fixed',
+    varies: false,
     conducts: () => true,
     emf: () => 0,
     ohms: () => 1,

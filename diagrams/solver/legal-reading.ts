@@ -5,7 +5,8 @@ import type { Condition } from '../document/condition-schema'
 import { parsePoint, pointName } from '../document/points'
 import { hasContact, portsOf } from '../document/ports'
 import type { Probe } from '../document/reading-schema'
-import { type Case, type Settled, voltsAt } from './case'
+import { leadBelowOhms, mostLeadAmps } from './added-lead'
+import { branchAmps, type Case, type Settled, voltsAt } from './case'
 import { deadVolts } from './constants'
 import { openCase } from './faulted-case'
 import { unstable } from './operating-point'
@@ -25,11 +26,36 @@ function refuseUnrest(circuit: Circuit, condition: Condition): Problem | null {
   let problem = known.get(key)
   if (problem === undefined) {
     const opened = openCase(circuit, condition)
-    problem = opened.ok ? (opened.value.given.settle(0) ? null : unstable) : opened.problem
+    const settled = opened.ok ? opened.value.given.settle(0) : null
+    if (!opened.ok) problem = opened.problem
+    else problem = settled ? refuseLeads(circuit, opened.value.given, settled) : unstable
     if (known.size > 300) known.clear()
     known.set(key, problem)
   }
   return problem
+}
+
+/**
+ * What is put in bypasses what protects: never on an airbag circuit, and never so that the good circuit
+ * would drive more through a lead than any fused lead carries.
+ */
+function refuseLeads(circuit: Circuit, given: Case, settled: Settled): Problem | null {
+  const { network, condition } = given.study
+  if (condition.added.length === 0) return null
+  if (circuit.cautions.includes('airbag'))
+    return {
+      path: 'condition.added',
+      message: 'nothing is put into an airbag circuit: disable it by the maker’s procedure',
+    }
+  for (const [index, lead] of condition.added.entries()) {
+    const amps = Math.abs(branchAmps(given, settled, network.branchIndex.get(`added:${index}`)!))
+    if (lead.ohms < leadBelowOhms && amps > mostLeadAmps)
+      return {
+        path: `condition.added.${index}`,
+        message: `a lead from ${pointName(circuit, lead.from)} to ${pointName(circuit, lead.to)} would carry ${amps.toFixed(0)} A, expected at most ${mostLeadAmps} A: it joins a supply to ground`,
+      }
+  }
+  return null
 }
 
 /** Asked for every reading of a trace, and most are taken in the same few conditions. */

@@ -1,7 +1,7 @@
 import type { Problem } from '../document/check-circuit'
 import type { Circuit } from '../document/circuit-schema'
 import type { Probe, ReadingValue } from '../document/reading-schema'
-import { at, branchAmps, unitCurrentIn, voltsBetween, type Case, type Settled } from './case'
+import { branchAmps, theveninOhms, voltsBetween, type Case, type Settled } from './case'
 import { deadVolts, ohmmeterLimitOhms, voltmeterOhms } from './constants'
 import { openCase } from './faulted-case'
 import { refuseReading } from './legal-reading'
@@ -53,12 +53,6 @@ export function readMeter(given: Case, settled: Settled, probe: Probe): ReadingV
         network.inputs.findIndex((input) => input.point === probe.pin),
       )
   }
-}
-
-/** Thevenin resistance between two unknowns, ohm. */
-export function theveninOhms(settled: Settled, a: number, b: number): number {
-  const y = unitCurrentIn(settled, a, b)
-  return Math.max(0, at(y, a) - at(y, b))
 }
 
 /**

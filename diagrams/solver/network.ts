@@ -50,6 +50,8 @@ export interface Branch {
   exact: boolean
   /** Whose volts its source follows: the battery's state, or its own fixed figure. */
   supply: 'battery' | 'fixed'
+  /** True when the states of parts or what a fault forces decide whether it conducts or what it drives. */
+  varies: boolean
   ohms(setting: Setting): number
   conducts(setting: Setting): boolean
   /** Volts that a stands over b at zero current. */
@@ -107,6 +109,12 @@ export interface Network {
   middleOf: ReadonlyMap<string, number>
   /** Where each branch's conductance is added: slot ≥ 0, or −1 − unknown when it goes to chassis, or null. */
   places: Int32Array
+  /** The other branches that are added in the same place as each. */
+  besides: readonly (readonly number[])[]
+  /** Pairs whose volts decide the states: every coil, every diode, every supply of every module. */
+  watched: readonly (readonly [number, number])[]
+  /** Their unknowns and all those on the way to the last pivot, from the last to the first. */
+  watchedPivots: Int32Array
   relays: RelayState[]
   modules: ModuleState[]
   diodes: DiodeState[]
@@ -119,7 +127,10 @@ export interface Network {
 export const nowhere = -0x40000000
 
 export function finishNetwork(
-  parts: Omit<Network, 'order' | 'places' | 'branchIndex' | 'leaking'> & { leaking?: number },
+  parts: Omit<
+    Network,
+    'order' | 'places' | 'besides' | 'watched' | 'watchedPivots' | 'branchIndex' | 'leaking'
+  > & { leaking?: number },
 ): Network {
   const inside = parts.branches.filter((x) => x.a >= 0 && x.b >= 0 && x.a !== x.b)
   const order = orderElimination(
@@ -129,11 +140,49 @@ export function finishNetwork(
   const places = Int32Array.from(parts.branches, (x) =>
     x.a === x.b ? nowhere : x.a < 0 ? -1 - x.b : x.b < 0 ? -1 - x.a : order.slotOf(x.a, x.b),
   )
+  const watched = watchedPairs(parts)
   return {
     leaking: parts.size,
     ...parts,
     order,
     places,
+    besides: othersInPlace(places),
+    watched,
+    watchedPivots: wayToLast(order, watched.flat()),
     branchIndex: new Map(parts.branches.map((x, i) => [x.name, i])),
   }
+}
+
+function wayToLast({ parent, lastToFirst, size }: EliminationOrder, unknowns: readonly number[]): Int32Array {
+  const wanted = new Uint8Array(size)
+  for (const unknown of unknowns) for (let k = unknown; k >= 0 && !wanted[k]; k = parent[k]!) wanted[k] = 1
+  return lastToFirst.filter((k) => wanted[k] === 1)
+}
+
+function watchedPairs({
+  branches,
+  relays,
+  diodes,
+  modules,
+}: Pick<Network, 'branches' | 'relays' | 'diodes' | 'modules'>): [number, number][] {
+  const ends = (branch: number): [number, number] => [branches[branch]!.a, branches[branch]!.b]
+  return [
+    ...relays.map((relay) => ends(relay.coil)),
+    ...diodes.map((diode) => ends(diode.branch)),
+    ...modules.flatMap(({ supplies, innerGround }) =>
+      supplies.map((pin): [number, number] => [pin, innerGround]),
+    ),
+  ]
+}
+
+function othersInPlace(places: Int32Array): readonly (readonly number[])[] {
+  const inPlace = new Map<number, number[]>()
+  places.forEach((place, i) => {
+    const list = inPlace.get(place)
+    if (list) list.push(i)
+    else inPlace.set(place, [i])
+  })
+  return Array.from(places, (place, i) =>
+    place === nowhere ? [] : inPlace.get(place)!.filter((other) => other !== i),
+  )
 }

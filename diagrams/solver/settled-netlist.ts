@@ -41,7 +41,7 @@ export function settledNetlist(
 /** The same of a network that has been settled already. Branches that do not conduct are left out. */
 export function netlistOf(given: Case, settled: Settled): SettledNetlist {
   const { network } = given.study
-  const { base, branch: altered, p, q, z } = settled.located
+  const { base, branch: altered, p, q, touches } = settled.located
   const elements: LinearElement[] = []
   network.branches.forEach((branch, i) => {
     const siemens = base.conductance[i]!
@@ -54,7 +54,7 @@ export function netlistOf(given: Case, settled: Settled): SettledNetlist {
       volts: settled.scale * base.emfBattery[i]! + base.emfFixed[i]!,
     })
   })
-  if (altered < 0 && z !== null)
+  if (altered < 0 && touches)
     elements.push({ name: 'short', a: p + 1, b: q + 1, ohms: settled.severity, volts: 0 })
   for (let unknown = 0; unknown < network.leaking; unknown++)
     elements.push({ name: `leak:${unknown}`, a: unknown + 1, b: 0, ohms: 1 / leakSiemens, volts: 0 })

@@ -3,10 +3,9 @@ import { describe, expect, it } from 'vitest'
 import { controlCombinations } from '@/diagrams/document/condition'
 import { restCondition } from '@/diagrams/document/condition-schema'
 import type { Circuit } from '@/diagrams/document/circuit-schema'
-import { branchAmps, voltsAt, type Case, type Settled } from '@/diagrams/solver/case'
+import { branchAmps, theveninOhms, voltsAt, type Case, type Settled } from '@/diagrams/solver/case'
 import { leakSiemens } from '@/diagrams/solver/constants'
 import { openCase } from '@/diagrams/solver/faulted-case'
-import { theveninOhms } from '@/diagrams/solver/meter'
 import type { PlantedFault } from '@/diagrams/solver/planted-fault'
 import { seededRandom } from '@/tests/support/random'
 import { randomCircuit } from '@/tests/support/random-circuit'
@@ -41,8 +40,8 @@ function balance(given: Case, settled: Settled) {
       largest[unknown]! += Math.abs(amps) + siemens * 1e-3 * Math.abs(voltsAt(settled, unknown))
     }
   })
-  const { p, q, branch, z } = settled.located
-  if (z !== null && branch < 0) {
+  const { p, q, branch, touches } = settled.located
+  if (touches && branch < 0) {
     const amps = settled.siemens * (voltsAt(settled, p) - voltsAt(settled, q))
     if (p >= 0) leaving[p]! += amps
     if (q >= 0) leaving[q]! -= amps

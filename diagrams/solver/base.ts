@@ -1,0 +1,151 @@
+import { factorise, gatherCurrents, solveInPlace, substituteBack, type Factor } from './factor'
+import { nowhere, type Network } from './network'
+
+/** Above this a source between two floating unknowns is solved by its loop, amperes of its Norton current. */
+const loopFromAmps = 1
+
+/** Sources of one kind: what they drive into each unknown, and that current gathered up to each pivot. */
+export interface SourceFlow {
+  /** Branches that are sources, those solved by their loop not among them. */
+  branches: number[]
+  gathered: Float64Array | null
+}
+
+/**
+ * A source of a battery's strength between two unknowns. As a current in and out it is hundreds of
+ * amperes, whose rounding would put a floating harness off by a millivolt. So it is left out: with z
+ * the volts for one ampere from b to a in the network without it, and R = z(a) − z(b), it drives
+ * E/(1/g + R) round its loop, and v = z · E/(1/g + R).
+ */
+export interface SourceLoop {
+  branch: number
+  battery: boolean
+  emf: number
+  ownOhms: number
+  factor: Factor
+  gathered: Float64Array
+  z: Float64Array
+  /** R, ohm. */
+  ohms: number
+}
+
+/** A network in one condition with its parts in one state: factored, and solved for its own sources. */
+export class Base {
+  readonly factor: Factor
+  /** Siemens per branch; 0 where it does not conduct. */
+  readonly conductance: Float64Array
+  /** Source volts per branch that follow the battery, and those that do not. */
+  readonly emfBattery: Float64Array
+  readonly emfFixed: Float64Array
+  /** Volts per unknown from the battery's sources at their drawn volts, and from fixed sources. */
+  readonly voltsBattery: Float64Array
+  readonly voltsFixed: Float64Array
+  readonly loops: SourceLoop[] = []
+  readonly flowBattery: SourceFlow
+  readonly flowFixed: SourceFlow
+  private readonly units = new Map<number, Float64Array>()
+
+  constructor(
+    readonly network: Network,
+    figures: { conductance: Float64Array; emfBattery: Float64Array; emfFixed: Float64Array },
+    readonly leak: number,
+  ) {
+    this.conductance = figures.conductance
+    this.emfBattery = figures.emfBattery
+    this.emfFixed = figures.emfFixed
+    this.factor = this.factorWithout(-1)
+    this.flowBattery = this.gather(this.emfBattery, true)
+    this.flowFixed = this.gather(this.emfFixed, false)
+    this.voltsBattery = this.solve(this.flowBattery, true)
+    this.voltsFixed = this.solve(this.flowFixed, false)
+  }
+
+  /**
+   * Volts per unknown for one ampere from b to a (−1 is chassis): the adjoint of measuring a against
+   * b. Kept for readings and parts that many faults ask for. Not to be changed.
+   */
+  unit(a: number, b: number): Float64Array {
+    const key = a * (this.network.size + 1) + b
+    let found = this.units.get(key)
+    if (!found) this.units.set(key, (found = this.unitOnce(a, b)))
+    return found
+  }
+
+  /** The same, not kept. */
+  unitOnce(a: number, b: number): Float64Array {
+    return unitCurrent(this.factor, a, b)
+  }
+
+  private factorWithout(without: number): Factor {
+    const { network, conductance } = this
+    const edge = new Float64Array(network.order.neighbour.length)
+    const toChassis = new Float64Array(network.size).fill(this.leak, 0, network.leaking)
+    const { places } = network
+    for (let i = 0; i < places.length; i++) {
+      const place = places[i]!
+      if (i === without || place === nowhere) continue
+      if (place >= 0) edge[place]! += conductance[i]!
+      else toChassis[-1 - place]! += conductance[i]!
+    }
+    return factorise(network.order, edge, toChassis)
+  }
+
+  private gather(emf: Float64Array, battery: boolean): SourceFlow {
+    const x = new Float64Array(this.network.size)
+    const branches: number[] = []
+    for (let i = 0; i < emf.length; i++) {
+      if (emf[i] === 0) continue
+      const amps = emf[i]! * this.conductance[i]!
+      const { a, b } = this.network.branches[i]!
+      if (a >= 0 && b >= 0 && Math.abs(amps) > loopFromAmps) {
+        this.loops.push(this.loopOf(i, emf[i]!, battery))
+        continue
+      }
+      branches.push(i)
+      if (a >= 0) x[a]! += amps
+      if (b >= 0) x[b]! -= amps
+    }
+    return { branches, gathered: branches.length > 0 ? gatherCurrents(this.factor, x) : null }
+  }
+
+  private loopOf(branch: number, emf: number, battery: boolean): SourceLoop {
+    const { a, b } = this.network.branches[branch]!
+    const factor = this.factorWithout(branch)
+    const x = new Float64Array(this.network.size)
+    x[a] = 1
+    x[b] = -1
+    const gathered = gatherCurrents(factor, x)
+    const z = substituteBack(factor, gathered.slice())
+    return {
+      branch,
+      battery,
+      emf,
+      ownOhms: 1 / this.conductance[branch]!,
+      factor,
+      gathered,
+      z,
+      ohms: Math.max(0, z[a]! - z[b]!),
+    }
+  }
+
+  private solve(flow: SourceFlow, battery: boolean): Float64Array {
+    const volts = flow.gathered
+      ? substituteBack(this.factor, flow.gathered.slice())
+      : new Float64Array(this.network.size)
+    for (const loop of this.loops) {
+      if (loop.battery !== battery) continue
+      const amps = loop.emf / (loop.ownOhms + loop.ohms)
+      for (let k = 0; k < volts.length; k++) volts[k]! += amps * loop.z[k]!
+    }
+    return volts
+  }
+}
+
+/** Volts per unknown for one ampere put in at p and taken out at q (−1 is chassis). */
+export function unitCurrent(factor: Factor, p: number, q: number): Float64Array {
+  const x = new Float64Array(factor.order.size)
+  if (p === q) return x
+  if (p >= 0) x[p]! += 1
+  if (q >= 0) x[q]! -= 1
+  return solveInPlace(factor, x)
+}
