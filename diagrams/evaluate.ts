@@ -5,8 +5,11 @@ import { fitsAll, weighReadings } from './faults/evidence'
 import { faultModelOf, type FaultModel } from './faults/fault-model'
 import { readingToSetAside } from './faults/misfit'
 import { posteriorOf, siteProbabilities, type Posterior } from './faults/posterior'
+import { allReports } from './faults/report-evidence'
 import { judgeReadings } from './faults/reading-sentence'
 import type { EvaluationRequest } from './faults/request'
+import { explainedByLikeliest, symptomEvidence } from './faults/symptom-evidence'
+import { symptomSentence } from './faults/symptom-sentence'
 import { verdictSentence } from './faults/verdict-sentence'
 import { sitesOf } from './document/sites'
 import { outcomesOf } from './planner/outcomes'
@@ -23,13 +26,15 @@ const worthwhileBits = 0.05
  * what to read next. The request comes from `openEvaluationRequest`, so it is sound.
  */
 export function evaluate(request: EvaluationRequest): Answer {
-  const { circuit, readings, codes, priors, odds } = request
+  const { circuit, readings, codes, priors, odds, symptoms = [] } = request
   const model = faultModelOf(circuit)
   const full = weighReadings(model, readings)
   const fits = [full.good, ...full.cells.flat()].some((cell) => fitsAll(full, cell, readings))
   const aside = readingToSetAside(model, readings, full, fits, priors, odds)
   const evidence = aside === null ? full : weighReadings(model, readings, new Set([aside]))
-  const posterior = posteriorOf(model, evidence, priors, codeEvidence(model, codes), odds)
+  const complaint = symptomEvidence(model, symptoms)
+  const told = allReports([codeEvidence(model, codes), complaint])
+  const posterior = posteriorOf(model, evidence, priors, told, odds)
   const kept = aside === null ? readings : readings.filter((_, r) => r !== aside)
   const plan = planNext(model, posterior, kept)
 
@@ -68,7 +73,12 @@ export function evaluate(request: EvaluationRequest): Answer {
     }),
     inseparable: plan.inseparable,
   }
-  return { ...answer, says: verdictSentence(circuit, readings, answer) }
+  const explains = complaint ? explainedByLikeliest(complaint, posterior) : ''
+  const says = [
+    verdictSentence(circuit, readings, answer),
+    symptomSentence(circuit, symptoms, outcome, explains),
+  ]
+  return { ...answer, says: says.filter(Boolean).join(' ') }
 }
 
 function outcomeOf(

@@ -61,8 +61,11 @@ export function explainedByLikeliest({ explains }: SymptomEvidence, { cells }: P
 /** One complaint, ready to be looked for: where, and whether a faulted vehicle shows it. */
 interface Sought {
   studies: readonly Study[]
-  /** Settled cases in the order of `studies`; null where the vehicle does not come to rest. */
-  isShown(shown: readonly (readonly [Case, Settled] | null)[]): boolean
+  /**
+   * A "1" or a "0", then what more there is to see, so that severities that look alike are alike. Given the settled
+   * cases in the order of `studies`; null where the vehicle does not come to rest.
+   */
+  look(shown: readonly (readonly [Case, Settled] | null)[]): string
 }
 
 function weigh(model: FaultModel, symptoms: readonly Symptom[]): SymptomEvidence {
@@ -86,9 +89,14 @@ function weigh(model: FaultModel, symptoms: readonly Symptom[]): SymptomEvidence
         return point && ([given, point] as const)
       })
       return sought
-        .map((each) => (each?.isShown(each.studies.map((s) => settled[numberOf.get(s)!]!)) ? '1' : '0'))
-        .join('')
-    }),
+        .map((each) => each?.look(each.studies.map((s) => settled[numberOf.get(s)!]!)) ?? '0')
+        .join(' ')
+    }).map((shown) =>
+      shown
+        .split(' ')
+        .map((look) => look[0])
+        .join(''),
+    ),
   )
   const found = nothingReported(model)
   counted.forEach((counts, i) => {
@@ -102,6 +110,15 @@ function weigh(model: FaultModel, symptoms: readonly Symptom[]): SymptomEvidence
     )
   })
   return { ...found, explains }
+}
+
+/** How a load does in one condition, beside how it should. */
+type Manner = 'unknown' | 'always' | 'idle' | 'dead' | 'nearly-dead' | 'weak' | 'whole'
+
+const mannersOf: Readonly<Record<'not-work' | 'always' | 'weakly', readonly Manner[]>> = {
+  'not-work': ['dead', 'nearly-dead'],
+  always: ['always'],
+  weakly: ['weak', 'nearly-dead'],
 }
 
 function seekDoing(
@@ -123,20 +140,18 @@ function seekDoing(
   })
   return {
     studies,
-    isShown: (shown) =>
-      shown.some((each, s) => {
+    look: (shown) => {
+      const seen = shown.map((each, s): Manner => {
         const before = good[s]
-        if (!each || !before) return false
+        if (!each || !before) return 'unknown'
         const now = doing(...each)
-        switch (does) {
-          case 'not-work':
-            return before.works && !now.works
-          case 'always':
-            return !before.works && now.works
-          case 'weakly':
-            return before.works && now.volts >= weakFrom * before.volts && now.volts <= weakTo * before.volts
-        }
-      }),
+        if (!before.works) return now.works ? 'always' : 'idle'
+        if (now.volts < weakFrom * before.volts) return 'dead'
+        if (now.volts > weakTo * before.volts) return now.works ? 'whole' : 'dead'
+        return now.works ? 'weak' : 'nearly-dead'
+      })
+      return `${seen.some((manner) => mannersOf[does].includes(manner)) ? '1' : '0'}${seen.join()}`
+    },
   }
 }
 
@@ -158,12 +173,12 @@ function seekStop({ network }: FaultModel, step: string): Sought | null {
   if (changes.length === 0) return null
   return {
     studies,
-    isShown: (shown) => {
+    look: (shown) => {
       const now = shown.map((each) => each && happening(...each))
       const last = now.at(-1)
-      if (!last) return false
       const asBefore = now.slice(0, -1).every((state, s) => state === good[s])
-      return asBefore && changes.some((i) => last[i] !== then[i])
+      const stops = last && asBefore && changes.some((i) => last[i] !== then[i])
+      return `${stops ? '1' : '0'}${now.join()}`
     },
   }
 }
