@@ -15,12 +15,6 @@ import { namedConditions, type NamedCondition } from './named-conditions'
 import { probeOf, tableColumns, type TableColumn } from './table-columns'
 import { tableFaults } from './table-faults'
 
-/** A fault of the table with the fuses it has blown; null for the good circuit, which stands first. */
-export interface TableFault {
-  fault: PlantedFault | null
-  blows: string[]
-}
-
 /** The table in pieces, so that nobody has to hold it: its heads, its rows, what looks alike. */
 export type TablePart =
   | {
@@ -28,11 +22,12 @@ export type TablePart =
       conditions: NamedCondition[]
       /** Combinations of controls left out, where a circuit has very many. */
       conditionsLeftOut: number
-      faults: TableFault[]
+      /** Null, the good circuit, stands first. */
+      faults: (PlantedFault | null)[]
       columns: TableColumn[]
     }
-  /** One fault in one condition, a cell for every column. Indexes into the head's lists. */
-  | { part: 'row'; condition: number; fault: number; cells: Cell[] }
+  /** One fault in one condition, with the fuses it has blown and a cell for every column. Indexes into the head's lists. */
+  | { part: 'row'; condition: number; fault: number; blows: string[]; cells: Cell[] }
   /** Sets of faults that no cell of the table tells apart; the good circuit is among them where a fault does not show. */
   | { part: 'alike'; sets: number[][] }
 
@@ -49,12 +44,13 @@ export function* faultTable(circuit: Circuit): Generator<TablePart, void, void> 
   const { conditions, leftOut } = namedConditions(circuit)
   const planted = [null, ...tableFaults(circuit)]
   const driving = drivingStudies(network)
-  const cases = planted.map((fault) => (fault ? faultCase(network, driving, fault) : goodCase))
+  // Worked out with the first row of each, so that nobody waits for all of them before seeing any.
+  const cases: FaultCase[] = []
   yield {
     part: 'head',
     conditions,
     conditionsLeftOut: leftOut,
-    faults: planted.map((fault, i) => ({ fault, blows: cases[i]!.blows })),
+    faults: planted,
     columns,
   }
   const alike = new AlikeFaults(planted.length)
@@ -64,11 +60,14 @@ export function* faultTable(circuit: Circuit): Generator<TablePart, void, void> 
     // A meter at each point keeps a solution for the next fault; after so many faults they are let go together.
     const together = Math.max(1, Math.floor(keptNumbers / (columns.length * network.size + 1)))
     let study = new Study(network, condition)
-    for (const [f, { alteration, severity }] of cases.entries()) {
+    for (const [f, fault] of planted.entries()) {
+      const { alteration, severity, blows } = (cases[f] ??= fault
+        ? faultCase(network, driving, fault)
+        : goodCase)
       if (f % together === 0) study = new Study(network, condition)
       const cells = readRow(new Case(study, alteration), severity, probes)
       cells.forEach((cell, c) => columnsOfCells[c]!.push(cell))
-      yield { part: 'row', condition: index, fault: f, cells }
+      yield { part: 'row', condition: index, fault: f, blows, cells }
     }
     columnsOfCells.forEach((cells) => alike.split(condition.battery ? 'volts' : 'ohms', cells))
   }

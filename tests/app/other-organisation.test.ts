@@ -32,6 +32,7 @@ describe('another organisation', () => {
     ['PUT', 'circuits/[circuitId]', () => ({ baseRevision: 1, document: circuit.document })],
     ['DELETE', 'circuits/[circuitId]'],
     ['GET', 'circuits/[circuitId]/document'],
+    ['GET', 'circuits/[circuitId]/fault-table'],
     ['GET', 'connectors/[vehicleId]/[connectorId]/cavities/[n]'],
     ['GET', 'traces/[traceId]'],
     ['PUT', 'traces/[traceId]/cautions'],

@@ -1,8 +1,8 @@
-import path from 'node:path'
-import { pathToFileURL } from 'node:url'
-import { Worker } from 'node:worker_threads'
+import type { Worker } from 'node:worker_threads'
 import type { Opened } from '@/diagrams/document/open-circuit'
 import type { Answer } from '@/diagrams/faults/answer'
+import { nextMessage, TooLong } from './next-message'
+import { sourceThread } from './source-thread'
 
 export type Reply = Opened<Answer>
 
@@ -10,13 +10,6 @@ export type Reply = Opened<Answer>
 const mostWaiting = 8
 const startMilliseconds = 60_000
 const mostMegabytes = 1024
-
-const loadSource = `
-  import('tsx/esm/api').then(({ register }) => {
-    register()
-    return import(require('node:worker_threads').workerData)
-  })
-`
 
 // On globalThis, since a development server loads this module anew with every change.
 const store = globalThis as {
@@ -52,7 +45,7 @@ async function answerTo(input: unknown, milliseconds: number): Promise<Reply | '
   const thread = await evaluatorReady()
   thread.postMessage(input)
   try {
-    return (await next(thread, milliseconds)) as Reply
+    return (await nextMessage(thread, milliseconds)) as Reply
   } catch (error) {
     evaluator.thread = null
     await thread.terminate()
@@ -64,41 +57,15 @@ async function answerTo(input: unknown, milliseconds: number): Promise<Reply | '
 }
 
 async function startThread(): Promise<Worker> {
-  // From the source, by its path: the bundle of the web server has no part in it.
-  const source = path.join(process.cwd(), 'lib/server/evaluator/evaluator-thread.ts')
-  const thread = new Worker(loadSource, {
-    eval: true,
-    workerData: pathToFileURL(source).href,
-    resourceLimits: { maxOldGenerationSizeMb: mostMegabytes },
-  })
+  const thread = sourceThread('lib/server/evaluator/evaluator-thread.ts', mostMegabytes)
   // One that ends between two questions is started anew by the next.
-  thread.on('exit', () => (evaluator.thread = null)).on('error', () => {})
-  thread.unref()
+  thread.on('exit', () => (evaluator.thread = null))
   try {
-    await next(thread, startMilliseconds)
+    await nextMessage(thread, startMilliseconds)
     return thread
   } catch (error) {
     evaluator.thread = null
     await thread.terminate()
     throw error
   }
-}
-
-class TooLong extends Error {}
-
-/** The thread's next message; its end, its error or the end of the time is thrown. */
-function next(thread: Worker, milliseconds: number): Promise<unknown> {
-  return new Promise((resolve, reject) => {
-    const settle = (end: () => void) => {
-      clearTimeout(timer)
-      thread.off('message', onMessage).off('error', onError).off('exit', onExit)
-      end()
-    }
-    const onMessage = (message: unknown) => settle(() => resolve(message))
-    const onError = (error: unknown) => settle(() => reject(error))
-    const onExit = (code: number) =>
-      settle(() => reject(new Error(`the evaluator's thread ended, code ${code}`)))
-    const timer = setTimeout(() => settle(() => reject(new TooLong())), milliseconds)
-    thread.on('message', onMessage).on('error', onError).on('exit', onExit)
-  })
 }

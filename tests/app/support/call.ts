@@ -9,6 +9,7 @@ export const addresses: Record<string, () => Promise<Module>> = {
   circuits: () => import('@/app/api/v1/circuits/route'),
   'circuits/[circuitId]': () => import('@/app/api/v1/circuits/[circuitId]/route'),
   'circuits/[circuitId]/document': () => import('@/app/api/v1/circuits/[circuitId]/document/route'),
+  'circuits/[circuitId]/fault-table': () => import('@/app/api/v1/circuits/[circuitId]/fault-table/route'),
   'connectors/[vehicleId]/[connectorId]/cavities/[n]': () =>
     import('@/app/api/v1/connectors/[vehicleId]/[connectorId]/cavities/[n]/route'),
   evaluations: () => import('@/app/api/v1/evaluations/route'),
@@ -53,7 +54,12 @@ export async function call(
   } as RequestInit)
   const response = await handler(request, { params: Promise.resolve(found.params) })
   const text = await response.text()
-  return { status: response.status, body: text === '' ? null : JSON.parse(text), headers: response.headers }
+  const isJson = response.headers.get('content-type')?.startsWith('application/json')
+  return {
+    status: response.status,
+    body: text === '' ? null : isJson ? JSON.parse(text) : text,
+    headers: response.headers,
+  }
 }
 
 function match(path: string) {

@@ -1,3 +1,4 @@
+import { fileNameOf } from '@/lib/server/http/file-name'
 import { route } from '@/lib/server/http/route'
 import { getCircuit } from '@/lib/server/use-cases/circuits/get-circuit'
 
@@ -8,17 +9,8 @@ export const GET = route({
     new Response(`${JSON.stringify(document, null, 2)}\n`, {
       headers: {
         'content-type': 'application/json; charset=utf-8',
-        'content-disposition': `attachment; filename="${fileName(document.title)}"`,
+        'content-disposition': `attachment; filename="${fileNameOf(document.title)}.halfsplit.json"`,
         'cache-control': 'no-store',
       },
     }),
 })
-
-function fileName(title: string): string {
-  const plain = title
-    .normalize('NFKD')
-    .replace(/[^A-Za-z0-9]+/g, '-')
-    .replace(/^-|-$/g, '')
-    .toLowerCase()
-  return `${plain || 'circuit'}.halfsplit.json`
-}
