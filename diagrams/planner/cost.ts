@@ -11,6 +11,8 @@ const readingMinutes = 0.5
 const controlMinutes = 0.2
 const batteryMinutes = 3
 const plainAccessMinutes = 2
+/** To put in a lead or a stand-in load (common practice, no source; the page gives none). */
+const leadMinutes = 1
 
 /** Where the person stands: the condition of the vehicle and what is laid open already. */
 export interface Workplace {
@@ -26,6 +28,11 @@ export function workplaceAfter(circuit: Circuit, probes: readonly Probe[]): Work
   for (const probe of probes) {
     for (const place of placesOf(circuit, probe)) reached.add(place.id)
     for (const id of probe.condition.unplugged) reached.add(id)
+    for (const { from, to } of probe.condition.added)
+      for (const point of [from, to]) {
+        const place = placeOf(circuit, point)
+        if (place) reached.add(place.id)
+      }
   }
   return { condition: probes.at(-1)?.condition ?? restCondition, reached }
 }
@@ -50,7 +57,22 @@ export function minutesFor(circuit: Circuit, probe: Probe, workplace: Workplace)
     minutes += 1 + access / 2
   }
   for (const place of placesOf(circuit, probe)) reach(place.id, place.minutes)
+  const isIn = (lead: Lead) => workplace.condition.added.some((other) => sameLead(other, lead))
+  for (const lead of probe.condition.added) {
+    if (isIn(lead)) continue
+    minutes += leadMinutes
+    for (const point of [lead.from, lead.to]) {
+      const place = placeOf(circuit, point)
+      if (place) reach(place.id, place.minutes)
+    }
+  }
   return minutes
+}
+
+type Lead = Condition['added'][number]
+
+function sameLead(a: Lead, b: Lead): boolean {
+  return a.from === b.from && a.to === b.to && a.ohms === b.ohms
 }
 
 interface Place {
@@ -59,7 +81,7 @@ interface Place {
 }
 
 /** Connectors and parts that the leads have to get at. A load can be seen or heard from where one stands. */
-function placesOf(circuit: Circuit, probe: Probe): Place[] {
+export function placesOf(circuit: Circuit, probe: Probe): Place[] {
   switch (probe.kind) {
     case 'volts':
     case 'ohms':

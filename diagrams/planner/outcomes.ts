@@ -62,6 +62,7 @@ function outcomeOf(
     .map(([site]) => site)
   const probability = covered > 0 ? mass / covered : 0
   if (probe.kind === 'works') return { about: bin.high >= 0.5 ? 'works' : 'does not', probability, leaves }
+  if (probe.kind === 'sees') return { about: bin.high >= 0.5 ? 'high' : 'low', probability, leaves }
   if (bin.low === Infinity) return { about: 'OL', probability, leaves }
   const { high } = bin
   const slack = resolution(probe.kind, high)

@@ -3,6 +3,7 @@ import { restCondition, type Condition } from '@/diagrams/document/condition-sch
 import type { Probe, ReadingValue } from '@/diagrams/document/reading-schema'
 import { noAlteration, withBlown, type Alteration } from '@/diagrams/solver/alteration'
 import { blownFuses, fuseBranch } from '@/diagrams/solver/blown-fuses'
+import { buildNetwork } from '@/diagrams/solver/build-network'
 import { Case, voltsAt, type Settled } from '@/diagrams/solver/case'
 import { alterationOf, isShort, plainSeverity } from '@/diagrams/solver/fault-alteration'
 import { readMeter } from '@/diagrams/solver/meter'
@@ -29,6 +30,9 @@ export interface Deviations {
 export class Vehicle {
   private readonly resting: Network
   private readonly charging: Network
+  private readonly restingScale: number
+  private readonly chargingScale: number
+  private readonly factorOf: (branch: string) => number
   private readonly alteration: Alteration
   private readonly severity: number
   private readonly cases = new Map<string, { given: Case; settled: Settled | null }>()
@@ -41,15 +45,17 @@ export class Vehicle {
   ) {
     const factors = new Map<string, number>()
     const weak = fault?.mode === 'weak'
-    const factorOf = (branch: string): number => {
+    this.factorOf = (branch: string): number => {
       // Both halves of a wire, both throws of a relay are one part.
       const part = branch.startsWith('pin:') ? branch : branch.replace(/\/.*$/, '')
       let factor = factors.get(part)
       if (factor === undefined) factors.set(part, (factor = deviations.partFactor()))
       return factor
     }
-    this.resting = offBy(drawn, factorOf, weak ? 1 : deviations.restingVolts / 12.6)
-    this.charging = offBy(drawn, factorOf, weak ? 1 : deviations.chargingVolts / 14.15)
+    this.restingScale = weak ? 1 : deviations.restingVolts / 12.6
+    this.chargingScale = weak ? 1 : deviations.chargingVolts / 14.15
+    this.resting = offBy(drawn, this.factorOf, this.restingScale)
+    this.charging = offBy(drawn, this.factorOf, this.chargingScale)
     this.driving = drivingConditions(drawn).map((condition) => new Study(this.resting, condition))
     this.severity = fault ? (fault.volts ?? fault.ohms ?? plainSeverity(fault.mode)) : 0
     this.alteration = fault ? alterationOf(this.resting, fault) : noAlteration
@@ -64,12 +70,21 @@ export class Vehicle {
     const key = JSON.stringify(probe.condition)
     let found = this.cases.get(key)
     if (!found) {
-      const network = probe.condition.charging ? this.charging : this.resting
-      if (probe.condition.added.length > 0) throw new Error('leads added are not known here')
+      const network = this.networkIn(probe.condition)
       const given = new Case(new Study(network, probe.condition), this.alteration)
       this.cases.set(key, (found = { given, settled: given.settle(this.severity) }))
     }
     return found.settled && readMeter(found.given, found.settled, probe)
+  }
+
+  private networkIn({ charging, added }: Condition): Network {
+    if (added.length > 0)
+      return offBy(
+        buildNetwork(this.drawn.circuit, added),
+        this.factorOf,
+        charging ? this.chargingScale : this.restingScale,
+      )
+    return charging ? this.charging : this.resting
   }
 
   /** Whether the fault counts on this vehicle, by the page: a point moved by over 0.4 V, or a load or an input changed. */
