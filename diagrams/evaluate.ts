@@ -1,20 +1,23 @@
 import type { Answer, ModeAnswer, Outcome, SiteAnswer } from './faults/answer'
 import { clearances, type Clearance } from './faults/clearance'
 import { codeEvidence } from './faults/code-evidence'
-import { fitsAll, weighReadings } from './faults/evidence'
+import { weighReadings, type Evidence } from './faults/evidence'
+import { explain } from './faults/explain'
 import { faultModelOf, type FaultModel } from './faults/fault-model'
-import { readingToSetAside } from './faults/misfit'
+import { misfitOf } from './faults/misfit'
+import { areTwoFaults } from './faults/pair-odds'
+import { searchPairs } from './faults/pair-search'
 import { posteriorOf, siteProbabilities, type Posterior } from './faults/posterior'
 import { allReports } from './faults/report-evidence'
 import { judgeReadings } from './faults/reading-sentence'
 import type { EvaluationRequest } from './faults/request'
 import { explainedByLikeliest, symptomEvidence } from './faults/symptom-evidence'
 import { symptomSentence } from './faults/symptom-sentence'
-import { verdictSentence } from './faults/verdict-sentence'
-import { sitesOf } from './document/sites'
-import { outcomesOf } from './planner/outcomes'
+import { modeWeight } from './faults/priors'
+import { sitesOf, type Mode } from './document/sites'
+import { nextReadings } from './next-readings'
 import { planNext, type Plan } from './planner/plan-next'
-import { nextWords } from './planner/wording'
+import { answerTwoFaults } from './two-faults'
 
 /** One site, or one group that cannot be told apart, is located when it holds this much. */
 const locatedFrom = 0.95
@@ -29,12 +32,18 @@ export function evaluate(request: EvaluationRequest): Answer {
   const { circuit, readings, codes, priors, odds, symptoms = [] } = request
   const model = faultModelOf(circuit)
   const full = weighReadings(model, readings)
-  const fits = [full.good, ...full.cells.flat()].some((cell) => fitsAll(full, cell, readings))
-  const aside = readingToSetAside(model, readings, full, fits, priors, odds)
-  const evidence = aside === null ? full : weighReadings(model, readings, new Set([aside]))
   const complaint = symptomEvidence(model, symptoms)
   const told = allReports([codeEvidence(model, codes), complaint])
-  const posterior = posteriorOf(model, evidence, priors, told, odds)
+  const posteriorFor = (evidence: Evidence) => posteriorOf(model, evidence, priors, told, odds)
+  const misfit = misfitOf(model, readings, full, posteriorFor)
+  if (misfit && !misfit.above) {
+    const weightOf = (site: string, mode: Mode) => modeWeight(circuit, site, mode, priors, odds)
+    const search = searchPairs(model, full, readings, weightOf, told)
+    if (areTwoFaults(misfit, search)) return answerTwoFaults(search, full, readings)
+  }
+  const aside = misfit?.reading ?? null
+  const evidence = aside === null ? full : weighReadings(model, readings, new Set([aside]))
+  const posterior = posteriorFor(evidence)
   const kept = aside === null ? readings : readings.filter((_, r) => r !== aside)
   const plan = planNext(model, posterior, kept)
 
@@ -55,29 +64,17 @@ export function evaluate(request: EvaluationRequest): Answer {
       siteAnswer(site, model, posterior, probabilities.get(site) ?? 0, cleared.get(site)!, outcome, located),
     )
     .toSorted((a, b) => b.probability - a.probability)
-  const answer: Omit<Answer, 'says'> = {
+  const answer = explain(model.circuit, readings, {
     outcome,
     noFault: posterior.noFault,
     sites: siteAnswers,
     readings: judged,
     ...(outcome === 'cannot-be' && aside !== null ? { reading: readings[aside]!.id } : {}),
-    next: plan.next.map((planned) => {
-      const outcomes = outcomesOf(planned, plan.particles)
-      return {
-        ...planned.probe,
-        bits: planned.bits,
-        minutes: planned.minutes,
-        outcomes,
-        says: nextWords(circuit, planned.probe, planned.minutes, outcomes),
-      }
-    }),
+    next: nextReadings(circuit, plan),
     inseparable: plan.inseparable,
-  }
+  })
   const explains = complaint ? explainedByLikeliest(complaint, posterior) : ''
-  const says = [
-    verdictSentence(circuit, readings, answer),
-    symptomSentence(circuit, symptoms, outcome, explains),
-  ]
+  const says = [answer.says, symptomSentence(circuit, symptoms, outcome, explains)]
   return { ...answer, says: says.filter(Boolean).join(' ') }
 }
 
@@ -115,7 +112,7 @@ function siteAnswer(
   clearance: Clearance,
   outcome: Outcome,
   located: readonly string[] | null,
-): SiteAnswer {
+): Omit<SiteAnswer, 'says'> {
   const good = clearance.cleared && outcome !== 'cannot-be'
   const faulty = outcome === 'located' && located!.includes(site)
   return {

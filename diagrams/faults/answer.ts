@@ -24,6 +24,19 @@ export interface SiteAnswer {
   clearedBy: string[]
   probability: number
   modes: ModeAnswer[]
+  /** How it stands and why, in one or two plain sentences. */
+  says: string
+}
+
+/** Two faults that explain the readings together, the first with the greater probability of its own. */
+export interface PairAnswer {
+  sites: [string, string]
+  modes: [Mode, Mode]
+  /** Most likely severities in ohm; null where the mode has none. */
+  ohms: [number | null, number | null]
+  /** Ids of the readings that speak of each: those that the other one alone would not show. */
+  readings: [string[], string[]]
+  probability: number
 }
 
 export interface ReadingAnswer {
@@ -67,6 +80,8 @@ export interface Answer {
   readings: ReadingAnswer[]
   /** With `cannot-be` only: the reading to take again. */
   reading?: string
+  /** With `two-faults` only: the likeliest pairs, at most five. The sites' probabilities are then each site's own and sum to 2. */
+  pairs?: PairAnswer[]
   next: NextReading[]
   inseparable: string[][]
   /** The verdict in plain sentences. */
