@@ -3,7 +3,6 @@ import { sitesOf } from './document/sites'
 import type { Answer } from './faults/answer'
 import type { Evidence } from './faults/evidence'
 import { explain, type UnexplainedAnswer } from './faults/explain'
-import { explain } from './faults/explain'
 import { pairAnswers, pairModes, pairOdds, siteShares } from './faults/pair-answer'
 import type { PairSearch } from './faults/pair-search'
 import { judgeReadings } from './faults/reading-sentence'
@@ -35,7 +34,7 @@ export function answerTwoFaults(
   )
   const sites = sitesOf(circuit)
     .map(
-      ({ id }): Omit<SiteAnswer, 'says'> => ({
+      ({ id }): UnexplainedAnswer['sites'][number] => ({
         site: id,
         verdict: faulty.has(id) ? 'faulty' : 'in-question',
         firm: false,
