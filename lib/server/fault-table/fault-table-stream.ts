@@ -41,11 +41,11 @@ export function faultTableStream(circuit: Circuit, format: TableFormat): Readabl
     tables.running--
     void thread?.terminate()
   }
-  const send = (ask: TableAsk) => thread?.postMessage(ask)
-  const open = async () => {
-    thread = sourceThread('lib/server/fault-table/fault-table-thread.ts', mostMegabytes)
-    await nextMessage(thread, startMilliseconds)
-    send({ do: 'open', circuit, format })
+  const open = async (): Promise<Worker> => {
+    const opened = (thread = sourceThread('lib/server/fault-table/fault-table-thread.ts', mostMegabytes))
+    await nextMessage(opened, startMilliseconds)
+    opened.postMessage({ do: 'open', circuit, format } satisfies TableAsk)
+    return opened
   }
   const waitForReader = (controller: ReadableStreamDefaultController<Uint8Array>) => {
     clearTimeout(idle)
@@ -61,9 +61,9 @@ export function faultTableStream(circuit: Circuit, format: TableFormat): Readabl
       async pull(controller) {
         clearTimeout(idle)
         try {
-          if (!thread) await open()
-          send({ do: 'more' })
-          const { text, done } = (await nextMessage(thread!, portionMilliseconds)) as TableReply
+          const writer = thread ?? (await open())
+          writer.postMessage({ do: 'more' } satisfies TableAsk)
+          const { text, done } = (await nextMessage(writer, portionMilliseconds)) as TableReply
           if (ended) return
           if (text !== '') controller.enqueue(encoder.encode(text))
           if (done) {

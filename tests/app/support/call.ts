@@ -54,7 +54,7 @@ export async function call(
   } as RequestInit)
   const response = await handler(request, { params: Promise.resolve(found.params) })
   const text = await response.text()
-  const isJson = response.headers.get('content-type')?.startsWith('application/json')
+  const isJson = /[/+]json/.test(response.headers.get('content-type') ?? '')
   return {
     status: response.status,
     body: text === '' ? null : isJson ? JSON.parse(text) : text,
