@@ -8,6 +8,7 @@ import { candidateReadings, mostConditions } from './candidates'
 import { chooseNext } from './choose-next'
 import { particlesOf, type Particle } from './particles'
 import { Scales, type PlannedReading } from './scales'
+import { wideReadings } from './wide-readings'
 
 export type { PlannedReading } from './scales'
 
@@ -26,6 +27,8 @@ const weighings = 6000
 const leastConditions = 12
 /** Leads are thought of when this few particles are left: before that, plain readings split better. */
 const leadsUpTo = 200
+/** A group that holds this much may soon be called the place. */
+const groupFrom = 0.5
 
 /**
  * Weighs every candidate reading by the drop in entropy over sites it is expected to bring, divided
@@ -53,6 +56,10 @@ export function planNext(model: FaultModel, posterior: Posterior, readings: read
   if (scales.found.length === 0 && readings.length > 0)
     for (const set of candidateReadings(circuit, suspects, present, { deadControls: movedControls(circuit) }))
       scales.weigh(set)
+  // Before places are called one group, the search is made wider round them.
+  const massOf = (group: readonly string[]) => group.reduce((sum, site) => sum + bySite.get(site)!, 0)
+  const heavy = alike.groups().filter((group) => massOf(group) >= groupFrom)
+  for (const group of heavy) for (const set of wideReadings(circuit, group)) scales.weigh(set)
   return {
     particles,
     next: chooseNext(circuit, scales.found),

@@ -24,7 +24,10 @@ const locatedFrom = 0.95
 /** No group that cannot be told apart is larger than this in practice. */
 const largestGroup = 8
 
-/** Takes the readings a policy asks for until the place is found, by the evaluator's own rule, or `most` are taken. */
+/**
+ * Takes the readings a policy asks for until the place is found, by the evaluator's own rule, or `most` are
+ * taken. Null where the vehicle does not come to rest in a condition asked for: nothing can be read there.
+ */
 export function traceByPolicy(
   circuit: Circuit,
   vehicle: Circuit,
@@ -32,7 +35,7 @@ export function traceByPolicy(
   policy: Policy,
   random: () => number,
   most: number,
-): PolicyRun {
+): PolicyRun | null {
   const model = faultModelOf(circuit)
   const readings: Reading[] = []
   let minutes = 0
@@ -54,7 +57,7 @@ export function traceByPolicy(
     const probe = policy({ model, posterior, readings })
     if (!probe) return run(false)
     const reading = takeReading(`r${readings.length + 1}`, vehicle, probe, fault, random)
-    if (!reading) throw new Error(`a reading that cannot be taken: ${JSON.stringify(probe)}`)
+    if (!reading) return null
     minutes += minutesFor(circuit, probe, workplaceAfter(circuit, readings))
     readings.push(reading)
   }
