@@ -20,10 +20,11 @@ export function takeReading(
 ): Reading | null {
   const measured = measure(vehicle, probe, fault)
   if (!measured.ok) return null
-  return readingSchema.parse({ id, ...probe, value: shown(probe, measured.value, random) })
+  return readingSchema.parse({ id, ...probe, value: shownBy(probe, measured.value, random) })
 }
 
-function shown(probe: Probe, value: ReadingValue, random: () => number): ReadingValue {
+/** What a meter shows of a true value, its error anywhere within its limits. */
+export function shownBy(probe: Probe, value: ReadingValue, random: () => number): ReadingValue {
   if (typeof value !== 'number' || (probe.kind !== 'volts' && probe.kind !== 'ohms' && probe.kind !== 'amps'))
     return value
   const [part, floor] = limits[probe.kind]
