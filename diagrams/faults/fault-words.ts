@@ -14,6 +14,7 @@ export function faultWords(
 ): string {
   const name = siteName(circuit, site)
   const at = atSite(circuit, site)
+  // How good a short is says little to whoever looks for it.
   const about = fault.ohms === null ? '' : `: ${aboutOhms(fault.ohms)}`
   switch (fault.mode) {
     case 'open':
@@ -21,13 +22,13 @@ export function faultWords(
     case 'resistive':
       return `${capital(modeNoun(circuit, site, 'resistive'))} ${at}${about}`
     case 'short-to-ground':
-      return `Short to ground ${at}${about}`
+      return `Short to ground ${at}`
     case 'short-to-supply':
-      return `Short to supply ${at}${about}`
+      return `Short to supply ${at}`
     case 'short-to-wire':
-      return `${capital(name)} touches ${fault.other ? siteName(circuit, `wire:${fault.other}`) : 'another wire'}${about}`
+      return `${capital(name)} touches ${fault.other ? siteName(circuit, `wire:${fault.other}`) : 'another wire'}`
     case 'shorted':
-      return `${capital(name)} is shorted inside${about}`
+      return `${capital(name)} is shorted inside`
     case 'blown':
       return `${capital(name)} has blown`
     case 'weak':

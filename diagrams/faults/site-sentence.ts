@@ -1,6 +1,5 @@
 import type { Circuit } from '../document/circuit-schema'
 import { siteName } from '../document/sites'
-import type { Reading } from '../document/reading-schema'
 import type { Outcome, SiteAnswer } from './answer'
 import { modeNoun } from './fault-words'
 import { aboutOhms, capital, listWords, percentWords, readingNames } from './value-words'
@@ -8,6 +7,10 @@ import { aboutOhms, capital, listWords, percentWords, readingNames } from './val
 /** Modes rarer than this are not named. */
 const leastMode = 0.005
 const mostModes = 3
+const withdrawnBy: Partial<Record<Outcome, string>> = {
+  'cannot-be': ' Nothing is proved good while a reading fits no fault.',
+  'two-faults': ' Nothing is proved good while there are two faults.',
+}
 
 /**
  * How one place stands and why: "F14 proved good by R2, if there is one fault and no reading is wrong.",
@@ -15,11 +18,11 @@ const mostModes = 3
  */
 export function siteSentence(
   circuit: Circuit,
-  readings: readonly Reading[],
+  readings: readonly { id: string }[],
   outcome: Outcome,
   site: Omit<SiteAnswer, 'says'>,
 ): string {
-  const name = capital(siteName(circuit, site.site))
+  const name = capital(keptName(circuit, site.site))
   if (readings.length === 0) return `${name}: no reading yet.`
   if (site.verdict === 'proved-good') {
     if (site.clearedBy.length === 0) return `${name} proved good: no fault of it would show in this circuit.`
@@ -28,7 +31,7 @@ export function siteSentence(
       ? `${name} proved good by ${by}, if there is one fault. It holds with any one reading left out.`
       : `${name} proved good by ${by}, if there is one fault and no reading is wrong.`
   }
-  const withdrawn = outcome === 'cannot-be' ? ' Nothing is proved good while a reading fits no fault.' : ''
+  const withdrawn = withdrawnBy[outcome] ?? ''
   const modes = modesWords(circuit, site)
   const ways = modes ? `: ${modes}` : ''
   if (site.verdict === 'faulty') return `${name} faulty, ${percentWords(site.probability)} likely${ways}.`
@@ -43,8 +46,20 @@ function modesWords(circuit: Circuit, site: Omit<SiteAnswer, 'says'>): string {
     .filter((mode) => mode.probability > leastMode)
     .slice(0, mostModes)
     .map((mode) => {
-      const about = mode.ohms === null || !known ? '' : ` of ${aboutOhms(mode.ohms)}`
+      const about =
+        mode.ohms === null || mode.mode !== 'resistive' || !known ? '' : ` of ${aboutOhms(mode.ohms)}`
       return `${modeNoun(circuit, site.site, mode.mode)}${about} ${percentWords(mode.probability)}`
     })
     .join(', ')
+}
+
+/** Names of places by circuit: asked for every place with every reading, of a document that does not change. */
+const namesByCircuit = new WeakMap<Circuit, Map<string, string>>()
+
+function keptName(circuit: Circuit, site: string): string {
+  let names = namesByCircuit.get(circuit)
+  if (!names) namesByCircuit.set(circuit, (names = new Map()))
+  let name = names.get(site)
+  if (name === undefined) names.set(site, (name = siteName(circuit, site)))
+  return name
 }

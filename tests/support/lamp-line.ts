@@ -39,7 +39,7 @@ export function lampLine(loadOhms = 6, coldOhms?: number): Circuit {
       'c1-2.a > g1.in', // w6
     ],
     {
-      controls: [onOff('key')],
+      controls: [{ ...onOff('key'), label: 'Key' }],
       connectors: [
         { id: 'c1', label: 'C1', cavities: 2 },
         { id: 'c2', label: 'C2', cavities: 2 },

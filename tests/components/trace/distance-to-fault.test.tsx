@@ -26,6 +26,7 @@ function located(mode: 'short-to-ground' | 'open'): Answer {
         verdict: 'faulty',
         firm: false,
         clearedBy: [],
+        says: '',
         probability: 1,
         modes: [{ mode, probability: 1, ohms: null, other: null, blows: [] }],
       },

@@ -78,6 +78,7 @@ describe('what a trace lays over its sheet', () => {
           verdict: 'faulty',
           firm: false,
           clearedBy: [],
+          says: '',
           probability: 0.98,
           modes: [
             { mode: 'open', probability: 0.01, ohms: null, other: null, blows: [] },
