@@ -8,6 +8,7 @@ import type { Answer, ModeAnswer, SiteAnswer } from './answer'
 import { atSite, faultWords, modeNoun } from './fault-words'
 import { misfitSentence } from './misfit-sentence'
 import { moduleWords } from './module-words'
+import { pairSentence } from './pair-sentence'
 import { stretchLeft } from './stretch-left'
 import { listWords, percentWords } from './value-words'
 import { whyWords } from './why-words'
@@ -30,7 +31,7 @@ export function verdictSentence(
     case 'cannot-be':
       return misfitSentence(circuit, readings, answer.readings, answer.reading)
     case 'two-faults':
-      return 'Two faults stand together here; no single one gives these readings.'
+      return pairSentence(circuit, readings, answer)
     case 'narrowed':
       return narrowedSentence(circuit, readings, answer)
   }
