@@ -1,7 +1,7 @@
 import { sitesOf } from '@/diagrams/document/sites'
 import type { Circuit } from '@/diagrams/document/circuit-schema'
 import type { Probe } from '@/diagrams/document/reading-schema'
-import { fitsAll, weighReadings } from '@/diagrams/faults/evidence'
+import { weighReadings } from '@/diagrams/faults/evidence'
 import { FaultModel } from '@/diagrams/faults/fault-model'
 import { samples } from '@/diagrams/samples/all-samples'
 import { clearanceRun, readingPool, type ClearanceRun } from '../support/clearance-run'
@@ -72,7 +72,8 @@ function note(count: Count, run: ClearanceRun | null, number: number, kind: stri
 
 function cannotBe({ whole }: Subject, { readings }: ClearanceRun): boolean {
   const evidence = weighReadings(whole, readings)
-  return ![evidence.good, ...evidence.cells.flat()].some((cell) => fitsAll(evidence, cell, readings))
+  if (evidence.fits(-1, 0)) return false
+  return whole.hypotheses.every(({ cells }, h) => cells.every((_, c) => !evidence.fits(h, c)))
 }
 
 const end = Date.now() + 1000 * seconds
