@@ -7,7 +7,7 @@ import type { TraceSession } from './use-trace-session'
 /** On a phone: what comes next at the foot, and the whole screen that it opens for one reading. */
 export function PhoneEntry({ session, onFinish }: { session: TraceSession; onFinish: () => void }) {
   const { circuit, counts, started, located, next, meter } = session
-  const { red, wire, node } = meter.state
+  const { red, wire, node, pin } = meter.state
   const left = !counts
     ? '-'
     : started && counts.faulty > 0
@@ -26,7 +26,8 @@ export function PhoneEntry({ session, onFinish }: { session: TraceSession; onFin
           size="bay"
           className="flex-1"
           onClick={() => {
-            if (next && red === null && wire === null && node === null) session.setMeterFor(next)
+            if (next && red === null && wire === null && node === null && pin === null)
+              session.setMeterFor(next)
             session.setEntering(true)
           }}
         >

@@ -3,8 +3,8 @@
 import type { Circuit } from '@/diagrams/document/circuit-schema'
 import type { SiteAnswer } from '@/diagrams/faults/answer'
 import { Button } from '../ui/button'
-import { VerdictGlyph, verdictWords } from '../ui/verdict-glyph'
-import { modeWords, siteTitle } from './site-words'
+import { VerdictGlyph } from '../ui/verdict-glyph'
+import { siteTitle } from './site-words'
 
 /** How one place stands and why, over the foot of the sheet. */
 export function PlaceNote({
@@ -18,6 +18,9 @@ export function PlaceNote({
   started: boolean
   onClose: () => void
 }) {
+  const [head, rest] = started
+    ? headAndRest(site.says)
+    : [`${siteTitle(circuit, site.site)}:`, ' no reading yet, any place can be at fault.']
   return (
     <aside
       aria-label="The picked place"
@@ -25,11 +28,10 @@ export function PlaceNote({
     >
       {started && <VerdictGlyph verdict={site.verdict} size={26} />}
       <div className="min-w-0 flex-1 text-dense" role="status">
-        <p className="font-bold">
-          {siteTitle(circuit, site.site)}
-          {started && `, ${verdictWords[site.verdict]}`}
+        <p>
+          <b>{head}</b>
+          {rest}
         </p>
-        <p className="text-ink-2">{started ? why(site) : 'No reading yet: any place can be at fault.'}</p>
       </div>
       <Button look="text" onClick={onClose}>
         Let go
@@ -38,23 +40,8 @@ export function PlaceNote({
   )
 }
 
-function why(site: SiteAnswer): string {
-  if (site.verdict === 'proved-good') {
-    const by = site.clearedBy.length > 0 ? `Proved by ${site.clearedBy.join(', ')}. ` : ''
-    return site.firm
-      ? `${by}It also holds with any one reading left out. Cleared if there is one fault.`
-      : `${by}Cleared if there is one fault and no reading is wrong.`
-  }
-  const modes = site.modes
-    .filter((mode) => mode.probability > 0.005)
-    .toSorted((one, other) => other.probability - one.probability)
-    .slice(0, 3)
-    .map((mode) => `${modeWords[mode.mode]} ${percent(mode.probability)}`)
-  return `${percent(site.probability)} likely${modes.length > 0 ? `: ${modes.join(', ')}` : ''}.`
-}
-
-function percent(share: number): string {
-  if (share < 0.01) return 'under 1 %'
-  if (share > 0.99) return 'over 99 %'
-  return `${Math.round(share * 100)} %`
+/** Place and verdict, then why: "F14 proved good by R2" and ", if there is one fault." */
+function headAndRest(says: string): [string, string] {
+  const end = says.search(/[,:]/)
+  return end < 0 ? [says, ''] : [says.slice(0, end), says.slice(end)]
 }

@@ -5,7 +5,7 @@ import { pointName } from '@/diagrams/document/points'
 import type { Reading } from '@/diagrams/document/reading-schema'
 import type { Answer, ReadingAnswer } from '@/diagrams/faults/answer'
 import { readingNumber } from '@/lib/client/evaluator/numbered-readings'
-import { conditionWords, measuredWords, valueWords } from '@/lib/client/meter/reading-words'
+import { conditionWords, measuredWords, movedWords, valueWords } from '@/lib/client/meter/reading-words'
 import { Button } from '../ui/button'
 import { classNames } from '../ui/class-names'
 import { LeadGlyph } from '../ui/lead-glyph'
@@ -126,6 +126,7 @@ function ReadingRow({
       </div>
       <div className="flex-none text-right">
         <p className="figures text-lead">{valueWords(reading.kind, reading.value)}</p>
+        {reading.moved && <p className="text-small text-ink-2">{movedWords(reading)}</p>}
         {expected !== undefined && expected !== null && (
           <p className="text-small text-ink-2">good: {valueWords(reading.kind, expected)}</p>
         )}

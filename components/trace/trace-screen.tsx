@@ -2,6 +2,7 @@
 
 import { useRef, useState } from 'react'
 import { useKeyCommands } from '@/lib/client/keys/use-key-commands'
+import { takesFigure } from '@/lib/client/meter/meter-state'
 import type { Trace } from '@/lib/shared/api/traces'
 import { circuitModes } from '../operate/circuit-modes'
 import { ModeSwitch } from '../shell/mode-switch'
@@ -27,7 +28,7 @@ export function TraceScreen({ initial }: { initial: Trace }) {
   const [showingKeys, setShowingKeys] = useState(false)
   const field = useRef<HTMLInputElement>(null)
 
-  useTypingIntoMeter(field, meter.act, !done && meter.state.kind !== 'works')
+  useTypingIntoMeter(field, meter.act, !done && takesFigure(meter.state.kind))
   useKeyCommands({
     m: () => field.current?.focus(),
     n: () => next && session.setMeterFor(next),

@@ -45,10 +45,10 @@ export function useMeter(
 ): MeterWork {
   const [state, dispatch] = useReducer(meterReducer, restMeter)
   const [refused, setRefused] = useState<Refusal | null>(null)
-  const { kind, red, black, wire, node, condition } = state
+  const { kind, red, black, wire, node, pin, condition } = state
   const probe = useMemo(
-    () => probeOf({ ...restMeter, kind, red, black, wire, node, condition }),
-    [kind, red, black, wire, node, condition],
+    () => probeOf({ ...restMeter, kind, red, black, wire, node, pin, condition }),
+    [kind, red, black, wire, node, pin, condition],
   )
   const illegal = useMemo(() => (probe ? refuseReading(circuit, probe) : null), [circuit, probe])
   const setForNext = next !== null && sameProbe(circuit, probe, probeOfNext(next))
@@ -73,6 +73,9 @@ export function useMeter(
       const entered = enterReading(circuit, state, newId())
       if (!entered.ok) {
         setRefused(entered)
+        // The figure that is missing or wrong is the one to type next.
+        if (entered.about !== 'leads' && entered.about !== 'condition')
+          dispatch({ do: 'pick-figure', figure: entered.about })
         return
       }
       setRefused(null)

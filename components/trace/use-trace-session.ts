@@ -4,6 +4,7 @@ import type { NextReading } from '@/diagrams/faults/answer'
 import { useAnswer } from '@/lib/client/evaluator/use-answer'
 import type { Trace } from '@/lib/shared/api/traces'
 import type { Picked } from '../canvas/pick-at'
+import { moduleInputs } from './meter/module-inputs'
 import { useMeter } from './use-meter'
 import { useTrace } from './use-trace'
 import { verdictCounts } from './verdict-counts'
@@ -78,7 +79,13 @@ export function useTraceSession(initial: Trace) {
     /** A finger on the sheet: a lead, a clamp, the load that is looked at, or a place to be told about. */
     pick(picked: Picked | null) {
       if (!picked) return setSite(null)
-      if ('point' in picked) return done ? undefined : meter.act({ do: 'tap-point', point: picked.point })
+      if ('point' in picked) {
+        if (done) return
+        const sees = meter.state.kind === 'sees' && moduleInputs(circuit).includes(picked.point)
+        return meter.act(
+          sees ? { do: 'tap-pin', pin: picked.point } : { do: 'tap-point', point: picked.point },
+        )
+      }
       if ('wire' in picked) {
         if (meter.state.kind === 'amps' && !done) meter.act({ do: 'tap-wire', wire: picked.wire })
         return setSite(`wire:${picked.wire}`)

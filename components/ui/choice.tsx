@@ -23,6 +23,7 @@ export function Choice<Value extends string>({
   onChange,
   size = 'control',
   fill = false,
+  tight = false,
   className,
 }: {
   label: string
@@ -33,6 +34,8 @@ export function Choice<Value extends string>({
   size?: 'control' | 'bay'
   /** Takes the width it is given, in equal parts. */
   fill?: boolean
+  /** Little room beside the words, where five stand in a row. */
+  tight?: boolean
   className?: string
 }) {
   const name = useId()
@@ -52,8 +55,9 @@ export function Choice<Value extends string>({
             key={option.value}
             htmlFor={`${name}-${option.value}`}
             className={classNames(
-              'focus-ring relative flex items-center justify-center px-4 font-bold text-body text-center select-none',
+              'focus-ring relative flex items-center justify-center font-bold text-body text-center select-none',
               'transition-colors duration-press has-[:focus-visible]:z-marks has-[:focus-visible]:rounded-field',
+              tight ? 'px-1' : 'px-4',
               fill ? 'flex-1' : 'flex-auto whitespace-nowrap',
               size === 'bay' ? 'min-h-bay min-w-bay' : 'min-h-target min-w-target',
               index > 0 && 'border-l border-line',

@@ -6,7 +6,9 @@ import { connectorName, nodeName, pointName } from './points'
 /** Ohm from which an added lead is a stand-in for a load and no longer a plain lead. */
 const standInFromOhms = 1
 /** A test lamp of 3 W on 12 V. */
-const testLampOhms = 48
+export const testLampOhms = 48
+/** A fused lead, clips and all. */
+export const fusedLeadOhms = 0.05
 
 /** "Key on, C7 unplugged, F3 pulled, battery disconnected": what differs from the vehicle as one finds it. */
 export function conditionParts(circuit: Circuit, condition: Condition): string[] {

@@ -3,7 +3,7 @@
 import type { Circuit } from '@/diagrams/document/circuit-schema'
 import type { Reading } from '@/diagrams/document/reading-schema'
 import type { ReadingAnswer } from '@/diagrams/faults/answer'
-import { measuredWords, valueWords } from '@/lib/client/meter/reading-words'
+import { measuredWords, movedWords, valueWords } from '@/lib/client/meter/reading-words'
 import { printInks } from '../../canvas/inks'
 
 export interface HandoutReading {
@@ -50,6 +50,9 @@ export function HandoutReadings({ circuit, rows }: { circuit: Circuit; rows: rea
             </td>
             <td style={{ ...figure, fontWeight: 700, fontSize: '17px' }}>
               {valueWords(reading.kind, reading.value)}
+              {reading.moved && (
+                <div style={{ fontWeight: 400, fontSize: '13px' }}>{movedWords(reading)}</div>
+              )}
             </td>
             <td style={{ ...figure, paddingRight: 0 }}>
               {told && told.expected !== null ? valueWords(reading.kind, told.expected) : ''}

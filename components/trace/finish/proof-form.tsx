@@ -25,6 +25,18 @@ const yesNo = [
   { value: 'no', label: 'Does not' },
 ] as const
 
+const levels = [
+  { value: 'yes', label: 'High' },
+  { value: 'no', label: 'Low' },
+] as const
+const unsaid = {
+  volts: 'Type what the meter shows now.',
+  ohms: 'Type what the meter shows now.',
+  amps: 'Type what the meter shows now.',
+  works: 'Say whether it works.',
+  sees: 'Say what the module sees.',
+}
+
 /** The confirming reading after the repair, and whether the circuit does its job again. */
 export function ProofForm({
   circuit,
@@ -47,13 +59,12 @@ export function ProofForm({
   const chosen = choices.find((one) => one.number === number)
   if (!chosen) return <p>Take at least one reading first: it is the one to take again after the repair.</p>
   const { kind } = chosen.probe
-  const looks = kind === 'works'
+  const looks = kind === 'works' || kind === 'sees'
 
   const send = () => {
-    const meterKind = kind === 'sees' ? 'volts' : kind
-    const value = typedValue({ kind: meterKind, text, works: said })
-    if (value === null) return setMissing(looks ? 'Say whether it works.' : 'Type what the meter shows now.')
-    const doubt = doubtTyped(circuit, meterKind, value)
+    const value = typedValue({ kind, text, works: said, sees: said === null ? null : said ? 'high' : 'low' })
+    if (value === null) return setMissing(unsaid[kind])
+    const doubt = doubtTyped(circuit, kind, value)
     if (doubt) return setMissing(doubt.message)
     if (works === null) return setMissing('Say whether the circuit works now.')
     const reading: Reading | null = readingFrom(newId(), chosen.probe, value)
@@ -96,10 +107,10 @@ export function ProofForm({
       </p>
       {looks ? (
         <Choice
-          label="It now"
+          label={kind === 'sees' ? 'The module sees now' : 'It now'}
           showLabel
           size="bay"
-          options={yesNo}
+          options={kind === 'sees' ? levels : yesNo}
           value={said === null ? null : said ? 'yes' : 'no'}
           onChange={(value) => setSaid(value === 'yes')}
         />

@@ -3,22 +3,34 @@
 import { useState } from 'react'
 import type { Circuit } from '@/diagrams/document/circuit-schema'
 import { positionsIn } from '@/diagrams/document/condition'
-import type { MeterAction, MeterState } from '@/lib/client/meter/meter-state'
+import { fusedLeadOhms, testLampOhms } from '@/diagrams/document/condition-words'
+import {
+  type AddedLead,
+  type MeterAction,
+  type MeterState,
+  takesFigure,
+} from '@/lib/client/meter/meter-state'
 import { unpluggedName } from '@/lib/client/meter/reading-words'
 import { UnplugDialog } from '../../operate/unplug-dialog'
 import { Chip } from '../../ui/chip'
+import { AddedDialog } from './added-dialog'
+import type { PickChoice } from './pick-dialog'
 
 /** The state of the vehicle while the reading is taken, a chip each; pressing one moves it to the next position. */
 export function ConditionChips({
   circuit,
   state,
   act,
+  points,
 }: {
   circuit: Circuit
   state: MeterState
   act: (action: MeterAction) => void
+  /** Where a lead can be put in. */
+  points: readonly PickChoice[]
 }) {
   const [unplugging, setUnplugging] = useState(false)
+  const [puttingIn, setPuttingIn] = useState(false)
   const { condition } = state
   const positions = positionsIn(circuit, condition.controls)
   const out = condition.unplugged.map((id) => unpluggedName(circuit, id))
@@ -59,6 +71,30 @@ export function ConditionChips({
           else act({ do: 'battery', connected: true })
         }}
       />
+      {takesFigure(state.kind) && (
+        <Chip
+          name="Harness"
+          position={state.moved ? 'moved' : 'still'}
+          aria-pressed={state.moved !== null}
+          data-control="harness"
+          onClick={() => act({ do: 'move-harness', moved: state.moved === null })}
+        />
+      )}
+      <Chip
+        name="Put in"
+        position={addedPosition(condition.added)}
+        data-control="put-in"
+        onClick={() => setPuttingIn(true)}
+      />
+      <AddedDialog
+        circuit={circuit}
+        added={condition.added}
+        points={points}
+        open={puttingIn}
+        onPutIn={(lead) => act({ do: 'put-in', lead })}
+        onTakeOut={(index) => act({ do: 'take-out', index })}
+        onClose={() => setPuttingIn(false)}
+      />
       <UnplugDialog
         circuit={circuit}
         unplugged={condition.unplugged}
@@ -68,4 +104,13 @@ export function ConditionChips({
       />
     </div>
   )
+}
+
+/** "nothing", "fused lead", "test lamp", "load", "2 leads". */
+function addedPosition(added: readonly AddedLead[]): string {
+  const [first, ...more] = added
+  if (!first) return 'nothing'
+  if (more.length > 0) return `${added.length} leads`
+  if (first.ohms === fusedLeadOhms) return 'fused lead'
+  return first.ohms === testLampOhms ? 'test lamp' : 'load'
 }

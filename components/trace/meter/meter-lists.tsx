@@ -1,40 +1,29 @@
 'use client'
 
-import { useMemo } from 'react'
 import type { Circuit } from '@/diagrams/document/circuit-schema'
 import { pointName } from '@/diagrams/document/points'
 import { siteName } from '@/diagrams/document/sites'
-import type { MeterAction, MeterState } from '@/lib/client/meter/meter-state'
-import { pointPlaces } from '../../canvas/point-place'
-import { PickDialog } from './pick-dialog'
+import type { MeterAction } from '@/lib/client/meter/meter-state'
+import { moduleInputs } from './module-inputs'
+import { PickDialog, type PickChoice } from './pick-dialog'
 
 /** Which of the lists stands open. */
-export type Listing = 'red' | 'black' | 'wire' | 'node' | null
+export type Listing = 'red' | 'black' | 'wire' | 'node' | 'pin' | null
 
 /** Lists of points, wires and loads, for whoever would rather read a name than hit a spot. */
 export function MeterLists({
   circuit,
-  state,
+  points,
   act,
   listing,
   onClose,
 }: {
   circuit: Circuit
-  state: MeterState
+  points: readonly PickChoice[]
   act: (action: MeterAction) => void
   listing: Listing
   onClose: () => void
 }) {
-  const points = useMemo(
-    () => [
-      { id: 'chassis', name: 'chassis', about: '0 V' },
-      ...pointPlaces(circuit, state.condition.unplugged).map(({ point }) => ({
-        id: point,
-        name: pointName(circuit, point),
-      })),
-    ],
-    [circuit, state.condition.unplugged],
-  )
   return (
     <>
       <PickDialog
@@ -53,6 +42,13 @@ export function MeterLists({
         }))}
         open={listing === 'wire'}
         onPick={(wire) => act({ do: 'tap-wire', wire })}
+        onClose={onClose}
+      />
+      <PickDialog
+        title="Which input of a module"
+        choices={moduleInputs(circuit).map((pin) => ({ id: pin, name: pointName(circuit, pin) }))}
+        open={listing === 'pin'}
+        onPick={(pin) => act({ do: 'tap-pin', pin })}
         onClose={onClose}
       />
       <PickDialog

@@ -1,26 +1,30 @@
 'use client'
 
-import { type ReactNode, type RefObject, useId, useState } from 'react'
+import { type ReactNode, type RefObject, useId, useMemo, useState } from 'react'
 import type { Circuit } from '@/diagrams/document/circuit-schema'
 import { pointName } from '@/diagrams/document/points'
-import { siteName } from '@/diagrams/document/sites'
-import { type MeterKind, meterKinds, type MeterState } from '@/lib/client/meter/meter-state'
+import { type MeterKind, meterKinds, takesFigure } from '@/lib/client/meter/meter-state'
 import { kindWords } from '@/lib/client/meter/reading-words'
 import { mostVolts, typedValue } from '@/lib/client/meter/typed-value'
+import { pointPlaces } from '../../canvas/point-place'
 import { Button } from '../../ui/button'
 import { Choice } from '../../ui/choice'
 import { classNames } from '../../ui/class-names'
 import { FieldMessage } from '../../ui/field'
 import type { MeterWork } from '../use-meter'
 import { ConditionChips } from './condition-chips'
+import { FigureChoice } from './figure-choice'
 import { Keypad } from './keypad'
-import { LeadField } from './lead-field'
+import { MeasuredRow } from './measured-row'
 import { type Listing, MeterLists } from './meter-lists'
 import { MeterScale } from './meter-scale'
 import { MeterWindow } from './meter-window'
-import { PickField } from './pick-field'
+import { moduleInputs } from './module-inputs'
 
-const kinds = meterKinds.map((kind) => ({ value: kind, label: kindWords[kind] }))
+const levels = [
+  { value: 'high', label: 'High' },
+  { value: 'low', label: 'Low' },
+] as const
 const worksChoices = [
   { value: 'yes', label: 'Works' },
   { value: 'no', label: 'Does not' },
@@ -46,7 +50,21 @@ export function MeterPanel({
   const messageId = useId()
   const { state, act, refusal, enter, outcomes } = meter
   const value = typedValue(state)
-  const takesFigure = state.kind !== 'works'
+  const figures = takesFigure(state.kind)
+  const inputs = moduleInputs(circuit).length > 0
+  const kinds = meterKinds
+    .filter((kind) => kind !== 'sees' || inputs)
+    .map((kind) => ({ value: kind, label: kindWords[kind] }))
+  const points = useMemo(
+    () => [
+      { id: 'chassis', name: 'chassis', about: '0 V' },
+      ...pointPlaces(circuit, state.condition.unplugged).map(({ point }) => ({
+        id: point,
+        name: pointName(circuit, point),
+      })),
+    ],
+    [circuit, state.condition.unplugged],
+  )
   return (
     <div className="flex min-h-0 w-full min-w-0 flex-1 flex-col gap-2">
       <div className="flex items-center gap-3">
@@ -57,42 +75,15 @@ export function MeterPanel({
           value={state.kind}
           onChange={(kind: MeterKind) => act({ do: 'choose-kind', kind })}
           fill
+          tight={inputs}
         />
       </div>
-      <div className="flex gap-2">
-        {state.kind === 'volts' || state.kind === 'ohms' ? (
-          (['red', 'black'] as const).map((lead) => (
-            <LeadField
-              key={lead}
-              lead={lead}
-              point={leadWords(circuit, state, lead)}
-              active={state.lead === lead}
-              onPress={() => {
-                act({ do: 'pick-lead', lead })
-                setListing(lead)
-              }}
-            />
-          ))
-        ) : state.kind === 'amps' ? (
-          <PickField
-            label="Clamp round"
-            value={state.wire === null ? null : siteName(circuit, `wire:${state.wire}`)}
-            unset="tap a wire"
-            onPress={() => setListing('wire')}
-          />
-        ) : (
-          <PickField
-            label="Does its job"
-            value={state.node === null ? null : siteName(circuit, `part:${state.node}`)}
-            unset="tap a load"
-            onPress={() => setListing('node')}
-          />
-        )}
-      </div>
+      <MeasuredRow circuit={circuit} state={state} act={act} onList={setListing} />
       <div className={classNames(layout === 'tray' ? 'laptop:order-3' : '')}>
-        <ConditionChips circuit={circuit} state={state} act={act} />
+        <ConditionChips circuit={circuit} state={state} act={act} points={points} />
       </div>
-      {takesFigure ? (
+      {figures && <FigureChoice state={state} act={act} />}
+      {figures ? (
         <div className="flex min-h-20 gap-2 tablet:min-h-[6.125rem] laptop:min-h-20">
           <MeterWindow
             state={state}
@@ -102,7 +93,8 @@ export function MeterPanel({
             withKeys={layout === 'screen'}
             describedBy={refusal ? messageId : undefined}
             scale={
-              state.kind === 'volts' && (
+              state.kind === 'volts' &&
+              !state.moved && (
                 <MeterScale
                   outcomes={outcomes}
                   most={mostVolts(circuit) * 1.2}
@@ -119,14 +111,25 @@ export function MeterPanel({
         </div>
       ) : (
         <div className="flex gap-2">
-          <Choice
-            label="Does it work"
-            options={worksChoices}
-            value={state.works === null ? null : state.works ? 'yes' : 'no'}
-            onChange={(answer) => act({ do: 'say-works', works: answer === 'yes' })}
-            size="bay"
-            fill
-          />
+          {state.kind === 'sees' ? (
+            <Choice
+              label="The module sees"
+              options={levels}
+              value={state.sees}
+              onChange={(sees) => act({ do: 'say-sees', sees })}
+              size="bay"
+              fill
+            />
+          ) : (
+            <Choice
+              label="Does it work"
+              options={worksChoices}
+              value={state.works === null ? null : state.works ? 'yes' : 'no'}
+              onChange={(answer) => act({ do: 'say-works', works: answer === 'yes' })}
+              size="bay"
+              fill
+            />
+          )}
           <Button look="filled" size="bay" onClick={enter} className="w-28 flex-none leading-tight">
             Enter reading
           </Button>
@@ -152,23 +155,18 @@ export function MeterPanel({
         </div>
       )}
       {outcomeRows}
-      {takesFigure && (
+      {figures && (
         <div className={classNames('flex flex-1', layout === 'tray' && 'max-tablet:hidden laptop:hidden')}>
           <Keypad onPress={(key) => act({ do: 'press', key })} onEnter={enter} />
         </div>
       )}
       <MeterLists
         circuit={circuit}
-        state={state}
+        points={points}
         act={act}
         listing={listing}
         onClose={() => setListing(null)}
       />
     </div>
   )
-}
-
-function leadWords(circuit: Circuit, state: MeterState, lead: 'red' | 'black'): string | null {
-  const point = lead === 'red' ? state.red : state.black
-  return point === null ? null : pointName(circuit, point)
 }

@@ -2,7 +2,7 @@
 
 import { type ReactNode, type RefObject } from 'react'
 import { kindWords, unitWords } from '@/lib/client/meter/reading-words'
-import type { MeterState } from '@/lib/client/meter/meter-state'
+import { type MeterState, shownText } from '@/lib/client/meter/meter-state'
 import { classNames } from '../../ui/class-names'
 import { OhmSign } from '../../ui/glyphs'
 
@@ -37,7 +37,7 @@ export function MeterWindow({
           aria-label={`Meter, ${kindWords[state.kind].toLowerCase()}`}
           aria-describedby={describedBy}
           data-meter-window=""
-          value={state.text}
+          value={shownText(state)}
           onChange={(event) => onType(event.target.value)}
           onKeyDown={(event) => {
             if (event.key === 'Enter') {

@@ -2,9 +2,17 @@ import { type Condition, restCondition } from '@/diagrams/document/condition-sch
 import type { Probe } from '@/diagrams/document/reading-schema'
 import type { NextReading } from '@/diagrams/faults/answer'
 
-export const meterKinds = ['volts', 'ohms', 'amps', 'works'] as const
+export const meterKinds = ['volts', 'ohms', 'amps', 'works', 'sees'] as const
 export type MeterKind = (typeof meterKinds)[number]
+/** True for what a meter shows as a figure, not what an eye or a module reports. */
+export function takesFigure(kind: MeterKind): boolean {
+  return kind !== 'works' && kind !== 'sees'
+}
 export type Lead = 'red' | 'black'
+export type AddedLead = Condition['added'][number]
+/** The figures of a reading during which the harness is moved: as it stands, the least and the most. */
+export const figures = ['value', 'low', 'high'] as const
+export type Figure = (typeof figures)[number]
 
 /** How the meter is set and what has been typed: everything the tray knows of a reading not yet logged. */
 export interface MeterState {
@@ -13,10 +21,17 @@ export interface MeterState {
   black: string
   wire: string | null
   node: string | null
+  /** An input of a module, as its live data shows it. */
+  pin: string | null
   condition: Condition
   /** As typed: digits, a point, a minus, or OL. */
   text: string
   works: boolean | null
+  sees: 'high' | 'low' | null
+  /** While the harness is moved: the least and the most, as typed; null while it hangs still. */
+  moved: { low: string; high: string } | null
+  /** Which figure is being typed. */
+  figure: Figure
   /** Which lead the next tapped point is for. */
   lead: Lead
 }
@@ -27,9 +42,13 @@ export const restMeter: MeterState = {
   black: 'chassis',
   wire: null,
   node: null,
+  pin: null,
   condition: restCondition,
   text: '',
   works: null,
+  sees: null,
+  moved: null,
+  figure: 'value',
   lead: 'red',
 }
 
@@ -40,9 +59,15 @@ export type MeterAction =
   | { do: 'tap-point'; point: string }
   | { do: 'tap-wire'; wire: string }
   | { do: 'tap-load'; node: string }
+  | { do: 'tap-pin'; pin: string }
   | { do: 'type'; text: string }
   | { do: 'press'; key: string }
   | { do: 'say-works'; works: boolean }
+  | { do: 'say-sees'; sees: 'high' | 'low' }
+  | { do: 'move-harness'; moved: boolean }
+  | { do: 'pick-figure'; figure: Figure }
+  | { do: 'put-in'; lead: AddedLead }
+  | { do: 'take-out'; index: number }
   | { do: 'turn'; control: string; position: string }
   | { do: 'plug'; id: string; open: boolean }
   | { do: 'battery'; connected: boolean }
@@ -56,7 +81,7 @@ const mostCharacters = 9
 export function meterReducer(state: MeterState, action: MeterAction): MeterState {
   switch (action.do) {
     case 'choose-kind':
-      return action.kind === state.kind ? state : { ...state, kind: action.kind, text: '', works: null }
+      return action.kind === state.kind ? state : { ...state, kind: action.kind, ...nothingTyped }
     case 'pick-lead':
       return { ...state, lead: action.lead }
     case 'put-lead':
@@ -68,12 +93,24 @@ export function meterReducer(state: MeterState, action: MeterAction): MeterState
       return { ...state, wire: action.wire }
     case 'tap-load':
       return { ...state, node: action.node }
+    case 'tap-pin':
+      return { ...state, pin: action.pin }
     case 'type':
-      return { ...state, text: cleanText(action.text) }
+      return withText(state, cleanText(action.text))
     case 'press':
-      return { ...state, text: pressKey(state.text, action.key) }
+      return withText(state, pressKey(shownText(state), action.key))
     case 'say-works':
       return { ...state, works: action.works }
+    case 'say-sees':
+      return { ...state, sees: action.sees }
+    case 'move-harness':
+      return { ...state, moved: action.moved ? { low: '', high: '' } : null, figure: 'value' }
+    case 'pick-figure':
+      return { ...state, figure: state.moved ? action.figure : 'value' }
+    case 'put-in':
+      return withCondition(state, { added: [...state.condition.added, action.lead] })
+    case 'take-out':
+      return withCondition(state, { added: state.condition.added.filter((_, i) => i !== action.index) })
     case 'turn':
       return withCondition(state, {
         controls: { ...state.condition.controls, [action.control]: action.position },
@@ -96,12 +133,32 @@ export function meterReducer(state: MeterState, action: MeterAction): MeterState
     case 'set-probe':
       return setForProbe(state, action.probe)
     case 'logged':
-      return { ...state, text: '', works: null, lead: 'red' }
+      return { ...state, ...nothingTyped, lead: 'red' }
   }
 }
 
+const nothingTyped = {
+  text: '',
+  works: null,
+  sees: null,
+  moved: null,
+  figure: 'value',
+} as const satisfies Partial<MeterState>
+
+/** The figure that stands in the window. */
+export function shownText({ text, moved, figure }: Pick<MeterState, 'text' | 'moved' | 'figure'>): string {
+  return moved && figure !== 'value' ? moved[figure] : text
+}
+
+function withText(state: MeterState, text: string): MeterState {
+  const { moved, figure } = state
+  return moved && figure !== 'value' ? { ...state, moved: { ...moved, [figure]: text } } : { ...state, text }
+}
+
 function onLeads(state: MeterState): MeterState {
-  return state.kind === 'volts' || state.kind === 'ohms' ? state : { ...state, kind: 'volts', text: '' }
+  return state.kind === 'volts' || state.kind === 'ohms'
+    ? state
+    : { ...state, kind: 'volts', ...nothingTyped }
 }
 
 function putLead(state: MeterState, lead: Lead, point: string): MeterState {
@@ -113,7 +170,7 @@ function withCondition(state: MeterState, change: Partial<Condition>): MeterStat
 }
 
 function setForProbe(state: MeterState, probe: Probe): MeterState {
-  const set = { ...state, condition: probe.condition, text: '', works: null, lead: 'red' as const }
+  const set = { ...state, ...nothingTyped, condition: probe.condition, lead: 'red' as const }
   switch (probe.kind) {
     case 'volts':
     case 'ohms':
@@ -123,11 +180,11 @@ function setForProbe(state: MeterState, probe: Probe): MeterState {
     case 'works':
       return { ...set, kind: 'works', node: probe.node }
     case 'sees':
-      return state
+      return { ...set, kind: 'sees', pin: probe.pin }
   }
 }
 
-/** Null for what the meter of this screen cannot take. */
+/** Null for a reading that does not say what it measures. */
 export function probeOfNext(next: NextReading): Probe | null {
   const { condition } = next
   switch (next.kind) {
@@ -139,7 +196,7 @@ export function probeOfNext(next: NextReading): Probe | null {
     case 'works':
       return next.node ? { kind: 'works', node: next.node, condition } : null
     case 'sees':
-      return null
+      return next.pin ? { kind: 'sees', pin: next.pin, condition } : null
   }
 }
 
@@ -154,6 +211,8 @@ export function probeOf(state: MeterState): Probe | null {
       return state.wire === null ? null : { kind, wire: state.wire, condition }
     case 'works':
       return state.node === null ? null : { kind, node: state.node, condition }
+    case 'sees':
+      return state.pin === null ? null : { kind, pin: state.pin, condition }
   }
 }
 

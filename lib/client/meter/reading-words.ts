@@ -1,8 +1,9 @@
 import type { Circuit } from '@/diagrams/document/circuit-schema'
 import { positionsIn } from '@/diagrams/document/condition'
 import type { Condition } from '@/diagrams/document/condition-schema'
+import { addedWords } from '@/diagrams/document/condition-words'
 import { connectorName, nodeName, pointName } from '@/diagrams/document/points'
-import type { ReadingValue } from '@/diagrams/document/reading-schema'
+import type { Reading, ReadingValue } from '@/diagrams/document/reading-schema'
 import { siteName } from '@/diagrams/document/sites'
 import type { MeterKind } from './meter-state'
 
@@ -11,6 +12,7 @@ export const kindWords = {
   ohms: 'Ohms',
   amps: 'Amps',
   works: 'Works',
+  sees: 'Sees',
 } as const satisfies Record<MeterKind, string>
 
 export const unitWords = { volts: 'V', ohms: 'ohm', amps: 'A', works: '', sees: '' } as const
@@ -21,6 +23,12 @@ export function valueWords(kind: keyof typeof unitWords, value: ReadingValue): s
   if (value === false) return 'does not work'
   if (typeof value === 'string') return value
   return `${figure(kind, value)} ${unitWords[kind]}`.trim()
+}
+
+/** "moved 0.20 to 12.58": between which figures it went while the harness was moved. */
+export function movedWords({ kind, low, high }: Reading): string {
+  const [least, most] = [low, high].map((end) => (typeof end === 'number' ? figure(kind, end) : (end ?? '?')))
+  return `moved ${least} to ${most}`
 }
 
 /** Two decimals under a hundred volts, what matters of ohms: 0.2, 85, 4700. */
@@ -48,6 +56,7 @@ export function conditionWords(circuit: Circuit, condition: Condition): string {
   if (pulled.length > 0) words.push(`${pulled.join(' and ')} unplugged`)
   if (!condition.battery) words.push('battery disconnected')
   if (condition.charging) words.push('charging')
+  for (const lead of condition.added) words.push(addedWords(circuit, lead))
   return words.join(', ') || 'everything at rest'
 }
 

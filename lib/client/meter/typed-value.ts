@@ -3,11 +3,19 @@ import type { ReadingValue } from '@/diagrams/document/reading-schema'
 import type { MeterKind, MeterState } from './meter-state'
 
 /** What has been typed so far as a value; null while it is none ("", "-", "."). */
-export function typedValue(state: Pick<MeterState, 'kind' | 'text' | 'works'>): ReadingValue | null {
+export function typedValue(
+  state: Pick<MeterState, 'kind' | 'text' | 'works'> & { sees?: MeterState['sees'] },
+): ReadingValue | null {
   if (state.kind === 'works') return state.works
-  if (state.text === 'OL') return state.kind === 'amps' ? null : 'OL'
-  const number = Number(state.text)
-  return /[0-9]/.test(state.text) && Number.isFinite(number) ? number : null
+  if (state.kind === 'sees') return state.sees ?? null
+  return typedFigure(state.kind, state.text)
+}
+
+/** One typed figure; null while it is none. */
+export function typedFigure(kind: MeterKind, text: string): number | 'OL' | null {
+  if (text === 'OL') return kind === 'amps' ? null : 'OL'
+  const number = Number(text)
+  return /[0-9]/.test(text) && Number.isFinite(number) ? number : null
 }
 
 export interface Doubt {

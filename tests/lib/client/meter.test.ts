@@ -1,6 +1,7 @@
 import { readFileSync } from 'node:fs'
 import { describe, expect, it } from 'vitest'
 import { openCircuit } from '@/diagrams/document/open-circuit'
+import type { NextReading } from '@/diagrams/faults/answer'
 import { enterReading } from '@/lib/client/meter/enter-reading'
 import {
   cleanText,
@@ -162,5 +163,108 @@ describe('readings in words', () => {
     expect(words({ controls: { key: 'on' }, unplugged: ['c7'], battery: false })).toBe(
       'Key on, C7 unplugged, battery disconnected',
     )
+  })
+})
+
+describe('a reading during which the harness is moved', () => {
+  const moved = (...typed: [figure: 'value' | 'low' | 'high', text: string][]) =>
+    set(
+      { do: 'tap-point', point: feed },
+      { do: 'move-harness', moved: true },
+      ...typed.flatMap(([figure, text]): MeterAction[] => [
+        { do: 'pick-figure', figure },
+        { do: 'type', text },
+      ]),
+    )
+
+  it('takes three figures: still, least and most', () => {
+    const entered = enterReading(circuit, moved(['value', '12.4'], ['low', '0.2'], ['high', '12.5']), 'r')
+    expect(entered).toMatchObject({
+      ok: true,
+      reading: { kind: 'volts', value: 12.4, moved: true, low: 0.2, high: 12.5 },
+    })
+  })
+
+  it('types into the figure that is picked, by keys too', () => {
+    const state = meterReducer(moved(['value', '12.4'], ['low', '0']), { do: 'press', key: '.' })
+    expect(state).toMatchObject({ text: '12.4', moved: { low: '0.', high: '' }, figure: 'low' })
+  })
+
+  it('says which figure is missing or out of order', () => {
+    const about = (...typed: Parameters<typeof moved>) => enterReading(circuit, moved(...typed), 'r')
+    expect(about(['value', '12'])).toMatchObject({
+      ok: false,
+      about: 'low',
+      message: 'Type the least that the meter showed while the harness was moved.',
+    })
+    expect(about(['value', '12'], ['low', '1'])).toMatchObject({ ok: false, about: 'high' })
+    expect(about(['value', '5'], ['low', '9'], ['high', '2'])).toMatchObject({
+      ok: false,
+      about: 'low',
+      message: 'Least 9 is above most 2. Swap the two.',
+    })
+    expect(about(['value', '12'], ['low', '1'], ['high', '5'])).toMatchObject({
+      ok: false,
+      about: 'value',
+      message: 'Still 12 lies outside 1 to 5.',
+    })
+    expect(about(['value', '12'], ['low', '1'], ['high', '125'])).toMatchObject({
+      about: 'high',
+      meant: '12.5',
+    })
+  })
+
+  it('hangs still again once it is logged or another kind is chosen', () => {
+    const state = moved(['value', '12.4'], ['low', '0.2'], ['high', '12.5'])
+    expect(meterReducer(state, { do: 'logged' })).toMatchObject({ moved: null, figure: 'value', text: '' })
+    expect(meterReducer(state, { do: 'choose-kind', kind: 'ohms' })).toMatchObject({ moved: null, text: '' })
+  })
+})
+
+describe('what is put in for a reading', () => {
+  const lead = { from: feed, to: 'chassis', ohms: 48 }
+  it('becomes part of its condition and of its words', () => {
+    const state = set({ do: 'tap-point', point: feed }, { do: 'put-in', lead }, { do: 'type', text: '12.1' })
+    const entered = enterReading(circuit, state, 'r')
+    expect(entered).toMatchObject({ ok: true, reading: { condition: { added: [lead] } } })
+    expect(conditionWords(circuit, state.condition)).toMatch(/^test lamp from .* to chassis$/)
+  })
+  it('comes out one by one', () => {
+    const state = set({ do: 'put-in', lead }, { do: 'put-in', lead: { ...lead, ohms: 0.05 } })
+    expect(meterReducer(state, { do: 'take-out', index: 0 }).condition.added).toEqual([
+      { ...lead, ohms: 0.05 },
+    ])
+  })
+})
+
+describe('what a module reports of its input', () => {
+  const fuel = samples.find((sample) => sample.title === 'Load space lamp request') as typeof circuit
+  it('is high or low at one of its pins', () => {
+    const state = set({ do: 'choose-kind', kind: 'sees' }, { do: 'tap-pin', pin: 'body.5' })
+    expect(enterReading(fuel, state, 'r')).toMatchObject({ ok: false, message: 'Say what the module sees.' })
+    expect(enterReading(fuel, meterReducer(state, { do: 'say-sees', sees: 'low' }), 'r')).toMatchObject({
+      ok: true,
+      reading: { kind: 'sees', pin: 'body.5', value: 'low' },
+    })
+  })
+  it('wants a pin first, and one that is an input', () => {
+    const none = set({ do: 'choose-kind', kind: 'sees' }, { do: 'say-sees', sees: 'low' })
+    expect(enterReading(fuel, none, 'r')).toMatchObject({ ok: false, about: 'leads' })
+    expect(enterReading(fuel, meterReducer(none, { do: 'tap-pin', pin: 'cab.7' }), 'r')).toMatchObject({
+      ok: false,
+      message: expect.stringMatching(/not an input of a module/),
+    })
+  })
+  it('is what the meter is set for where the next split asks for it', () => {
+    const next: NextReading = {
+      kind: 'sees',
+      pin: 'body.5',
+      condition: restMeter.condition,
+      bits: 1,
+      minutes: 1,
+      outcomes: [],
+      says: '',
+    }
+    expect(set({ do: 'set-for', next })).toMatchObject({ kind: 'sees', pin: 'body.5' })
   })
 })
