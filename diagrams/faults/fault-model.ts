@@ -6,6 +6,7 @@ import type { Network } from '../solver/network'
 import type { Study } from '../solver/study'
 import { hypothesesOf, type Hypothesis } from './hypothesis'
 import { predictAll, studyFor, type PredictionTable } from './prediction-table'
+import { runToEnd, type Steps } from './steps'
 
 /** A circuit with all its hypotheses, and what each foretells for the readings asked so far. */
 export class FaultModel {
@@ -19,7 +20,7 @@ export class FaultModel {
     parts?: { network: Network; hypotheses: readonly Hypothesis[] },
   ) {
     this.network = parts?.network ?? buildNetwork(circuit)
-    this.hypotheses = parts?.hypotheses ?? hypothesesOf(circuit, this.network)
+    this.hypotheses = parts?.hypotheses ?? runToEnd(hypothesesOf(circuit, this.network))
   }
 
   /** The same circuit, suspecting one site only. */
@@ -77,22 +78,55 @@ const byContent = new Map<string, FaultModel>()
 /** Circuits traced at one time by one worker or process, about. */
 const keptModels = 8
 
+/** Models begun for a question that was dropped: the next one about the same circuit goes on with them. */
+const begun = new Map<string, Begun>()
+const keptBegun = 2
+
+interface Begun {
+  network: Network
+  hypotheses: Steps<Hypothesis[]>
+}
+
 /**
  * The model of a circuit, kept while it is in use: a trace asks again with every reading. Equal
  * documents share one, since each message to a worker and each line of input is a new object.
  */
 export function faultModelOf(circuit: Circuit): FaultModel {
+  return runToEnd(faultModelSteps(circuit))
+}
+
+/** The same in portions; what was done of it is not done again by whoever asks next. */
+export function* faultModelSteps(circuit: Circuit): Steps<FaultModel> {
   let found = byObject.get(circuit)
   if (found) return found
   const content = JSON.stringify(circuit)
-  found = byContent.get(content) ?? new FaultModel(circuit)
-  byObject.set(circuit, found)
-  // Least recently used goes first: a Map keeps the order of insertion.
-  byContent.delete(content)
-  byContent.set(content, found)
-  for (const oldest of byContent.keys()) {
-    if (byContent.size <= keptModels) break
-    byContent.delete(oldest)
+  found = byContent.get(content)
+  if (!found) {
+    const { network, hypotheses } = beginModel(circuit, content)
+    found = new FaultModel(circuit, { network, hypotheses: yield* hypotheses })
+    begun.delete(content)
   }
+  byObject.set(circuit, found)
+  keepNewest(byContent, content, found, keptModels)
   return found
+}
+
+function beginModel(circuit: Circuit, content: string): Begun {
+  let found = begun.get(content)
+  if (!found) {
+    const network = buildNetwork(circuit)
+    found = { network, hypotheses: hypothesesOf(circuit, network) }
+  }
+  keepNewest(begun, content, found, keptBegun)
+  return found
+}
+
+/** Least recently used goes first: a Map keeps the order of insertion. */
+function keepNewest<T>(map: Map<string, T>, key: string, value: T, most: number): void {
+  map.delete(key)
+  map.set(key, value)
+  for (const oldest of map.keys()) {
+    if (map.size <= most) break
+    map.delete(oldest)
+  }
 }

@@ -9,6 +9,7 @@ import type { Study } from '../solver/study'
 import { goodShow, showsBy, type Show } from './shows'
 import { possibleBlown } from './possible-blown'
 import { severityGrid } from './severity-grid'
+import type { Steps } from './steps'
 
 /** A stretch of severities of one hypothesis, between two solved ones. */
 export interface Cell {
@@ -37,19 +38,22 @@ const showsAtVolts = 0.4
 /** For clearing a site a little less is enough: tolerances may add what is missing. */
 const nearlyShowsAtVolts = 0.3
 
-/** Every hypothesis of a circuit that would show. Nothing else counts as a fault. */
-export function hypothesesOf(circuit: Circuit, network: Network): Hypothesis[] {
+/** Every hypothesis of a circuit that would show, a site at a time. Nothing else counts as a fault. */
+export function* hypothesesOf(circuit: Circuit, network: Network): Steps<Hypothesis[]> {
   const studies = drivingStudies(network)
   const good = goodShow(studies)
-  return sitesOf(circuit).flatMap((site) => {
+  const sites = sitesOf(circuit)
+  const found: Hypothesis[] = []
+  for (const [done, site] of sites.entries()) {
+    yield { stage: 'circuit', done, of: sites.length }
     // Modes of one site that change the same branch, an open and a bad joint, share their factorisations.
     const caches = new Map<string, Map<string, Case[]>>()
-    return site.modes.flatMap((mode) => {
+    for (const mode of site.modes) {
       const kinds = kindsOf(circuit, site.id, mode)
-      return kinds.flatMap((kind) => {
-        const part = (mode === 'short-to-wire' ? 0.5 : 1) / kinds.length
-        return variants(network, studies, good, kind, caches).map(
-          ({ blows, cells }): Hypothesis => ({
+      const part = (mode === 'short-to-wire' ? 0.5 : 1) / kinds.length
+      for (const kind of kinds)
+        for (const { blows, cells } of variants(network, studies, good, kind, caches))
+          found.push({
             site: kind.site,
             mode: kind.mode,
             other: kind.other ?? null,
@@ -58,11 +62,10 @@ export function hypothesesOf(circuit: Circuit, network: Network): Hypothesis[] {
             part,
             cells,
             alteration: (in_) => withBlown(alterationOf(in_, kind), blows.map(fuseBranch)),
-          }),
-        )
-      })
-    })
-  })
+          })
+    }
+  }
+  return found
 }
 
 function keptCases(key: string, caches: Map<string, Map<string, Case[]>>): Map<string, Case[]> {
