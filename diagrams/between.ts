@@ -52,7 +52,7 @@ export function readingsBetween(
   const between = `${names.slice(0, -1).join(', ')} and ${names.at(-1)}`
   const says = found[0]
     ? `Between ${between}: ${found[0].says}`
-    : `No reading tells ${between} apart, whatever is opened, pulled or put in. Mend all of them in one repair, then prove it.`
+    : `No reading tells ${between} apart, whatever is opened, pulled or put in. Mend ${names.length === 2 ? 'both' : 'all of them'} in one repair, then prove it.`
   return { ok: true, value: { readings: found, says } }
 }
 

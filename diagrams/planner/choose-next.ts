@@ -1,10 +1,15 @@
 import type { Circuit } from '../document/circuit-schema'
 import type { Condition } from '../document/condition-schema'
-import { placesOf } from './cost'
+import { placesOf } from './effort'
 import type { PlannedReading, WeighedReading } from './scales'
 import type { Bin } from './split'
 
 const offered = 5
+/**
+ * What a reading costs beside its minutes, in minutes: few readings are wanted, not quick ones that tell little.
+ * By trial on the sample circuits 3 needed fewer readings and fewer minutes to the end than 0.
+ */
+const readingPrice = 3
 /** An alternative is worth at least this part of the best reading's bits per minute. */
 const leastPart = 0.15
 /** A quicker one takes at most this part of its minutes. */
@@ -17,9 +22,10 @@ const quickerPart = 0.7
  * split at a higher price is no alternative.
  */
 export function chooseNext(circuit: Circuit, found: readonly WeighedReading[]): PlannedReading[] {
-  const best = found.reduce<WeighedReading | undefined>((a, b) => (a && a.rate >= b.rate ? a : b), undefined)
+  const best = mostWorth(found)
   if (!best) return []
-  const ranked = found.toSorted((a, b) => b.rate - a.rate)
+  // The best comes first: what has more bits per minute but leads to a dearer end is no alternative.
+  const ranked = found.filter((other) => other.rate <= best.rate).toSorted((a, b) => b.rate - a.rate)
   const chosen: WeighedReading[] = []
   const partitions = new Set<string>()
   const take = (reading: WeighedReading | undefined) => {
@@ -54,8 +60,13 @@ export function chooseNext(circuit: Circuit, found: readonly WeighedReading[]): 
     if (chosen.length < offered && isNew(reading) && !ways().includes(wayOf(circuit, reading))) take(reading)
   for (const reading of ranked) if (chosen.length < offered && isNew(reading)) take(reading)
   return chosen
-    .toSorted((a, b) => b.rate - a.rate)
+    .toSorted((a, b) => (a === best ? -1 : b === best ? 1 : b.rate - a.rate))
     .map(({ probe, bits, minutes, bins, row }) => ({ probe, bits, minutes, bins, row }))
+}
+
+function mostWorth(found: readonly WeighedReading[]): WeighedReading | undefined {
+  const worth = ({ bits, minutes }: WeighedReading) => bits / (minutes + readingPrice)
+  return found.reduce<WeighedReading | undefined>((a, b) => (a && worth(a) >= worth(b) ? a : b), undefined)
 }
 
 function placeIds(circuit: Circuit, { probe }: WeighedReading): string[] {

@@ -2,9 +2,10 @@ import type { Circuit, ControlsSetting } from '../document/circuit-schema'
 import type { Reading } from '../document/reading-schema'
 import type { FaultModel } from '../faults/fault-model'
 import type { Posterior } from '../faults/posterior'
+import { runToEnd, type Steps } from '../faults/steps'
 import { readingsWithLeads } from './added-leads'
 import { groupsAlike } from './alike'
-import { candidateReadings, mostConditions } from './candidates'
+import { candidateReadings, mostConditions, type CandidateSet } from './candidates'
 import { chooseNext } from './choose-next'
 import { particlesOf, type Particle } from './particles'
 import { Scales, type PlannedReading } from './scales'
@@ -35,6 +36,15 @@ const groupFrom = 0.5
  * by its minutes: one step of look-ahead. Never repeats a reading already taken.
  */
 export function planNext(model: FaultModel, posterior: Posterior, readings: readonly Reading[]): Plan {
+  return runToEnd(planSteps(model, posterior, readings))
+}
+
+/** The same in portions, a condition at a time. */
+export function* planSteps(
+  model: FaultModel,
+  posterior: Posterior,
+  readings: readonly Reading[],
+): Steps<Plan> {
   const { circuit } = model
   const particles = particlesOf(model, posterior)
   const bySite = new Map<string, number>()
@@ -49,22 +59,30 @@ export function planNext(model: FaultModel, posterior: Posterior, readings: read
 
   // While much is in question the plain conditions are enough to split it; later every one counts.
   const limit = Math.min(mostConditions, Math.max(leastConditions, Math.round(weighings / particles.length)))
-  for (const set of candidateReadings(circuit, suspects, present, { limit })) scales.weigh(set)
-  if (particles.length <= leadsUpTo)
-    for (const set of readingsWithLeads(circuit, suspects, present)) scales.weigh(set)
+  yield* weighAll(scales, candidateReadings(circuit, suspects, present, { limit }))
+  if (particles.length <= leadsUpTo) yield* weighAll(scales, readingsWithLeads(circuit, suspects, present))
   // Where all is read that tells suspects apart, the same leads with the controls moved count as a second look.
   if (scales.found.length === 0 && readings.length > 0)
-    for (const set of candidateReadings(circuit, suspects, present, { deadControls: movedControls(circuit) }))
-      scales.weigh(set)
+    yield* weighAll(
+      scales,
+      candidateReadings(circuit, suspects, present, { deadControls: movedControls(circuit) }),
+    )
   // Before places are called one group, the search is made wider round them.
   const massOf = (group: readonly string[]) => group.reduce((sum, site) => sum + bySite.get(site)!, 0)
   const heavy = alike.groups().filter((group) => massOf(group) >= groupFrom)
-  for (const group of heavy) for (const set of wideReadings(circuit, group)) scales.weigh(set)
+  for (const group of heavy) yield* weighAll(scales, wideReadings(circuit, group))
   return {
     particles,
     next: chooseNext(circuit, scales.found),
     mostBits: Math.max(0, ...scales.found.map(({ bits }) => bits)),
     inseparable: alike.groups(),
+  }
+}
+
+function* weighAll(scales: Scales, sets: readonly CandidateSet[]): Steps<void> {
+  for (const [done, set] of sets.entries()) {
+    yield { stage: 'planning', done, of: sets.length }
+    scales.weigh(set)
   }
 }
 
