@@ -5,6 +5,9 @@ import { weighReadings, type Evidence } from './faults/evidence'
 import { explain } from './faults/explain'
 import { faultModelOf, type FaultModel } from './faults/fault-model'
 import { misfitOf } from './faults/misfit'
+import { weighMoved } from './faults/moved-evidence'
+import { swings } from './faults/moved-reading'
+import { comesAndGoesSentence, sayMoved } from './faults/moved-sentence'
 import { areTwoFaults } from './faults/pair-odds'
 import { searchPairs } from './faults/pair-search'
 import { posteriorOf, siteProbabilities, type Posterior } from './faults/posterior'
@@ -31,18 +34,21 @@ const worthwhileBits = 0.05
 export function evaluate(request: EvaluationRequest): Answer {
   const { circuit, readings, codes, priors, odds, symptoms = [] } = request
   const model = faultModelOf(circuit)
-  const full = weighReadings(model, readings)
+  const scope = { network: model.network }
+  const comesAndGoes = readings.some((reading) => swings(reading, scope))
+  const weigh = comesAndGoes ? weighMoved : weighReadings
+  const full = weigh(model, readings)
   const complaint = symptomEvidence(model, symptoms)
   const told = allReports([codeEvidence(model, codes), complaint])
   const posteriorFor = (evidence: Evidence) => posteriorOf(model, evidence, priors, told, odds)
-  const misfit = misfitOf(model, readings, full, posteriorFor)
-  if (misfit && !misfit.above) {
+  const misfit = misfitOf(model, readings, full, posteriorFor, weigh)
+  if (misfit && !misfit.above && !comesAndGoes) {
     const weightOf = (site: string, mode: Mode) => modeWeight(circuit, site, mode, priors, odds)
     const search = searchPairs(model, full, readings, weightOf, told)
     if (areTwoFaults(misfit, search)) return answerTwoFaults(search, full, readings)
   }
   const aside = misfit?.reading ?? null
-  const evidence = aside === null ? full : weighReadings(model, readings, new Set([aside]))
+  const evidence = aside === null ? full : weigh(model, readings, new Set([aside]))
   const posterior = posteriorFor(evidence)
   const kept = aside === null ? readings : readings.filter((_, r) => r !== aside)
   const plan = planNext(model, posterior, kept)
@@ -50,7 +56,7 @@ export function evaluate(request: EvaluationRequest): Answer {
   const sites = sitesOf(circuit).map((site) => site.id)
   const probabilities = siteProbabilities(model, posterior)
   const cleared = clearances(model, full, readings, sites)
-  const judged = judgeReadings(model, readings, full)
+  const judged = sayMoved(circuit, readings, judgeReadings(model, readings, full), scope)
   const located = locatedGroup(probabilities, plan.inseparable)
   const outcome = outcomeOf(
     posterior,
@@ -72,9 +78,14 @@ export function evaluate(request: EvaluationRequest): Answer {
     ...(outcome === 'cannot-be' && aside !== null ? { reading: readings[aside]!.id } : {}),
     next: nextReadings(circuit, plan),
     inseparable: plan.inseparable,
+    ...(comesAndGoes ? { comesAndGoes } : {}),
   })
   const explains = complaint ? explainedByLikeliest(complaint, posterior) : ''
-  const says = [answer.says, symptomSentence(circuit, symptoms, outcome, explains)]
+  const says = [
+    comesAndGoesSentence(circuit, readings, scope),
+    answer.says,
+    symptomSentence(circuit, symptoms, outcome, explains),
+  ]
   return { ...answer, says: says.filter(Boolean).join(' ') }
 }
 

@@ -84,6 +84,8 @@ export interface Answer {
   pairs?: PairAnswer[]
   next: NextReading[]
   inseparable: string[][]
+  /** True where a moved reading swung: the fault is there for some readings and not for others. */
+  comesAndGoes?: boolean
   /** The verdict in plain sentences. */
   says: string
 }

@@ -31,6 +31,7 @@ export function misfitOf(
   readings: readonly Reading[],
   evidence: Evidence,
   posteriorFor: (evidence: Evidence) => Posterior,
+  weigh: typeof weighReadings = weighReadings,
 ): Misfit | null {
   const above = readings.findIndex((reading) => isAboveSources(model, reading))
   if (above >= 0) return { reading: above, above: true, logSlip: -Infinity }
@@ -42,7 +43,7 @@ export function misfitOf(
   const mended = mends.includes(true)
   const logs = readings.map((reading, out) => {
     if (mended && !mends[out]) return -Infinity
-    const { logEvidence } = posteriorFor(weighReadings(model, readings, new Set([out])))
+    const { logEvidence } = posteriorFor(weigh(model, readings, new Set([out])))
     return logEvidence + Math.log(slipShare * shownBySlip(reading))
   })
   return {
