@@ -1,6 +1,6 @@
 'use client'
 
-import { useState } from 'react'
+import { useMemo, useState } from 'react'
 import type { Circuit } from '@/diagrams/document/circuit-schema'
 import type { Answer } from '@/diagrams/faults/answer'
 import { putFinding, putProof } from '@/lib/client/api/traces'
@@ -9,9 +9,9 @@ import type { PutFinding, PutProof, Trace } from '@/lib/shared/api/traces'
 import { Button } from '../../ui/button'
 import { Dialog } from '../../ui/dialog'
 import type { TraceWork } from '../use-trace'
-import { confirmingReadings } from './confirming-readings'
 import { FindingForm } from './finding-form'
 import { ProofForm } from './proof-form'
+import { proofSteps } from './proof-steps'
 
 /** Ends a trace: what was found and repaired, then the confirming reading. */
 export function FinishDialog({
@@ -32,6 +32,13 @@ export function FinishDialog({
   const [sending, setSending] = useState(false)
   const [failure, setFailure] = useState<string | null>(null)
   const proving = trace.finding !== null && !again
+  const { steps, choices } = useMemo(
+    () =>
+      open && proving
+        ? proofSteps(circuit, trace.finding, work.readings, answer)
+        : { steps: [], choices: [] },
+    [open, proving, circuit, trace.finding, work.readings, answer],
+  )
 
   const send = async (call: () => Promise<Called<Trace>>): Promise<boolean> => {
     setSending(true)
@@ -76,13 +83,19 @@ export function FinishDialog({
           {trace.proof && !trace.proof.works && (
             <p className="mb-3 font-bold">The last proof said that it does not work yet.</p>
           )}
-          <ProofForm
-            circuit={circuit}
-            choices={confirmingReadings(circuit, work.readings, answer)}
-            sending={sending}
-            failure={failure}
-            onSend={prove}
-          />
+          {steps.length > 0 && (
+            <>
+              <h3 className="text-body font-bold">What proves it, in this order</h3>
+              <ol className="mt-1 mb-3 list-decimal pl-6 text-dense text-ink-2">
+                {steps.map((says) => (
+                  <li key={says} className="py-1">
+                    {says}
+                  </li>
+                ))}
+              </ol>
+            </>
+          )}
+          <ProofForm circuit={circuit} choices={choices} sending={sending} failure={failure} onSend={prove} />
         </>
       ) : (
         <FindingForm
