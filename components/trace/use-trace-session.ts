@@ -17,9 +17,11 @@ export function useTraceSession(initial: Trace) {
   const [circuit] = useState(initial.circuit.document)
   // What the shop found in other traces meanwhile is for the next visit: odds do not change under one's hands.
   const [odds] = useState(initial.odds)
+  // Told once, at the start.
+  const [symptoms] = useState(initial.symptoms)
   const codesKey = trace.codes.join(' ')
   const codes = useMemo(() => (codesKey === '' ? [] : codesKey.split(' ')), [codesKey])
-  const { answer, current, failed } = useAnswer(circuit, readings, codes, odds)
+  const { answer, current, failed } = useAnswer(circuit, readings, codes, odds, symptoms)
   const started = readings.length > 0
   const done = trace.state === 'done'
 

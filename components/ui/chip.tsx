@@ -18,8 +18,7 @@ export function Chip({
       )}
       {...rest}
     >
-      <span>{name}</span>
-      <span className="font-extrabold">{position}</span>
+      <span>{name}</span> <span className="font-extrabold">{position}</span>
     </button>
   )
 }

@@ -57,7 +57,7 @@ export function Choice<Value extends string>({
             className={classNames(
               'focus-ring relative flex items-center justify-center font-bold text-body text-center select-none',
               'transition-colors duration-press has-[:focus-visible]:z-marks has-[:focus-visible]:rounded-field',
-              tight ? 'px-1' : 'px-4',
+              tight ? 'px-2' : 'px-4',
               fill ? 'flex-1' : 'flex-auto whitespace-nowrap',
               size === 'bay' ? 'min-h-bay min-w-bay' : 'min-h-target min-w-target',
               index > 0 && 'border-l border-line',

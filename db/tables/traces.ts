@@ -1,6 +1,7 @@
 import type { ColumnType, Generated } from 'kysely'
 import type { Reading, ReadingKind } from '@/diagrams/document/reading-schema'
 import type { Mode } from '@/diagrams/document/sites'
+import type { Symptom } from '@/diagrams/faults/symptom-schema'
 import type { Json } from './circuits'
 import type { Moment } from './people'
 
@@ -13,6 +14,7 @@ export interface TracesTable {
   vehicle: string
   complaint: string
   codes: Json<string[]>
+  symptoms: Json<Symptom[]>
   cautions_answered_at: ColumnType<Date | null, Date | null | undefined, Date | null>
   state: 'open' | 'done'
   started_at: Moment

@@ -1,5 +1,6 @@
 import { randomUUID } from 'node:crypto'
 import { beforeAll, describe, expect, it } from 'vitest'
+import { samples } from '@/diagrams/samples/all-samples'
 import type { Tables } from '@/db/tables/database'
 import { traceListSchema, traceSchema } from '@/lib/shared/api/traces'
 import { withDatabase } from '../support/database'
@@ -199,6 +200,37 @@ describe('traces over the API', () => {
     expect(own.map(({ id }) => id)).toEqual([begun])
     const none = await call(technician, 'GET', `traces?open=1&circuitId=${randomUUID()}`)
     expect(none.body.rows).toEqual([])
+  })
+
+  it('keeps what the driver tells and refuses what the circuit does not have', async () => {
+    const fan = samples.find((sample) => sample.title === 'Two-speed cooling fan')!
+    const load = fan.nodes.find((node) => node.kind === 'load')!.id
+    const step = fan.sequence[1]!.id
+    const who = shop.people.technician
+    const made = await call(shop.people.owner, 'POST', 'circuits', { document: fan })
+    const ask = { id: randomUUID(), circuitId: made.body.id, vehicle: '', complaint: 'silent', codes: [] }
+    const symptoms = [{ node: load, does: 'not-work' }, { step }]
+    for (const [path, wrong] of [
+      ['symptoms.0.node', { node: 'f20', does: 'not-work' }],
+      ['symptoms.0.node', { node: 'gone', does: 'always' }],
+      ['symptoms.0.step', { step: 'never' }],
+    ] as const) {
+      const refused = await call(who, 'POST', 'traces', { ...ask, symptoms: [wrong] })
+      expect([refused.status, refused.body.error.path]).toEqual([422, path])
+    }
+    const started = await call(who, 'POST', 'traces', { ...ask, symptoms })
+    expect([started.status, started.body.symptoms]).toEqual([201, symptoms])
+    const again = await call(who, 'POST', 'traces', { ...ask, symptoms })
+    expect([again.status, again.body]).toEqual([201, started.body])
+    const other = await call(who, 'POST', 'traces', { ...ask, symptoms: [{ step }] })
+    expect(other.body.error.code).toBe('id-taken')
+    const whole = traceSchema.parse((await call(shop.people.owner, 'GET', `traces/${ask.id}`)).body)
+    expect(whole.symptoms).toEqual(symptoms)
+  })
+
+  it('has no symptoms where none are told', async () => {
+    const whole = await call(shop.people.owner, 'GET', `traces/${await start()}`)
+    expect(whole.body.symptoms).toEqual([])
   })
 
   it('evaluates the format page’s example to the open wire', async () => {

@@ -5,6 +5,7 @@ import Link from 'next/link'
 import { useRouter } from 'next/navigation'
 import { useRef, useState } from 'react'
 import type { Circuit } from '@/diagrams/document/circuit-schema'
+import type { Symptom } from '@/diagrams/faults/symptom-schema'
 import { openTracesQuery, startTrace } from '@/lib/client/api/traces'
 import { newId } from '@/lib/client/new-id'
 import { traceCodeSchema } from '@/lib/shared/api/traces'
@@ -16,6 +17,7 @@ import { Button } from '../../ui/button'
 import { Field, TextArea } from '../../ui/field'
 import { Plate } from '../../ui/plate'
 import { CodePicker } from './code-picker'
+import { SymptomPicker } from './symptom-picker'
 
 /** Before a trace: which vehicle, what is wrong with it, which codes it has set. */
 export function StartTraceScreen({ circuitId, circuit }: { circuitId: string; circuit: Circuit }) {
@@ -25,6 +27,7 @@ export function StartTraceScreen({ circuitId, circuit }: { circuitId: string; ci
   const [vehicle, setVehicle] = useState(circuit.vehicle)
   const [complaint, setComplaint] = useState('')
   const [codes, setCodes] = useState<string[]>([])
+  const [symptoms, setSymptoms] = useState<Symptom[]>([])
   const [typed, setTyped] = useState('')
   const [codeError, setCodeError] = useState<string | null>(null)
   const [sending, setSending] = useState(false)
@@ -42,7 +45,7 @@ export function StartTraceScreen({ circuitId, circuit }: { circuitId: string; ci
     setFailure(null)
     setSending(true)
     id.current ??= newId()
-    const called = await startTrace({ id: id.current, circuitId, vehicle, complaint, codes: all })
+    const called = await startTrace({ id: id.current, circuitId, vehicle, complaint, codes: all, symptoms })
     if (called.ok) return router.push(`/circuits/${circuitId}/traces/${called.value.id}`)
     setSending(false)
     setFailure(called.failure.message)
@@ -82,6 +85,7 @@ export function StartTraceScreen({ circuitId, circuit }: { circuitId: string; ci
             value={complaint}
             onChange={(event) => setComplaint(event.target.value)}
           />
+          <SymptomPicker circuit={circuit} symptoms={symptoms} onChange={setSymptoms} />
           <CodePicker
             circuit={circuit}
             codes={codes}

@@ -3,6 +3,7 @@ import type { Circuit } from '@/diagrams/document/circuit-schema'
 import type { Reading } from '@/diagrams/document/reading-schema'
 import type { Answer } from '@/diagrams/faults/answer'
 import type { Odds } from '@/diagrams/faults/odds-schema'
+import type { Symptom } from '@/diagrams/faults/symptom-schema'
 import { Evaluator, type Thread } from './evaluator'
 import type { Question } from './messages'
 import { numberedReadings } from './numbered-readings'
@@ -24,6 +25,7 @@ export function useAnswer(
   readings: readonly Reading[],
   codes: readonly string[],
   odds: Odds | null,
+  symptoms: readonly Symptom[],
 ): AnswerState {
   const question = useMemo<Question>(
     () => ({
@@ -32,8 +34,9 @@ export function useAnswer(
       codes: [...codes],
       priors: 'trade',
       ...(odds ? { odds } : {}),
+      ...(symptoms.length > 0 ? { symptoms: [...symptoms] } : {}),
     }),
-    [circuit, readings, codes, odds],
+    [circuit, readings, codes, odds, symptoms],
   )
   const [given, setGiven] = useState<{ question: Question; answer: Answer } | null>(null)
   const [failure, setFailure] = useState<{ question: Question; message: string } | null>(null)

@@ -3,6 +3,7 @@ import { circuitSchema } from '@/diagrams/document/circuit-schema'
 import { readingSchema } from '@/diagrams/document/reading-schema'
 import { modes } from '@/diagrams/document/sites'
 import { oddsSchema } from '@/diagrams/faults/odds-schema'
+import { symptomsSchema } from '@/diagrams/faults/symptom-schema'
 
 const uuid = (field: string) => z.uuid({ error: `${field}: expected a UUID` })
 const text = (field: string, most: number) =>
@@ -29,6 +30,8 @@ export const startTraceSchema = z.strictObject({
   vehicle: text('vehicle', 120).default(''),
   complaint: text('complaint', 2000).default(''),
   codes: z.array(traceCodeSchema).max(20, { error: 'codes: at most 20' }).default([]),
+  /** What the driver tells of loads and of the sequence. */
+  symptoms: symptomsSchema.default([]),
 })
 export type StartTrace = z.input<typeof startTraceSchema>
 
@@ -73,6 +76,7 @@ export const traceSchema = z.object({
   vehicle: z.string(),
   complaint: z.string(),
   codes: z.array(z.string()),
+  symptoms: symptomsSchema,
   /** In the order they were taken. */
   readings: z.array(readingSchema),
   cautionsAnsweredAt: z.string().nullable(),

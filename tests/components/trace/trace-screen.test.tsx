@@ -29,6 +29,7 @@ function makeTrace(more: Partial<Trace> = {}): Trace {
     finding: null,
     proof: null,
     odds: null,
+    symptoms: [],
     state: 'open',
     by: 'Noor',
     mine: true,
@@ -202,5 +203,81 @@ describe('a trace on screen', () => {
     expect(await screen.findByText(/Never put a meter on an igniter/)).toBeInTheDocument()
     await person.click(screen.getByRole('button', { name: 'This is done and held to' }))
     await waitFor(() => expect(server.trace.cautionsAnsweredAt).not.toBeNull())
+  })
+
+  const withDialogs = () => {
+    HTMLDialogElement.prototype.showModal ??= function (this: HTMLDialogElement) {
+      this.open = true
+    }
+    HTMLDialogElement.prototype.close ??= function (this: HTMLDialogElement) {
+      this.open = false
+    }
+  }
+
+  it('notes what a module reports of its input', async () => {
+    withDialogs()
+    const person = userEvent.setup()
+    const server = serve(makeTrace())
+    show(makeTrace())
+    await person.click(screen.getByRole('radio', { name: 'Sees' }))
+    await person.click(screen.getByRole('button', { name: /The module reports its input/ }))
+    const list = within(await screen.findByRole('dialog', { name: 'Which input of a module' }))
+    await person.click(list.getByRole('button', { name: 'Body module pin 5' }))
+    await person.click(screen.getByRole('radio', { name: 'Low' }))
+    await person.click(screen.getByRole('button', { name: 'Enter reading' }))
+    await waitFor(() => expect(server.trace.readings).toHaveLength(1))
+    expect(server.trace.readings[0]).toMatchObject({ kind: 'sees', pin: 'body.5', value: 'low' })
+  })
+
+  it('takes still, least and most of a reading while the harness is moved, and asks for the one that is missing', async () => {
+    const person = userEvent.setup()
+    const server = serve(makeTrace())
+    show(makeTrace())
+    const points = within(screen.getByRole('group', { name: 'Points of the circuit' })).getAllByRole('button')
+    points[0]?.focus()
+    await person.keyboard('{Enter}')
+    await person.click(screen.getByRole('button', { name: 'Harness still' }))
+    await person.type(meter(), '12.5{Enter}')
+    expect(await screen.findByText(/Type the least that the meter showed/)).toBeInTheDocument()
+    expect(screen.getByRole('radio', { name: 'Least, not typed yet' })).toBeChecked()
+    await person.type(meter(), '0.2')
+    await person.click(screen.getByRole('radio', { name: 'Most, not typed yet' }))
+    await person.type(meter(), '12.5{Enter}')
+    await waitFor(() => expect(server.trace.readings).toHaveLength(1))
+    expect(server.trace.readings[0]).toMatchObject({ value: 12.5, moved: true, low: 0.2, high: 12.5 })
+    expect((await screen.findAllByText('moved 0.20 to 12.50')).length).toBeGreaterThan(0)
+    expect(screen.getByRole('button', { name: 'Harness still' })).toHaveAttribute('aria-pressed', 'false')
+  })
+
+  it('puts a test lamp in for a reading, in its condition and in its words', async () => {
+    withDialogs()
+    const person = userEvent.setup()
+    const server = serve(makeTrace())
+    show(makeTrace())
+    await person.click(screen.getByRole('button', { name: 'Put in nothing' }))
+    const dialog = within(await screen.findByRole('dialog', { name: 'Put in for this reading' }))
+    expect(dialog.getByText(/service information comes first/)).toBeInTheDocument()
+    await person.click(dialog.getByRole('button', { name: 'Put it in' }))
+    expect(dialog.getByText('Pick both ends first.')).toBeInTheDocument()
+    await person.click(dialog.getByRole('radio', { name: 'Test lamp' }))
+    for (const [end, title, point] of [
+      [/^From/, 'From which point', /^F11 out/],
+      [/^To/, 'To which point', /^chassis/],
+    ] as const) {
+      await person.click(dialog.getByRole('button', { name: end }))
+      const list = within(await screen.findByRole('dialog', { name: title }))
+      await person.click(list.getByRole('button', { name: point }))
+    }
+    await person.click(dialog.getByRole('button', { name: 'Put it in' }))
+    expect(dialog.getByText('Test lamp from F11 out to chassis')).toBeInTheDocument()
+    await person.click(dialog.getByRole('button', { name: 'Done' }))
+    expect(screen.getByRole('button', { name: 'Put in test lamp' })).toBeInTheDocument()
+    const points = within(screen.getByRole('group', { name: 'Points of the circuit' })).getAllByRole('button')
+    points[0]?.focus()
+    await person.keyboard('{Enter}')
+    await person.type(meter(), '12.1{Enter}')
+    await waitFor(() => expect(server.trace.readings).toHaveLength(1))
+    expect(server.trace.readings[0]!.condition.added).toEqual([{ from: 'f11.out', to: 'chassis', ohms: 48 }])
+    expect((await screen.findAllByText(/test lamp from F11 out to chassis/)).length).toBeGreaterThan(0)
   })
 })

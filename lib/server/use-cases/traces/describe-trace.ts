@@ -20,6 +20,7 @@ export async function describeTrace(trx: Trx, actor: Actor, id: string): Promise
     vehicle: head.vehicle,
     complaint: head.complaint,
     codes: head.codes,
+    symptoms: head.symptoms,
     readings: await listReadings(trx, of, id),
     cautionsAnsweredAt: head.cautions_answered_at?.toISOString() ?? null,
     finding: finding

@@ -39,7 +39,7 @@ export async function listTraces(context: Context, input: unknown): Promise<Resu
       const circuit = await loadRevision(trx, actor.organisationId, head.circuit_id, head.revision)
       const odds = organisationOdds(findings, { id: head.circuit_id, document: circuit })
       const readings = await listReadings(trx, actor.organisationId, head.id)
-      rows.push({ head, work: { circuit, readings, ...(odds ? { odds } : {}) } })
+      rows.push({ head, work: { circuit, readings, symptoms: head.symptoms, ...(odds ? { odds } : {}) } })
     }
     return succeed(rows)
   })

@@ -1,13 +1,15 @@
 import { isDeepStrictEqual } from 'node:util'
+import { loadRevision } from '@/db/queries/circuit-revisions'
 import { findCircuit } from '@/db/queries/circuits'
 import { findTrace, insertTrace } from '@/db/queries/traces'
+import { checkSymptoms } from '@/diagrams/faults/symptom-schema'
 import type { Trace } from '@/lib/shared/api/traces'
 import { startTraceSchema } from '@/lib/shared/api/traces'
 import { can } from '@/lib/shared/permissions'
 import { fail, type Result, succeed } from '@/lib/shared/result'
 import type { Context } from '../../context'
 import { inTransaction } from '../in-transaction'
-import { parseInput } from '../parse'
+import { invalid, parseInput } from '../parse'
 import { describeTrace } from './describe-trace'
 
 /** Starts a trace on the circuit's latest edition. The same request again answers with the trace already there. */
@@ -16,11 +18,16 @@ export async function startTrace(context: Context, input: unknown): Promise<Resu
   if (!can(actor.role, 'trace.create')) return fail('not-allowed')
   const parsed = parseInput(startTraceSchema, input)
   if (!parsed.ok) return parsed
-  const { id, circuitId, vehicle, complaint, codes } = parsed.value
+  const { id, circuitId, vehicle, complaint, codes, symptoms } = parsed.value
   return inTransaction(context, async (trx) => {
     const circuit = await findCircuit(trx, actor.organisationId, circuitId)
     const before = await findTrace(trx, actor.organisationId, id)
     if (!before && !circuit) return fail('not-found', { path: 'circuitId' })
+    if (!before && circuit && symptoms.length > 0) {
+      const document = await loadRevision(trx, actor.organisationId, circuitId, circuit.revision)
+      const problems = checkSymptoms(document, symptoms)
+      if (problems.length > 0) return invalid(problems)
+    }
     const made =
       circuit !== undefined &&
       (await insertTrace(trx, {
@@ -32,6 +39,7 @@ export async function startTrace(context: Context, input: unknown): Promise<Resu
         vehicle: vehicle || circuit.vehicle,
         complaint,
         codes: JSON.stringify(codes),
+        symptoms: JSON.stringify(symptoms),
         state: 'open',
         started_at: now,
         updated_at: now,
@@ -43,7 +51,8 @@ export async function startTrace(context: Context, input: unknown): Promise<Resu
         there?.started_by === actor.userId &&
         there.circuit_id === circuitId &&
         there.complaint === complaint &&
-        isDeepStrictEqual(there.codes, codes)
+        isDeepStrictEqual(there.codes, codes) &&
+        isDeepStrictEqual(there.symptoms, symptoms)
       if (!same) return fail('id-taken', { path: 'id' })
     }
     return succeed(await describeTrace(trx, actor, id))
