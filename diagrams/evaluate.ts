@@ -3,7 +3,7 @@ import { clearances, type Clearance } from './faults/clearance'
 import { codeEvidence } from './faults/code-evidence'
 import { weighReadings, type Evidence } from './faults/evidence'
 import { explain } from './faults/explain'
-import { faultModelOf, type FaultModel } from './faults/fault-model'
+import { faultModelSteps, type FaultModel } from './faults/fault-model'
 import { misfitOf } from './faults/misfit'
 import { weighMoved } from './faults/moved-evidence'
 import { swings } from './faults/moved-reading'
@@ -16,10 +16,11 @@ import { judgeReadings } from './faults/reading-sentence'
 import type { EvaluationRequest } from './faults/request'
 import { explainedByLikeliest, symptomEvidence } from './faults/symptom-evidence'
 import { symptomSentence } from './faults/symptom-sentence'
+import { runToEnd, type Step, type Steps } from './faults/steps'
 import { modeWeight } from './faults/priors'
 import { sitesOf, type Mode } from './document/sites'
 import { nextReadings } from './next-readings'
-import { planNext, type Plan } from './planner/plan-next'
+import { planSteps, type Plan } from './planner/plan-next'
 import { answerTwoFaults } from './two-faults'
 
 /** One site, or one group that cannot be told apart, is located when it holds this much. */
@@ -32,18 +33,31 @@ const worthwhileBits = 0.05
  * what to read next. The request comes from `openEvaluationRequest`, so it is sound.
  */
 export function evaluate(request: EvaluationRequest): Answer {
+  return runToEnd(evaluateSteps(request))
+}
+
+/** The same in portions, so that a thread may look for something newer in between. */
+export function* evaluateSteps(request: EvaluationRequest): Steps<Answer> {
   const { circuit, readings, codes, priors, odds, symptoms = [] } = request
-  const model = faultModelOf(circuit)
+  const model = yield* faultModelSteps(circuit)
   const scope = { network: model.network }
   const comesAndGoes = readings.some((reading) => swings(reading, scope))
   const weigh = comesAndGoes ? weighMoved : weighReadings
+  for (const [done, reading] of readings.entries()) {
+    yield { stage: 'readings', done, of: readings.length }
+    // What is foretold for a reading is kept, so that weighing them together finds it there.
+    model.table(reading)
+  }
+  const weighed: Step = { stage: 'readings', done: readings.length, of: readings.length }
   const full = weigh(model, readings)
+  yield weighed
   const complaint = symptomEvidence(model, symptoms)
   const told = allReports([codeEvidence(model, codes), complaint])
   const posteriorFor = (evidence: Evidence) => posteriorOf(model, evidence, priors, told, odds)
   const misfit = misfitOf(model, readings, full, posteriorFor, weigh)
   if (misfit && !misfit.above && !comesAndGoes) {
     const weightOf = (site: string, mode: Mode) => modeWeight(circuit, site, mode, priors, odds)
+    yield weighed
     const search = searchPairs(model, full, readings, weightOf, told)
     if (areTwoFaults(misfit, search)) return answerTwoFaults(search, full, readings)
   }
@@ -51,7 +65,8 @@ export function evaluate(request: EvaluationRequest): Answer {
   const evidence = aside === null ? full : weigh(model, readings, new Set([aside]))
   const posterior = posteriorFor(evidence)
   const kept = aside === null ? readings : readings.filter((_, r) => r !== aside)
-  const plan = planNext(model, posterior, kept)
+  yield weighed
+  const plan = yield* planSteps(model, posterior, kept)
 
   const sites = sitesOf(circuit).map((site) => site.id)
   const probabilities = siteProbabilities(model, posterior)
