@@ -66,6 +66,22 @@ export function clearanceRun(
   seed: number,
   slip: { share: number; exactly?: number } = { share: 0 },
 ): ClearanceRun | null {
+  const drawn = readFaulty(model, site, pool, seed, slip)
+  if (!drawn) return null
+  const { fault, readings } = drawn
+  const found = clearances(model, weighReadings(model, readings), readings, [site.id]).get(site.id)!
+  const showsAsDrawn = !found.cleared || new Vehicle(model.network, asDrawn, fault).shows()
+  return { ...drawn, ...found, showsAsDrawn }
+}
+
+/** A fault of a site, drawn oddly, and readings of a vehicle that has it. */
+export function readFaulty(
+  model: FaultModel,
+  site: Site,
+  pool: readonly Probe[][],
+  seed: number,
+  slip: { share: number; exactly?: number } = { share: 0 },
+): { fault: PlantedFault; readings: Reading[]; slips: number } | null {
   const random = seededRandom(seed)
   const draw = () => drawOf(random.pick(oddShapes), random)
   for (let tries = 0; tries < 8; tries++) {
@@ -85,10 +101,7 @@ export function clearanceRun(
     if (!vehicle.shows()) continue
     const { readings, slips } = takeReadings(vehicle, pool, draw(), random, slip)
     if (readings.length === 0) continue
-    const evidence = weighReadings(model, readings)
-    const found = clearances(model, evidence, readings, [site.id]).get(site.id)!
-    const showsAsDrawn = !found.cleared || new Vehicle(model.network, asDrawn, fault).shows()
-    return { fault, readings, slips, ...found, showsAsDrawn }
+    return { fault, readings, slips }
   }
   return null
 }
