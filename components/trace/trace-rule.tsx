@@ -1,5 +1,6 @@
 'use client'
 
+import { stepWords } from '@/lib/client/evaluator/step-words'
 import { nextTitle } from './next-words'
 import { RuleCount } from './rule/rule-count'
 import { SplitRule } from './rule/split-rule'
@@ -15,7 +16,11 @@ export function TraceRule({ session }: { session: TraceSession }) {
         started={started}
         outcome={current ? (answer?.outcome ?? null) : null}
         repaired={done && (counts?.faulty ?? 0) > 0}
-        foot={`${readings.length} ${readings.length === 1 ? 'reading' : 'readings'}`}
+        foot={
+          session.progress
+            ? stepWords(session.progress)
+            : `${readings.length} ${readings.length === 1 ? 'reading' : 'readings'}`
+        }
       />
       <SplitRule
         circuit={circuit}

@@ -21,7 +21,7 @@ export function useTraceSession(initial: Trace) {
   const [symptoms] = useState(initial.symptoms)
   const codesKey = trace.codes.join(' ')
   const codes = useMemo(() => (codesKey === '' ? [] : codesKey.split(' ')), [codesKey])
-  const { answer, current, failed } = useAnswer(circuit, readings, codes, odds, symptoms)
+  const { answer, current, failed, progress } = useAnswer(circuit, readings, codes, odds, symptoms)
   const started = readings.length > 0
   const done = trace.state === 'done'
 
@@ -58,6 +58,7 @@ export function useTraceSession(initial: Trace) {
     answer,
     current,
     failed,
+    progress,
     started,
     done,
     counts: verdictCounts(current ? answer : null),

@@ -1,16 +1,24 @@
-import { evaluate } from '@/diagrams/evaluate'
-import type { Answered, Asked } from './messages'
+import { evaluateSteps } from '@/diagrams/evaluate'
+import type { Answer } from '@/diagrams/faults/answer'
+import { QuestionRunner } from '@/lib/shared/evaluator/question-runner'
+import type { Asked, Question } from './messages'
+import { WholeQuestions } from './whole-question'
+
+/** A turn through the queue of messages, without the delay that a timer would be given. */
+const turn = new MessageChannel()
+const waiting: (() => void)[] = []
+turn.port1.onmessage = () => waiting.shift()?.()
+
+const questions = new WholeQuestions()
+const runner = new QuestionRunner<Question, Answer>(evaluateSteps, {
+  now: () => performance.now(),
+  pause: () =>
+    new Promise((resolve) => {
+      waiting.push(resolve)
+      turn.port2.postMessage(null)
+    }),
+  tell: (told) => self.postMessage(told),
+})
 
 /** The evaluator off the main thread, so that a key press is never kept waiting by arithmetic. */
-self.onmessage = (event: MessageEvent<Asked>) => {
-  const { number, question } = event.data
-  self.postMessage(answer(number, question))
-}
-
-function answer(number: number, question: Asked['question']): Answered {
-  try {
-    return { number, ok: true, answer: evaluate(question) }
-  } catch (error) {
-    return { number, ok: false, message: error instanceof Error ? error.message : String(error) }
-  }
-}
+self.onmessage = (event: MessageEvent<Asked>) => runner.ask(event.data.number, questions.open(event.data))

@@ -3,6 +3,7 @@ import type { Reading } from '@/diagrams/document/reading-schema'
 import type { Answer } from '@/diagrams/faults/answer'
 import type { Odds } from '@/diagrams/faults/odds-schema'
 import type { Symptom } from '@/diagrams/faults/symptom-schema'
+import type { Told } from '@/lib/shared/evaluator/question-runner'
 
 export interface Question {
   circuit: Circuit
@@ -13,8 +14,9 @@ export interface Question {
   symptoms?: Symptom[]
 }
 
-/** To the worker and back; the number tells the newest question from one that is no longer asked. */
-export type Asked = { number: number; question: Question }
-export type Answered =
-  | { number: number; ok: true; answer: Answer }
-  | { number: number; ok: false; message: string }
+/**
+ * To the worker; the number tells the newest question from one that is no longer asked. The circuit, by far the largest
+ * part, comes only when it is another one than in the question before.
+ */
+export type Asked = { number: number; question: Omit<Question, 'circuit'> & { circuit?: Circuit } }
+export type Answered = Told<Answer>

@@ -3,6 +3,7 @@ import type { Circuit } from '@/diagrams/document/circuit-schema'
 import type { Reading } from '@/diagrams/document/reading-schema'
 import type { Answer } from '@/diagrams/faults/answer'
 import type { Odds } from '@/diagrams/faults/odds-schema'
+import type { Step } from '@/diagrams/faults/steps'
 import type { Symptom } from '@/diagrams/faults/symptom-schema'
 import { Evaluator, type Thread } from './evaluator'
 import type { Question } from './messages'
@@ -14,6 +15,8 @@ export interface AnswerState {
   /** True once the answer belongs to the readings shown. */
   current: boolean
   failed: string | null
+  /** How far the answer to these readings has come, once it takes long. */
+  progress: Step | null
 }
 
 const startThread = (): Thread =>
@@ -40,12 +43,18 @@ export function useAnswer(
   )
   const [given, setGiven] = useState<{ question: Question; answer: Answer } | null>(null)
   const [failure, setFailure] = useState<{ question: Question; message: string } | null>(null)
+  const [way, setWay] = useState<{ question: Question; step: Step } | null>(null)
   const evaluator = useRef<Evaluator | null>(null)
 
   useEffect(() => {
     const opened = new Evaluator(startThread, {
       answered: (answer, asked) => setGiven({ question: asked, answer }),
       failed: (message, asked) => setFailure({ question: asked, message }),
+      progressed: (step, asked) => setWay({ question: asked, step }),
+      later(milliseconds, run) {
+        const timer = setTimeout(run, milliseconds)
+        return () => clearTimeout(timer)
+      },
     })
     evaluator.current = opened
     return () => {
@@ -63,5 +72,6 @@ export function useAnswer(
     answer: given && sameCircuit ? given.answer : null,
     current: given?.question === question,
     failed: failure?.question === question ? failure.message : null,
+    progress: way?.question === question && given?.question !== question ? way.step : null,
   }
 }

@@ -6,6 +6,7 @@ import { TraceScreen } from '@/components/trace/trace-screen'
 import { evaluate } from '@/diagrams/evaluate'
 import { samples } from '@/diagrams/samples/all-samples'
 import type { Asked } from '@/lib/client/evaluator/messages'
+import { WholeQuestions } from '@/lib/client/evaluator/whole-question'
 import type { Trace } from '@/lib/shared/api/traces'
 
 vi.mock('next/navigation', () => ({ useRouter: () => ({ push: vi.fn(), refresh: vi.fn() }) }))
@@ -43,7 +44,10 @@ function makeTrace(more: Partial<Trace> = {}): Trace {
 class SameThreadWorker {
   onmessage: ((event: MessageEvent) => void) | null = null
   onerror: ((event: ErrorEvent) => void) | null = null
-  postMessage({ number, question }: Asked) {
+  private readonly questions = new WholeQuestions()
+  postMessage(asked: Asked) {
+    const question = this.questions.open(asked)
+    const { number } = asked
     setTimeout(
       () => this.onmessage?.({ data: { number, ok: true, answer: evaluate(question) } } as MessageEvent),
       0,
@@ -98,6 +102,32 @@ describe('a trace on screen', () => {
     await nextCard()
     const all = evaluate({ circuit, readings: [], codes: [], priors: 'trade' }).sites.length
     expect(screen.getByText(String(all), { selector: 'output' })).toBeInTheDocument()
+  })
+
+  it('says quietly how far an answer has come that takes its time, and no more once it is there', async () => {
+    let thread: SlowWorker | null = null
+    class SlowWorker extends SameThreadWorker {
+      private readonly asked: Asked[] = []
+      constructor() {
+        super()
+        thread = this
+      }
+      override postMessage(asked: Asked) {
+        this.asked.push(asked)
+        const progress = { stage: 'planning', done: 3, of: 8 }
+        setTimeout(() => this.onmessage?.({ data: { number: asked.number, progress } } as MessageEvent), 0)
+      }
+      finish() {
+        for (const asked of this.asked) super.postMessage(asked)
+      }
+    }
+    vi.stubGlobal('Worker', SlowWorker)
+    serve(makeTrace())
+    show(makeTrace())
+    expect(await screen.findByText('Next split: 37 %')).toBeInTheDocument()
+    thread!.finish()
+    await nextCard()
+    expect(screen.queryByText(/37 %/)).not.toBeInTheDocument()
   })
 
   it('takes digits typed anywhere, lights the outcome they fall in, and logs the reading', async () => {
