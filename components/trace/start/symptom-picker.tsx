@@ -52,7 +52,9 @@ export function SymptomPicker({
               key={load.id}
               className="flex flex-wrap items-center justify-between gap-x-3 gap-y-1 border-b border-line py-1.5"
             >
-              <span className="min-w-32 flex-1 font-bold">{nodeName(load)}</span>
+              <span className="min-w-32 flex-1">
+                <b>{nodeName(load)}</b> <span className="text-ink-2">works</span>
+              </span>
               <Choice
                 label={`${nodeName(load)} works`}
                 options={doings}
