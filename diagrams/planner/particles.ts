@@ -16,36 +16,71 @@ export const noFaultUnit = ''
 
 /** Hypotheses under this probability are left out of planning. */
 const least = 2e-5
+/** Severities that all hypotheses share, about: the fewer are left, the more finely each is looked at. */
+const shared = 240
+/** Of one hypothesis at most. */
+const mostMarks = 12
+/** Below this one severity is enough. */
+const coarseBelow = 0.0005
 
-/** Parts of a hypothesis's probability at which it is represented: the likelier it is, the more finely. */
-const marksOf = [[1 / 2], [1 / 4, 3 / 4], [1 / 6, 1 / 2, 5 / 6]] as const
-
-/** One to three severities for each hypothesis. Weights sum to nearly 1. */
+/**
+ * Each hypothesis at severities that part its probability evenly, the likelier it is, the more of them. They
+ * lie anywhere in a cell, not in its middle: two places whose severities are not known exactly must not look
+ * told apart by figures that only the choice of severities makes different. Weights sum to nearly 1.
+ */
 export function particlesOf(model: FaultModel, posterior: Posterior): Particle[] {
   const particles: Particle[] = [
     { hypothesis: null, site: noFaultUnit, severity: 0, weight: posterior.noFault },
   ]
+  const masses = posterior.cells.map((cells) => cells.reduce((sum, cell) => sum + cell, 0))
+  // By the root, so that many small ones are not all left with one.
+  let roots = 0
+  for (const mass of masses) if (mass >= coarseBelow) roots += Math.sqrt(mass)
   model.hypotheses.forEach((hypothesis, h) => {
-    const cells = posterior.cells[h]!
-    let mass = 0
-    for (const cell of cells) mass += cell
+    const mass = masses[h]!
     if (mass < least) return
-    const marks = cells.length === 1 || mass < 0.0005 ? marksOf[0] : mass < 0.01 ? marksOf[1] : marksOf[2]
-    const chosen = new Map<number, number>()
+    const share = Math.round((shared * Math.sqrt(mass)) / roots)
+    const fixed = hypothesis.cells.every(({ low, high }) => low === high)
+    const marks = fixed || mass < coarseBelow ? 1 : Math.max(1, Math.min(mostMarks, share))
+    const cells = posterior.cells[h]!
+    let c = 0
     let before = 0
-    let next = 0
-    cells.forEach((cell, c) => {
-      before += cell / mass
-      while (next < marks.length && marks[next]! <= before + 1e-12) {
-        chosen.set(c, (chosen.get(c) ?? 0) + mass / marks.length)
-        next++
-      }
-    })
-    for (const [c, weight] of chosen) {
+    for (let m = 0; m < marks; m++) {
+      const mark = ((m + 0.5) / marks) * mass
+      while (c < cells.length - 1 && before + cells[c]! < mark) before += cells[c++]!
       const { low, high } = hypothesis.cells[c]!
-      const severity = hypothesis.mode === 'weak' || low === 0 ? (low + high) / 2 : Math.sqrt(low * high)
-      particles.push({ hypothesis, site: hypothesis.site, severity, weight })
+      const inside = cells[c]! > 0 ? Math.min(1, (mark - before) / cells[c]!) : 0.5
+      const even = hypothesis.mode === 'weak' || low === 0
+      const severity = even ? low + inside * (high - low) : low * (high / low) ** inside
+      particles.push({ hypothesis, site: hypothesis.site, severity, weight: mass / marks })
     }
   })
   return particles
+}
+
+/** With more particles than this a first look is taken through fewer. */
+const fewEnough = 300
+/** The likeliest places are looked at whole, of the others as many particles as this. */
+const wholeSites = 24
+const sampled = 100
+
+/**
+ * Fewer particles that stand for all of them: those of the likeliest sites, and of the rest every so-manieth part of
+ * their probability. `suspects`: sites, likeliest first. Null when there are few enough as it is.
+ */
+export function pilotOf(particles: readonly Particle[], suspects: readonly string[]): Particle[] | null {
+  if (particles.length <= fewEnough) return null
+  const whole = new Set(['', ...suspects.slice(0, wholeSites)])
+  const kept = particles.filter((particle) => whole.has(particle.site))
+  const others = particles.filter((particle) => !whole.has(particle.site))
+  const share = others.reduce((sum, { weight }) => sum + weight, 0) / sampled
+  let left = share / 2
+  for (const particle of others) {
+    left -= particle.weight
+    if (left > 0) continue
+    const parts = Math.floor(-left / share) + 1
+    left += parts * share
+    kept.push({ ...particle, weight: parts * share })
+  }
+  return kept.length < particles.length ? kept : null
 }
