@@ -1,29 +1,36 @@
 import type { Reading } from '../document/reading-schema'
 import { noAlteration } from '../solver/alteration'
-import { stateKey, type States } from '../solver/study'
 import { FaultModel } from './fault-model'
 import type { Hypothesis } from './hypothesis'
+import { BoxCorner, type AskedReading } from './pair-corner'
+import type { PairSolver, SolvedPair } from './pair-solver'
 import type { Prediction } from './prediction'
-import type { CellPrediction, PredictionTable } from './prediction-table'
-import type { PairCorner, PairSolver, SolvedPair } from './pair-solver'
-import { accuracyOf, windowsOf } from './tolerance-rule'
+import { tableOf, type CellPrediction, type PredictionTable } from './prediction-table'
+import { weakRange } from './battery-range'
+import { accuracyOf, scalesThatFit } from './tolerance-rule'
 
 export type Range = readonly [low: number, high: number]
 
 /** A pair over a stretch of severities of either fault. */
 export interface PairBox {
-  pair: PairWork
+  pair: SolvedPair
   held: Range
   swept: Range
+  /** The ends of the swept fault at the held one's low end, then at its high end; fewer where a stretch is one point. */
+  corners: readonly BoxCorner[]
   /** ln of its odds before any reading. */
   logPrior: number
 }
 
-/** A pair being weighed, with what was solved of it so far. */
-export interface PairWork extends SolvedPair {
-  corners: Map<string, PairCorner | null>
-  predictions: Map<string, Prediction>
+/** All severities of both. */
+export function wholeBox(pair: SolvedPair, logPrior: number): PairBox {
+  const held: Range = [pair.held.low, pair.held.high]
+  const swept: Range = [pair.swept.low, pair.swept.high]
+  const corners = ends(held).flatMap((h) => ends(swept).map((s) => new BoxCorner(pair, h, s)))
+  return { pair, held, swept, corners, logPrior }
 }
+
+const ends = ([low, high]: Range): number[] => (low === high ? [low] : [low, high])
 
 /**
  * Boxes as a fault model, each one hypothesis of one cell, so that readings are weighed by the same rules as
@@ -34,15 +41,17 @@ export class BoxModel extends FaultModel {
   constructor(
     private readonly solver: PairSolver,
     private readonly boxes: readonly PairBox[],
+    private readonly asked: readonly AskedReading[],
   ) {
     super(solver.model.circuit, { network: solver.model.network, hypotheses: boxes.map(hypothesisOf) })
   }
 
   override table(reading: Reading): PredictionTable {
-    return {
-      good: this.solver.model.table(reading).good,
-      cells: this.boxes.map((box) => [predictBox(this.solver, box, reading)]),
-    }
+    const asked = this.asked.find((one) => one.reading === reading)!
+    return tableOf(
+      this.solver.model.table(reading).good,
+      this.boxes.map((box) => [predictBox(this.solver, box, asked)]),
+    )
   }
 }
 
@@ -60,30 +69,40 @@ function hypothesisOf({ pair, swept }: PairBox): Hypothesis {
   }
 }
 
-function predictBox(solver: PairSolver, box: PairBox, reading: Reading): CellPrediction {
-  const corners = cornersOf(solver, box, reading)
-  if (corners === null) return { bounds: null, ends: null }
-  const states = new Map<string, States>()
-  const settled = new Map<string, States>()
-  for (const { corner } of corners) {
-    for (const [key, state] of corner.possible) states.set(key, state)
-    settled.set(stateKey(corner.settled), corner.settled)
-  }
+/** False for a box that cannot give some one reading, whatever else: the readings most likely to refute it come first. */
+export function mayGive(solver: PairSolver, box: PairBox, asked: readonly AskedReading[]): boolean {
+  const weak = box.pair.swept.mode === 'weak'
+  return asked.every(
+    (one) => scalesThatFit(predictBox(solver, box, one), one.windows, weak ? weakRange : one.range).size > 0,
+  )
+}
+
+/** A circuit that keeps switching itself foretells nothing, and explains nothing either. */
+export function comesToRest(solver: PairSolver, box: PairBox, asked: readonly AskedReading[]): boolean {
+  return asked.every((one) => box.corners.every((corner) => corner.settle(solver, one) !== null))
+}
+
+function predictBox(solver: PairSolver, { corners }: PairBox, asked: AskedReading): CellPrediction {
   const bounds = new Map<string, Prediction[]>()
-  for (const [key, state] of states)
-    bounds.set(
-      key,
-      corners.map(({ corner, name }) =>
-        kept(box.pair.predictions, `${reading.id} ${name} ${key}`, () =>
-          solver.predict(corner, state, reading),
-        ),
-      ),
-    )
-  return { bounds, ends: [...settled.keys()].map((key) => endsOf(bounds.get(key)!)) }
+  const settled = new Set<string>()
+  for (const corner of corners) {
+    const rests = corner.settle(solver, asked)
+    if (!rests) return { bounds: null, ends: null }
+    for (const [key, states] of rests.possible)
+      if (!bounds.has(key))
+        bounds.set(
+          key,
+          corners.map((each) => each.predict(solver, asked, key, states)!),
+        )
+    settled.add(rests.settledKey)
+  }
+  for (const predictions of bounds.values())
+    if (predictions.some((prediction) => prediction === null)) return { bounds: null, ends: null }
+  return { bounds, ends: [...settled].map((key) => furthest(bounds.get(key)!)) }
 }
 
 /** The two corners furthest apart. */
-function endsOf(predictions: readonly Prediction[]): [Prediction, Prediction] {
+function furthest(predictions: readonly Prediction[]): [Prediction, Prediction] {
   let [least, most] = [predictions[0]!, predictions[0]!]
   for (const prediction of predictions) {
     if (plain(prediction) < plain(least)) least = prediction
@@ -94,89 +113,93 @@ function endsOf(predictions: readonly Prediction[]): [Prediction, Prediction] {
 
 const plain = (prediction: Prediction) => prediction.battery + prediction.fixed
 
-/** Null when the circuit does not come to rest at one of them. */
-function cornersOf(
-  solver: PairSolver,
-  { pair, held, swept }: PairBox,
-  reading: Reading,
-): { corner: PairCorner; name: string }[] | null {
-  const found: { corner: PairCorner; name: string }[] = []
-  for (const heldAt of ends(held))
-    for (const sweptAt of ends(swept)) {
-      const name = `${heldAt} ${sweptAt}`
-      const corner = kept(pair.corners, `${solver.conditionName(reading)} ${name}`, () =>
-        solver.corner(pair, heldAt, sweptAt, reading),
-      )
-      if (!corner) return null
-      found.push({ corner, name })
-    }
-  return found
-}
-
-/** A circuit that keeps switching itself foretells nothing, and explains nothing either. */
-export function comesToRest(solver: PairSolver, box: PairBox, readings: readonly Reading[]): boolean {
-  return readings.every((reading) => cornersOf(solver, box, reading) !== null)
-}
-
-const ends = ([low, high]: Range): number[] => (low === high ? [low] : [low, high])
-
-function kept<V>(map: Map<string, V>, key: string, find: () => V): V {
-  let found = map.get(key)
-  if (found === undefined) map.set(key, (found = find()))
-  return found
-}
-
 /** Nearer to each other than this many standard deviations, the ends of a box are as good as one. */
-const fineDeviations = 3
+const fineDeviations = 5
 /** Severities nearer than this to each other are not told apart. */
-const finePart = 1.03
+const finePart = 1.1
+/** A weak battery's volts are gone through within a box. */
+const finePartWeak = 1.25
+
+/** How much a box may still gain by being halved. */
+export interface BoxSpread {
+  /** Deviations between the ends of either fault's stretch, of the reading moved the most. */
+  held: number
+  swept: number
+  /** ln of how much likelier the readings may be at the best spot in the box than in all of it. */
+  gain: number
+}
+
+export function spreadOf(solver: PairSolver, box: PairBox, asked: readonly AskedReading[]): BoxSpread {
+  const { held, swept, corners } = box
+  const spread = { held: 0, swept: 0, gain: 0 }
+  const last = corners.length - 1
+  // Corners run through the swept fault's ends first.
+  const step = swept[0] === swept[1] ? 1 : 2
+  for (const one of asked) {
+    const effect = (x: number, y: number) => apart(solver, one, corners[x]!, corners[y]!)
+    const bySwept = step === 2 ? Math.max(effect(0, 1), effect(last - 1, last)) : 0
+    const byHeld = held[0] === held[1] ? 0 : Math.max(effect(0, step), effect(last - step, last))
+    spread.swept = Math.max(spread.swept, bySwept)
+    spread.held = Math.max(spread.held, byHeld)
+    // A density of 1 over the width against the normal one's peak.
+    spread.gain += Math.log(Math.max(1, Math.max(bySwept, byHeld) / Math.sqrt(2 * Math.PI)))
+  }
+  return spread
+}
 
 /** Halves a box across the fault whose severity moves some reading the most; null when that is too little to matter. */
-export function halvesOf(solver: PairSolver, box: PairBox, readings: readonly Reading[]): PairBox[] | null {
-  const effects = { held: 0, swept: 0 }
-  for (const reading of readings) {
-    const corners = cornersOf(solver, box, reading)
-    if (corners === null) continue
-    const state = corners[0]!.corner.settled
-    const key = stateKey(state)
-    const of = corners.map(({ corner, name }) =>
-      kept(box.pair.predictions, `${reading.id} ${name} ${key}`, () =>
-        solver.predict(corner, state, reading),
-      ),
-    )
-    const effect = (x: number, y: number) =>
-      stateKey(corners[x]!.corner.settled) === stateKey(corners[y]!.corner.settled)
-        ? deviationsBetween(solver, reading, of[x]!, of[y]!)
-        : 2 * fineDeviations
-    const last = of.length - 1
-    // Corners run through the swept fault's ends first.
-    const step = box.swept[0] === box.swept[1] ? 1 : 2
-    if (step === 2) effects.swept = Math.max(effects.swept, effect(0, 1), effect(last - 1, last))
-    if (box.held[0] !== box.held[1])
-      effects.held = Math.max(effects.held, effect(0, step), effect(last - step, last))
-  }
-  const which = effects.held > effects.swept ? 'held' : 'swept'
-  if (effects[which] < fineDeviations) return null
+export function halvesOf(box: PairBox, spread: BoxSpread): [PairBox, PairBox] | null {
+  const { pair, held, swept, corners } = box
+  const which = spread.held > spread.swept ? 'held' : 'swept'
+  if (spread[which] < fineDeviations) return null
   const [low, high] = box[which]
-  if (low <= 0 || high / low < finePart) return null
-  const middle = box.pair[which].mode === 'weak' ? (low + high) / 2 : Math.sqrt(low * high)
+  const weak = pair[which].mode === 'weak'
+  if (low <= 0 || high / low < (weak ? finePartWeak : finePart)) return null
+  const middle = weak ? (low + high) / 2 : Math.sqrt(low * high)
   const logPrior = box.logPrior - Math.LN2
+  const half = (range: Range, own: BoxCorner[]): PairBox => ({
+    ...box,
+    [which]: range,
+    corners: own,
+    logPrior,
+  })
+  const step = swept[0] === swept[1] ? 1 : 2
+  if (which === 'held') {
+    const between = ends(swept).map((s) => new BoxCorner(pair, middle, s))
+    return [
+      half([low, middle], [...corners.slice(0, step), ...between]),
+      half([middle, high], [...between, ...corners.slice(-step)]),
+    ]
+  }
+  const between = ends(held).map((h) => new BoxCorner(pair, h, middle))
+  const side = (of: 0 | 1) => ends(held).map((_, h) => corners[2 * h + of]!)
   return [
-    { ...box, [which]: [low, middle] as const, logPrior },
-    { ...box, [which]: [middle, high] as const, logPrior },
+    half(
+      [low, middle],
+      between.flatMap((corner, h) => [side(0)[h]!, corner]),
+    ),
+    half(
+      [middle, high],
+      between.flatMap((corner, h) => [corner, side(1)[h]!]),
+    ),
   ]
 }
 
-function deviationsBetween(solver: PairSolver, reading: Reading, one: Prediction, other: Prediction): number {
-  const [low, high] = [Math.min(plain(one), plain(other)), Math.max(plain(one), plain(other))]
+/** How far apart two corners are for a reading, in standard deviations. */
+function apart(solver: PairSolver, asked: AskedReading, x: BoxCorner, y: BoxCorner): number {
+  const [one, other] = [x.settle(solver, asked), y.settle(solver, asked)]
+  // Where the circuit comes to rest otherwise at one end, or not at all, something happens in between.
+  if (one?.settledKey !== other?.settledKey) return fineDeviations
+  if (!one) return 0
+  const [a, b] = [x, y].map((corner) => corner.predict(solver, asked, one.settledKey, one.settled)!)
+  const [low, high] = [Math.min(plain(a!), plain(b!)), Math.max(plain(a!), plain(b!))]
+  const { reading } = asked
   if (typeof reading.value === 'number') {
     const { percent, floor } = accuracyOf(reading)
     const limit = (percent / 100) * Math.abs(reading.value) + floor
-    return (high - low) / Math.sqrt((limit / 2) ** 2 + ((one.spread + other.spread) / 2) ** 2)
+    return (high - low) / Math.sqrt((limit / 2) ** 2 + ((a!.spread + b!.spread) / 2) ** 2)
   }
   // What only has to lie within a window is as good anywhere in it.
-  const inside = windowsOf(reading, { network: solver.model.network }).some(
-    (window) => low >= window.low && high <= window.high,
-  )
-  return inside ? 0 : 2 * fineDeviations
+  const inside = asked.windows.some((window) => low >= window.low && high <= window.high)
+  return inside ? 0 : fineDeviations
 }

@@ -11,13 +11,9 @@ export interface CandidatePair {
   missing: number
 }
 
-/** Pairs that leave this many more readings unexplained than the best are not looked at. */
-const slack = 2
-
 /**
- * The pairs most worth solving, at most so many: those of which each explains what the other does not come
- * first, the likelier ones before the others. A fifth of the room is kept for pairs whose effects must add up,
- * two bad joints in one line, and for pairs that show only together.
+ * The pairs most worth solving, at most so many: those come first of which each explains what the other does
+ * not, the likelier before the others. The last fifth of the room is kept for pairs that show only together.
  */
 export function candidatePairs(
   model: FaultModel,
@@ -37,26 +33,34 @@ export function candidatePairs(
   )
   const missing = masks.missingTogether()
   const ranked: CandidatePair[] = []
-  let least = Infinity
   for (let i = 0; i < members.length; i++)
     for (let j = i + 1; j < members.length; j++) {
       if (!mayStandTogether(members[i]!, members[j]!)) continue
-      let fewest = Infinity
+      let fewest = readings.length
       for (const x of masksOf[i]!) for (const y of masksOf[j]!) fewest = Math.min(fewest, missing[x]![y]!)
-      if (fewest > least + slack) continue
-      least = Math.min(least, fewest)
       ranked.push({ a: members[i]!, b: members[j]!, missing: fewest })
     }
-  const odds = (pair: CandidatePair) => pair.a.share * pair.b.share
-  ranked.sort((x, y) => x.missing - y.missing || odds(y) - odds(x))
-  const hidden = hiddenPairs(model, weightOf, scale)
-    .map(([a, b]) => ({ a, b, missing: least }))
-    .toSorted((x, y) => odds(y) - odds(x))
-  const first = ranked.filter((pair) => pair.missing === least && pair.missing === 0)
-  const others = [...hidden, ...ranked.filter((pair) => !(pair.missing === least && pair.missing === 0))]
-  const kept = Math.max(most - others.length, Math.ceil(0.8 * most))
-  const leading = first.slice(0, kept)
-  return [...leading, ...others.slice(0, most - leading.length)]
+  const hidden = hiddenPairs(model, weightOf, scale).map(([a, b]) => ({ a, b, missing: readings.length }))
+  const room = Math.max(Math.ceil(0.8 * most), most - hidden.length)
+  return [...foremost(ranked, room), ...foremost(hidden, most - Math.min(room, ranked.length))]
+}
+
+/** The first so many by readings explained, then by odds. */
+function foremost(pairs: readonly CandidatePair[], most: number): CandidatePair[] {
+  const odds = ({ a, b }: CandidatePair) => a.share * b.share
+  const byMissing = new Map<number, CandidatePair[]>()
+  for (const pair of pairs) {
+    const list = byMissing.get(pair.missing)
+    if (list) list.push(pair)
+    else byMissing.set(pair.missing, [pair])
+  }
+  const found: CandidatePair[] = []
+  for (const missing of [...byMissing.keys()].toSorted((x, y) => x - y)) {
+    if (found.length >= most) break
+    const list = byMissing.get(missing)!.toSorted((x, y) => odds(y) - odds(x))
+    found.push(...list.slice(0, most - found.length))
+  }
+  return found
 }
 
 /** A place has one fault, and a branch is altered once. */

@@ -1,8 +1,9 @@
 import type { Reading } from '../document/reading-schema'
-import { fitsAll, weighReadings, type Evidence } from './evidence'
+import { weighReadings, type Evidence } from './evidence'
 import type { FaultModel } from './fault-model'
 import { logSum } from './log-sum'
-import { BoxModel, comesToRest, halvesOf, type PairBox, type PairWork } from './pair-box'
+import { BoxModel, comesToRest, halvesOf, mayGive, spreadOf, wholeBox, type PairBox } from './pair-box'
+import { askedReadings, type AskedReading } from './pair-corner'
 import { candidatePairs, type CandidatePair } from './pair-candidates'
 import type { PairMember, WeightOf } from './pair-member'
 import { PairSolver } from './pair-solver'
@@ -26,17 +27,19 @@ export interface PairSearch {
   logEvidence: number
 }
 
-/** Readings times branches times corners that the search may solve, about: well under a second. */
+/** Branches that may be gone through: well under a second. The search for pairs has the first part to itself. */
 const work = 6_000_000
-const mostPairs = 500
-const leastPairs = 40
+const searchPart = 0.5
+const mostPairs = 3000
+/** Boxes this far below the best, in nats, whatever halving may bring, are left as they are. */
+const negligible = 8
 
 /**
  * Pairs of faults that explain every reading, each within its limits, one battery behind them all.
  *
- * Every pair begins as one box, all severities of both. A box that cannot give the readings is dropped, which
- * is sound, since a reading lies between those of the box's corners; one that can is halved until it is as
- * fine as the meter. Bounded by the number of boxes, the likelier pairs before the others.
+ * Every pair begins as one box, all severities of both. A box that cannot give some reading is dropped, which
+ * is sound, since a reading lies between those of the box's corners; one that can give all is halved until it is
+ * as fine as the meter. Bounded by the work done, not by the clock.
  */
 export function searchPairs(
   model: FaultModel,
@@ -46,30 +49,46 @@ export function searchPairs(
   told: ReportEvidence | null = null,
 ): PairSearch {
   const solver = new PairSolver(model)
-  const boxWork = 4 * Math.max(1, readings.length) * model.network.branches.length
-  const most = Math.round(Math.min(mostPairs, Math.max(leastPairs, work / 2 / boxWork)))
-  let left = Math.round(Math.max(4 * leastPairs, work / boxWork))
-  const candidates = candidatePairs(model, evidence, readings, weightOf, most)
-  let open = candidates.flatMap((pair) => wholeBoxes(solver, pair, (member) => reportedOf(member, told)))
+  const asked = askedReadings(model, evidence, readings)
+  const candidates = candidatePairs(model, evidence, readings, weightOf, mostPairs)
+  let open: PairBox[] = []
+  for (const candidate of candidates) {
+    if (solver.spent > searchPart * work) break
+    for (const box of wholeBoxes(solver, candidate, (member) => reportedOf(member, told)))
+      if (mayGive(solver, box, asked)) open.push(box)
+  }
   const found: FittingBox[] = []
-  while (open.length > 0) {
-    const boxes = new BoxModel(solver, open)
-    const weighed = weighReadings(boxes, readings)
-    left -= open.length
-    const fitting = open.flatMap((box, b): FittingBox[] => {
-      const cell = weighed.cells[b]![0]!
-      return fitsAll(weighed, cell, readings) ? [{ ...box, log: box.logPrior + cell.logLikelihood }] : []
-    })
-    fitting.sort((x, y) => y.log - x.log)
+  let weighed = weigh(solver, open, readings, asked)
+  // Level by level: a coarse box says too little of how likely it is to be left behind for a fine one.
+  while (weighed.length > 0) {
     open = []
-    for (const box of fitting) {
-      const halves = left >= open.length + 2 ? halvesOf(solver, box, readings) : null
-      if (halves) open.push(...halves)
-      else if (comesToRest(solver, box, readings)) found.push(box)
+    const best = Math.max(...found.map((box) => box.log), ...weighed.map((box) => box.log))
+    const spread = weighed.map((box) => ({ box, by: spreadOf(solver, box, asked) }))
+    spread.sort((x, y) => y.box.log + y.by.gain - x.box.log - x.by.gain)
+    for (const { box, by } of spread) {
+      const matters = box.log + by.gain > best - negligible
+      const halves = matters && solver.spent < work ? halvesOf(box, by) : null
+      if (halves) open.push(...halves.filter((half) => mayGive(solver, half, asked)))
+      else if (comesToRest(solver, box, asked)) found.push(box)
     }
+    weighed = weigh(solver, open, readings, asked)
   }
   found.sort((x, y) => y.log - x.log)
   return { solver, boxes: found, logEvidence: logSum(found.map((box) => box.log)) }
+}
+
+/** The boxes that give all readings together, with how well. */
+function weigh(
+  solver: PairSolver,
+  boxes: readonly PairBox[],
+  readings: readonly Reading[],
+  asked: readonly AskedReading[],
+): FittingBox[] {
+  if (boxes.length === 0) return []
+  const weighed = weighReadings(new BoxModel(solver, boxes, asked), readings)
+  return boxes.flatMap((box, b) =>
+    weighed.fits(b, 0) ? [{ ...box, log: box.logPrior + weighed.logs[b]![0]! }] : [],
+  )
 }
 
 function wholeBoxes(
@@ -82,15 +101,8 @@ function wholeBoxes(
   const [first, second] = held.mode === 'weak' ? [swept, held] : [held, swept]
   const sets = solver.blownSets(first, second)
   const odds = (1 - noFaultPrior) * secondFaultShare * 2 * a.share * b.share
-  return sets.map((blown) => {
-    const pair: PairWork = { held: first, swept: second, blown, corners: new Map(), predictions: new Map() }
-    return {
-      pair,
-      held: [first.low, first.high],
-      swept: [second.low, second.high],
-      logPrior: Math.log(odds / sets.length) + Math.max(reported(a), reported(b)),
-    }
-  })
+  const logPrior = Math.log(odds / sets.length) + Math.max(reported(a), reported(b))
+  return sets.map((blown) => wholeBox({ held: first, swept: second, blown }, logPrior))
 }
 
 /** ln of the probability of what was told before anything was measured: the severity that suits it best. */

@@ -23,17 +23,22 @@ export interface SolvedPair {
 }
 
 /** A pair at two definite severities in one condition. */
-export interface PairCorner {
+export interface RestingPair {
   given: Case
   severity: number
   /** The state it settles in, as drawn. */
   settled: States
+  settledKey: string
   /** Every state its parts may be in, a little eager and a little reluctant, by state. */
   possible: ReadonlyMap<string, States>
 }
 
 /** Combinations of controls in which a pair may blow fuses, at most. */
-const drivingLimit = 24
+const drivingLimit = 16
+
+/** What settling a pair at two severities and factoring a condition cost, in predictions of one reading, about. */
+const settlingPasses = 3
+const studyPasses = 8
 
 interface Holder {
   hold: (severity: number) => HeldFault
@@ -48,6 +53,8 @@ export class PairSolver {
   private readonly cases = new Map<SolvedPair, Map<Study, Case>>()
   private readonly conditionKeys = new Map<Condition, string>()
   private readonly driving: Condition[]
+  /** Branches gone through so far: what the work done is measured by, the same on every machine. */
+  spent = 0
 
   constructor(readonly model: FaultModel) {
     this.driving = controlCombinations(model.circuit, drivingLimit).map((controls) => ({
@@ -57,11 +64,13 @@ export class PairSolver {
   }
 
   /** Null when the circuit does not come to rest. */
-  corner(pair: SolvedPair, heldAt: number, sweptAt: number, probe: Probe): PairCorner | null {
+  settle(pair: SolvedPair, heldAt: number, sweptAt: number, probe: Probe): RestingPair | null {
     const given = this.caseOf(pair, heldAt, probe)
+    this.spend(settlingPasses)
     const settled = given.settle(sweptAt)
     if (!settled) return null
-    const possible = new Map([[stateKey(settled.states), settled.states]])
+    const settledKey = stateKey(settled.states)
+    const possible = new Map([[settledKey, settled.states]])
     const { relays, modules, diodes } = given.study.network
     const parts = relays.length + modules.length + diodes.length
     if (parts > 0 && !given.passed.every((state) => isCertain(given, state))) {
@@ -79,12 +88,13 @@ export class PairSolver {
         possible.set(stateKey(other.states), other.states)
       }
     }
-    return { given, severity: sweptAt, settled: settled.states, possible }
+    return { given, severity: sweptAt, settled: settled.states, settledKey, possible }
   }
 
   /** Predictions are linear in the battery, so a weak one is predicted for 12.6 V and scaled. */
-  predict({ given, severity }: PairCorner, states: States, probe: Probe): Prediction {
+  predict({ given, severity }: RestingPair, states: States, probe: Probe): Prediction {
     const scale = given.alteration.weak ? 1 : given.scaleFor(severity)
+    this.spend(1)
     return predict(given, given.solve(states, severity, scale), probe)
   }
 
@@ -96,6 +106,7 @@ export class PairSolver {
       const first = this.heldAt(held, held[end], this.model.network)
       const studies = this.driving.map((condition) => this.study(first, condition))
       const alteration = besides(first, swept.alteration)
+      this.spend(settlingPasses * studies.length)
       const blown = blownFuses(first.network, studies, alteration, swept[end])
       sets.set(blown.toSorted().join(','), blown)
     }
@@ -131,6 +142,11 @@ export class PairSolver {
     return kept(bySeverity, severity, () => hold(severity))
   }
 
+  private spend(passes: number) {
+    // What a pass costs on even the smallest circuit is that of some fifty branches.
+    this.spent += passes * (50 + this.model.network.branches.length)
+  }
+
   conditionName({ condition }: { condition: Condition }): string {
     return kept(this.conditionKeys, condition, () => conditionKey(this.model.circuit, condition))
   }
@@ -138,7 +154,10 @@ export class PairSolver {
   private study(held: HeldFault, condition: Condition): Study {
     const key = this.conditionName({ condition })
     const byCondition = kept(this.studies, held, () => new Map<string, Study>())
-    return kept(byCondition, key, () => new Study(held.network, condition))
+    return kept(byCondition, key, () => {
+      this.spend(studyPasses)
+      return new Study(held.network, condition)
+    })
   }
 }
 
