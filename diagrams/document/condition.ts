@@ -38,6 +38,17 @@ export function checkCondition(circuit: Circuit, condition: Condition, base: str
         message: `"${id}" is not a connector, fuse or relay of this circuit`,
       })
   })
+  const opened = condition.unplugged
+  opened.forEach((id, index) => {
+    if (opened.indexOf(id) < index)
+      problems.push({ path: `${base}.unplugged.${index}`, message: `"${id}" is unplugged twice` })
+  })
+  if (condition.charging && !condition.battery)
+    problems.push({
+      path: `${base}.charging`,
+      message: 'nothing charges with the battery disconnected: expected "battery": true or "charging": false',
+    })
+  if (condition.added.length === 0) return problems
   const points = new Set(['chassis', ...pointsOf(circuit)])
   condition.added.forEach((lead, index) => {
     for (const side of ['from', 'to'] as const)
@@ -46,6 +57,11 @@ export function checkCondition(circuit: Circuit, condition: Condition, base: str
           path: `${base}.added.${index}.${side}`,
           message: `point ${lead[side]} does not exist`,
         })
+    if (lead.from === lead.to)
+      problems.push({
+        path: `${base}.added.${index}.to`,
+        message: `both ends of the lead are on ${lead.from}`,
+      })
   })
   return problems
 }

@@ -5,6 +5,9 @@ import type { Prediction } from './prediction'
 import { loadThreshold, type ReadingScope } from './reading-scope'
 import { accuracyOf } from './tolerance-rule'
 
+/** Least error of any meter: volt, ohm and ampere. */
+const finest = 1e-6
+
 /** One reading in two hundred is taken at the wrong place or in the wrong condition (a guess). */
 export const slipShare = 0.005
 
@@ -58,7 +61,8 @@ export function likelihoodOf(
   const value = reading.value
   if (typeof value !== 'number') return () => slip
   const { percent, floor } = accuracyOf(reading)
-  const limit = (percent / 100) * Math.abs(value) + floor
+  // No meter is exact: a display ends somewhere.
+  const limit = Math.max(finest, (percent / 100) * Math.abs(value) + floor)
   const sigma = Math.sqrt((limit / 2) ** 2 + ((a.spread + b.spread) / 2) ** 2)
   if (a.battery === 0 && b.battery === 0) {
     const likelihood = kept * smearedDensity(value, a.fixed, b.fixed, sigma) + slip

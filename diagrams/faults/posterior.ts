@@ -57,7 +57,9 @@ function logPriors(model: FaultModel, kind: PriorKind, odds?: Odds): Float64Arra
   })
   let total = 0
   for (const list of weights) for (const weight of list) total += weight
-  return weights.map((list) => list.map((weight) => Math.log(((1 - noFaultPrior) * weight) / total)))
+  // Where no fault shows enough to count, no fault holds all.
+  const share = total > 0 ? (1 - noFaultPrior) / total : 0
+  return weights.map((list) => list.map((weight) => Math.log(share * weight)))
 }
 
 /** Probability per site, for every site of the model. */

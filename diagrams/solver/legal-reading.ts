@@ -2,7 +2,7 @@ import type { Problem } from '../document/check-circuit'
 import type { Circuit } from '../document/circuit-schema'
 import { checkCondition, conditionKey } from '../document/condition'
 import type { Condition } from '../document/condition-schema'
-import { parsePoint, pointName } from '../document/points'
+import { nodeName, parsePoint, pointName } from '../document/points'
 import { hasContact, portsOf } from '../document/ports'
 import type { Probe } from '../document/reading-schema'
 import { leadBelowOhms, mostLeadAmps } from './added-lead'
@@ -64,6 +64,12 @@ const restByCircuit = new WeakMap<Circuit, Map<string, Problem | null>>()
 function refuseProbe(circuit: Circuit, probe: Probe): Problem | null {
   const wrong = checkCondition(circuit, probe.condition, 'condition')[0]
   if (wrong) return wrong
+  for (const [index, lead] of probe.condition.added.entries())
+    for (const side of ['from', 'to'] as const) {
+      const path = `condition.added.${index}.${side}`
+      const problem = refusePoint(circuit, lead[side], path, probe.condition.unplugged)
+      if (problem) return problem
+    }
   switch (probe.kind) {
     case 'amps':
       return circuit.wires.some((wire) => wire.id === probe.wire)
@@ -77,9 +83,14 @@ function refuseProbe(circuit: Circuit, probe: Probe): Problem | null {
       const point = parsePoint(probe.pin)
       const node = circuit.nodes.find((n) => n.id === point?.node)
       const pin = node?.kind === 'module' ? node.pins.find((p) => p.pin === point?.port) : undefined
-      return pin?.circuit.type === 'pull-up' || pin?.circuit.type === 'pull-down'
+      if (pin?.circuit.type !== 'pull-up' && pin?.circuit.type !== 'pull-down')
+        return { path: 'pin', message: `"${probe.pin}" is not an input of a module` }
+      return probe.condition.battery
         ? null
-        : { path: 'pin', message: `"${probe.pin}" is not an input of a module` }
+        : {
+            path: 'condition.battery',
+            message: `${node ? nodeName(node) : probe.pin} reports nothing with the battery disconnected`,
+          }
     }
     case 'volts':
     case 'ohms':

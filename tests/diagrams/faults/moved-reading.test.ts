@@ -6,7 +6,6 @@ import { sitesOf } from '@/diagrams/document/sites'
 import { evaluate } from '@/diagrams/evaluate'
 import { problemsOf } from '@/diagrams/document/open-circuit'
 import { clearances } from '@/diagrams/faults/clearance'
-import { fitsAll } from '@/diagrams/faults/evidence'
 import { faultModelOf } from '@/diagrams/faults/fault-model'
 import { weighMoved } from '@/diagrams/faults/moved-evidence'
 import { swings } from '@/diagrams/faults/moved-reading'
@@ -161,7 +160,7 @@ describe('seeded runs of faults that come and go', () => {
           const readings = readIntermittent(circuit, vehicle, fault, random)
           if (!readings.some((reading) => swings(reading, scope))) continue
           const evidence = weighMoved(model, readings)
-          if (!evidence.cells.flat().some((cell) => fitsAll(evidence, cell, readings))) cannotBe++
+          if (!model.hypotheses.some(({ cells }, h) => cells.some((_, c) => evidence.fits(h, c)))) cannotBe++
           const probabilities = siteProbabilities(model, posteriorOf(model, evidence, 'trade'))
           const own = probabilities.get(site.id) ?? 0
           ranks.push([...probabilities.values()].filter((other) => other > own).length)
