@@ -51,6 +51,17 @@ export class Sweep {
     }
     return sum
   }
+
+  /** One branch's resistance swept over so many values: volts at the points. */
+  sweepOne(branch: number, values: number, points: readonly number[]): number {
+    let sum = 0
+    const given = this.caseOf(this.alterations[branch % this.network.branches.length]!)
+    for (let i = 0; i < values; i++) {
+      const solved = given.solve(this.states, 0.5 + (i * 1e5) / values, 1)
+      for (const point of points) sum += voltsAt(solved, point)
+    }
+    return sum
+  }
 }
 
 /** Every branch with a resistance in series, every wire's middle shorted to chassis. */
