@@ -15,12 +15,29 @@ const mistaken = 0.3
 /** Where the module's own view says nothing of a listed place, the list itself is a softer hint. */
 const unseen = 0.1
 
+const kept = new WeakMap<FaultModel, Map<string, CodeEvidence | null>>()
+const mostKept = 20
+
 /**
  * Codes as evidence through the module's own view: a fault sets a code when it changes one of the module's pins, in
  * some driving condition, as a fault of the places listed with the code does and as its failure type names.
  * Evidence, not a filter: nothing is cleared by a code. Null when none of the codes says anything of this circuit.
+ * Kept, since a trace asks again with every reading.
  */
 export function codeEvidence(model: FaultModel, codes: readonly string[]): CodeEvidence | null {
+  if (codes.length === 0) return null
+  let known = kept.get(model)
+  if (!known) kept.set(model, (known = new Map()))
+  const key = codes.join()
+  let found = known.get(key)
+  if (found === undefined) {
+    if (known.size >= mostKept) known.clear()
+    known.set(key, (found = weighCodes(model, codes)))
+  }
+  return found
+}
+
+function weighCodes(model: FaultModel, codes: readonly string[]): CodeEvidence | null {
   const told = [...new Set(codes)].flatMap((text) => {
     const code = parseTroubleCode(text)
     const entries = code ? entriesOf(model.circuit, code) : []
