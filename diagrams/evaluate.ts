@@ -8,8 +8,7 @@ import { misfitOf } from './faults/misfit'
 import { weighMoved } from './faults/moved-evidence'
 import { swings } from './faults/moved-reading'
 import { comesAndGoesSentence, sayMoved } from './faults/moved-sentence'
-import { areTwoFaults } from './faults/pair-odds'
-import { searchPairs } from './faults/pair-search'
+import { twoFaultsIn } from './faults/pair-odds'
 import { posteriorOf, siteProbabilities, type Posterior } from './faults/posterior'
 import { allReports } from './faults/report-evidence'
 import { judgeReadings } from './faults/reading-sentence'
@@ -20,13 +19,11 @@ import { runToEnd, type Step, type Steps } from './faults/steps'
 import { modeWeight } from './faults/priors'
 import { sitesOf, type Mode } from './document/sites'
 import { nextReadings } from './next-readings'
-import { planSteps, type Plan } from './planner/plan-next'
+import { planSteps, type Plan, worthwhileBits } from './planner/plan-next'
 import { answerTwoFaults } from './two-faults'
 
 /** One site, or one group that cannot be told apart, is located when it holds this much. */
 const locatedFrom = 0.95
-/** With nothing wrong, a reading worth less than this is not worth taking. */
-const worthwhileBits = 0.05
 
 /**
  * The evaluator: from a circuit and what was read to where the fault lies, what is proved good, and
@@ -55,11 +52,10 @@ export function* evaluateSteps(request: EvaluationRequest): Steps<Answer> {
   const told = allReports([codeEvidence(model, codes), complaint])
   const posteriorFor = (evidence: Evidence) => posteriorOf(model, evidence, priors, told, odds)
   const misfit = misfitOf(model, readings, full, posteriorFor, weigh)
-  if (misfit && !misfit.above && !comesAndGoes) {
+  if (misfit && !comesAndGoes) {
     const weightOf = (site: string, mode: Mode) => modeWeight(circuit, site, mode, priors, odds)
-    yield weighed
-    const search = searchPairs(model, full, readings, weightOf, told)
-    if (areTwoFaults(misfit, search)) return answerTwoFaults(search, full, readings)
+    const pairs = yield* twoFaultsIn(model, readings, full, misfit, weightOf, told)
+    if (pairs) return answerTwoFaults(pairs, full, readings)
   }
   const aside = misfit?.reading ?? null
   const evidence = aside === null ? full : weigh(model, readings, new Set([aside]))

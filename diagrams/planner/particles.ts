@@ -17,7 +17,7 @@ export const noFaultUnit = ''
 /** Hypotheses under this probability are left out of planning. */
 const least = 2e-5
 /** Severities that all hypotheses share, about: the fewer are left, the more finely each is looked at. */
-const shared = 240
+const shared = 160
 /** Of one hypothesis at most. */
 const mostMarks = 12
 /** Below this one severity is enough. */

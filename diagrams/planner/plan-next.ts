@@ -1,5 +1,6 @@
 import type { Circuit, ControlsSetting } from '../document/circuit-schema'
-import type { Reading } from '../document/reading-schema'
+import type { Condition } from '../document/condition-schema'
+import type { Probe, Reading } from '../document/reading-schema'
 import type { FaultModel } from '../faults/fault-model'
 import type { Posterior } from '../faults/posterior'
 import { runToEnd, type Steps } from '../faults/steps'
@@ -7,8 +8,8 @@ import { readingsWithLeads } from './added-leads'
 import { groupsAlike } from './alike'
 import { candidateReadings, mostConditions, type CandidateSet } from './candidates'
 import { chooseNext } from './choose-next'
-import { particlesOf, type Particle } from './particles'
-import { Scales, type PlannedReading } from './scales'
+import { particlesOf, pilotOf, type Particle } from './particles'
+import { Scales, type PlannedReading, type WeighedReading } from './scales'
 import { wideReadings } from './wide-readings'
 
 export type { PlannedReading } from './scales'
@@ -26,10 +27,15 @@ export interface Plan {
 /** Particles times conditions that one plan weighs, about, and the conditions it always weighs. */
 const weighings = 6000
 const leastConditions = 12
-/** Leads are thought of when this few particles are left: before that, plain readings split better. */
-const leadsUpTo = 200
+/** When this few places are in question leads are thought of, and every condition: before that, plain readings split better. */
+const fewPlaces = 24
+/** Below this a place is hardly in question. */
+const leastInQuestion = 0.003
 /** A group that holds this much may soon be called the place. */
 const groupFrom = 0.5
+/** A reading worth less than this need not be taken; then the search is made wider round this many places. */
+export const worthwhileBits = 0.05
+const likeliest = 4
 
 /**
  * Weighs every candidate reading by the drop in entropy over sites it is expected to bring, divided
@@ -54,13 +60,17 @@ export function* planSteps(
     .filter((site) => site !== '')
     .toSorted((a, b) => bySite.get(b)! - bySite.get(a)!)
   const alike = groupsAlike(suspects, bySite)
-  const scales = new Scales(model, particles, readings, (bins) => alike.see(bins, particles))
+  const pilot = pilotOf(particles, suspects) ?? particles
+  const scales = new Scales(model, pilot, readings, (bins) => alike.see(bins, pilot))
   const present = scales.workplace.condition
 
   // While much is in question the plain conditions are enough to split it; later every one counts.
-  const limit = Math.min(mostConditions, Math.max(leastConditions, Math.round(weighings / particles.length)))
+  const inQuestion = suspects.filter((site) => bySite.get(site)! >= leastInQuestion).length
+  const few = inQuestion <= fewPlaces
+  const weighed = Math.max(leastConditions, Math.round(weighings / pilot.length))
+  const limit = few ? mostConditions : Math.min(mostConditions, weighed)
   yield* weighAll(scales, candidateReadings(circuit, suspects, present, { limit }))
-  if (particles.length <= leadsUpTo) yield* weighAll(scales, readingsWithLeads(circuit, suspects, present))
+  if (few) yield* weighAll(scales, readingsWithLeads(circuit, suspects, present))
   // Where all is read that tells suspects apart, the same leads with the controls moved count as a second look.
   if (scales.found.length === 0 && readings.length > 0)
     yield* weighAll(
@@ -71,12 +81,45 @@ export function* planSteps(
   const massOf = (group: readonly string[]) => group.reduce((sum, site) => sum + bySite.get(site)!, 0)
   const heavy = alike.groups().filter((group) => massOf(group) >= groupFrom)
   for (const group of heavy) yield* weighAll(scales, wideReadings(circuit, group))
+  // "No reading is worth taking any more" is said of all readings, not of the plain ones.
+  if (scales.found.every(({ bits }) => bits < worthwhileBits))
+    yield* weighAll(scales, wideReadings(circuit, suspects.slice(0, likeliest)))
+  const found =
+    pilot === particles ? scales.found : yield* lookClosely(model, particles, readings, scales.found)
   return {
     particles,
-    next: chooseNext(circuit, scales.found),
-    mostBits: Math.max(0, ...scales.found.map(({ bits }) => bits)),
+    next: chooseNext(circuit, found),
+    mostBits: Math.max(0, ...found.map(({ bits }) => bits)),
     inseparable: alike.groups(),
   }
+}
+
+/** Readings that a first look is followed up by: the best by bits per minute and the best by bits. */
+const looked = 20
+
+/** Weighs the most promising readings of a first look once more, by all particles. */
+function* lookClosely(
+  model: FaultModel,
+  particles: readonly Particle[],
+  readings: readonly Reading[],
+  found: readonly WeighedReading[],
+): Steps<WeighedReading[]> {
+  const best = new Set([
+    ...found.toSorted((a, b) => b.rate - a.rate).slice(0, looked),
+    ...found.toSorted((a, b) => b.bits - a.bits).slice(0, looked),
+  ])
+  const byCondition = new Map<Condition, Probe[]>()
+  for (const { probe } of best) {
+    const probes = byCondition.get(probe.condition)
+    if (probes) probes.push(probe)
+    else byCondition.set(probe.condition, [probe])
+  }
+  const scales = new Scales(model, particles, readings)
+  yield* weighAll(
+    scales,
+    [...byCondition].map(([condition, probes]) => ({ condition, probes })),
+  )
+  return scales.found
 }
 
 function* weighAll(scales: Scales, sets: readonly CandidateSet[]): Steps<void> {
