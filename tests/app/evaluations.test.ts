@@ -1,7 +1,7 @@
 import { monitorEventLoopDelay } from 'node:perf_hooks'
 import { beforeAll, describe, expect, it } from 'vitest'
 import type { Tables } from '@/db/tables/database'
-import { evaluateApart } from '@/lib/server/evaluator/evaluate-apart'
+import { evaluateApart, evaluatorReady } from '@/lib/server/evaluator/evaluate-apart'
 import { evaluateRequest } from '@/lib/server/use-cases/evaluations/evaluate-request'
 import { withDatabase } from '../support/database'
 import { randomCircuit } from '../support/random-circuit'
@@ -38,6 +38,44 @@ describe('the evaluator behind the address', () => {
     expect(delay.max / 1e6).toBeLessThan(700)
     const next = await call(who, 'POST', 'evaluations', exampleRequest())
     expect([next.status, next.body.outcome]).toEqual([200, 'located'])
+  })
+
+  it('keeps what it knows of circuits when it gives a question up', async () => {
+    const before = await evaluatorReady()
+    const result = await evaluateRequest(
+      who.context,
+      { circuit: randomCircuit(4, 60) },
+      { milliseconds: 500 },
+    )
+    expect(result.ok ? '' : result.failure.code).toBe('evaluation-too-long')
+    expect(await evaluatorReady()).toBe(before)
+  })
+
+  it('leaves a question whose asker has gone, working on it or still waiting, and answers the next', async () => {
+    const [first, second] = [new AbortController(), new AbortController()]
+    const replies = [
+      evaluateApart({ circuit: randomCircuit(5, 60) }, 30_000, first.signal),
+      evaluateApart({ circuit: randomCircuit(6, 60) }, 30_000, second.signal),
+      evaluateApart(exampleRequest(), 30_000),
+    ]
+    await new Promise((resolve) => setTimeout(resolve, 300))
+    const started = performance.now()
+    second.abort()
+    first.abort()
+    const [working, waiting, answered] = await Promise.all(replies)
+    expect([working, waiting]).toEqual(['gone', 'gone'])
+    expect(answered).toMatchObject({ ok: true, value: { outcome: 'located' } })
+    expect(performance.now() - started).toBeLessThan(10_000)
+  })
+
+  it('starts a thread anew that has died over a question, for the next one', async () => {
+    const asked = evaluateApart({ circuit: randomCircuit(7, 60) }, 30_000)
+    const thread = await evaluatorReady()
+    await new Promise((resolve) => setTimeout(resolve, 200))
+    await Promise.all([expect(asked).rejects.toThrow(/thread ended/), thread.terminate()])
+    const next = await call(who, 'POST', 'evaluations', exampleRequest())
+    expect([next.status, next.body.outcome]).toEqual([200, 'located'])
+    expect(await evaluatorReady()).not.toBe(thread)
   })
 
   it('answers questions asked at once in their order, and turns away what it cannot keep waiting', async () => {

@@ -1,8 +1,9 @@
 import type { Worker } from 'node:worker_threads'
 import type { Opened } from '@/diagrams/document/open-circuit'
 import type { Answer } from '@/diagrams/faults/answer'
-import { nextMessage, TooLong } from './next-message'
+import { nextMessage } from './next-message'
 import { sourceThread } from './source-thread'
+import { answerOf, Deaf, type GivenUp } from './thread-answer'
 
 export type Reply = Opened<Answer>
 
@@ -19,15 +20,17 @@ const evaluator = (store.halfsplitEvaluator ??= { thread: null, waiting: 0, last
 
 /**
  * Evaluates in a thread of its own, so that arithmetic, which grows fast with the circuit, never holds up
- * anybody's page. One question after the other; one that takes longer than it may is given up, with its thread.
+ * anybody's page. One question after the other; one that takes longer than it may is given up, and so is one that nobody
+ * waits for any more. What the thread knows of circuits is kept, unless it no longer listens.
  */
 export async function evaluateApart(
   input: unknown,
   milliseconds: number,
-): Promise<Reply | 'too-long' | 'busy'> {
+  signal?: AbortSignal,
+): Promise<Reply | GivenUp | 'busy'> {
   if (evaluator.waiting >= mostWaiting) return 'busy'
   evaluator.waiting++
-  const turn = evaluator.last.then(() => answerTo(input, milliseconds))
+  const turn = evaluator.last.then(() => answerTo(input, milliseconds, signal))
   evaluator.last = turn.catch(() => {})
   try {
     return await turn
@@ -41,17 +44,21 @@ export function evaluatorReady(): Promise<Worker> {
   return (evaluator.thread ??= startThread())
 }
 
-async function answerTo(input: unknown, milliseconds: number): Promise<Reply | 'too-long'> {
+async function answerTo(
+  input: unknown,
+  milliseconds: number,
+  signal: AbortSignal | undefined,
+): Promise<Reply | GivenUp> {
+  if (signal?.aborted) return 'gone'
   const thread = await evaluatorReady()
-  thread.postMessage(input)
   try {
-    return (await nextMessage(thread, milliseconds)) as Reply
+    return await answerOf(thread, input, milliseconds, signal)
   } catch (error) {
     evaluator.thread = null
     await thread.terminate()
+    if (error instanceof Deaf) return error.why
     // Running out of memory is running out of room all the same: the circuit asks for too much.
-    if (error instanceof TooLong || (error as { code?: unknown }).code === 'ERR_WORKER_OUT_OF_MEMORY')
-      return 'too-long'
+    if ((error as { code?: unknown }).code === 'ERR_WORKER_OUT_OF_MEMORY') return 'too-long'
     throw error
   }
 }

@@ -13,6 +13,8 @@ interface Parts {
   query: Record<string, string>
   /** Parsed JSON, or undefined when the route takes none. */
   body: unknown
+  /** Fires when whoever asked has gone. */
+  signal: AbortSignal
 }
 
 interface Spec<C, T> {
@@ -53,6 +55,7 @@ function serve<C, T>(spec: Spec<C, T>, contextOf: (request: Request) => Promise<
         params: await segment.params,
         query: Object.fromEntries(new URL(request.url).searchParams),
         body: body.value,
+        signal: request.signal,
       })
     })
     if (!result.ok) return answerFailure(result.failure)

@@ -14,12 +14,13 @@ export const mostEvaluationMilliseconds = 30_000
 export async function evaluateRequest(
   context: Context,
   input: unknown,
-  { milliseconds = mostEvaluationMilliseconds } = {},
+  { milliseconds = mostEvaluationMilliseconds, signal }: { milliseconds?: number; signal?: AbortSignal } = {},
 ): Promise<Result<Answer>> {
   if (!can(context.actor.role, 'evaluate')) return fail('not-allowed')
-  const reply = await evaluateApart(await withOdds(context, input), milliseconds)
+  const reply = await evaluateApart(await withOdds(context, input), milliseconds, signal)
   if (reply === 'too-long') return fail('evaluation-too-long')
-  if (reply === 'busy') return fail('evaluator-busy')
+  // Whoever has gone reads no answer.
+  if (reply === 'busy' || reply === 'gone') return fail('evaluator-busy')
   return opened(reply)
 }
 

@@ -48,7 +48,7 @@ function workOut({ key, request }: ProgressQuestion): Promise<void> {
   if (!work) {
     work = evaluateApart(request, mostMilliseconds)
       .then((reply) => {
-        if (reply === 'busy') return
+        if (reply === 'busy' || reply === 'gone') return
         remember(key, reply !== 'too-long' && reply.ok ? progressOf(reply.value) : null)
       })
       .catch((error: unknown) => log.error(error, 'the evaluator failed'))
