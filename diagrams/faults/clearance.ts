@@ -1,5 +1,5 @@
 import type { Reading } from '../document/reading-schema'
-import { fitsAll, type CellEvidence, type Evidence } from './evidence'
+import type { Evidence, Included } from './evidence'
 import type { FaultModel } from './fault-model'
 
 export interface Clearance {
@@ -19,20 +19,32 @@ export function clearances(
   readings: readonly Reading[],
   sites: readonly string[],
 ): Map<string, Clearance> {
-  const cellsOf = new Map<string, CellEvidence[]>(sites.map((site) => [site, []]))
-  model.hypotheses.forEach((hypothesis, h) => cellsOf.get(hypothesis.site)?.push(...evidence.cells[h]!))
+  const cellsOf = new Map<string, [h: number, c: number][]>(sites.map((site) => [site, []]))
+  model.hypotheses.forEach(({ site, cells }, h) => {
+    const list = cellsOf.get(site)
+    for (let c = 0; list && c < cells.length; c++) list.push([h, c])
+  })
   return new Map(sites.map((site) => [site, clearanceOf(evidence, cellsOf.get(site)!, readings)]))
 }
 
 function clearanceOf(
   evidence: Evidence,
-  cells: readonly CellEvidence[],
+  cells: readonly (readonly [h: number, c: number])[],
   readings: readonly Reading[],
 ): Clearance {
-  const clearedWith = (included: (index: number) => boolean) =>
-    cells.every((cell) => !fitsAll(evidence, cell, readings, included))
+  // Cells that fitted once are asked first: what fits many readings often fits fewer, too.
+  let last = 0
+  const clearedWith = (included?: Included) => {
+    for (let i = 0; i < cells.length; i++) {
+      const at = (last + i) % cells.length
+      if (!evidence.fits(...cells[at]!, included)) continue
+      last = at
+      return false
+    }
+    return true
+  }
   // Without any reading nothing is proved, also not what could never show.
-  if (readings.length === 0 || !clearedWith(() => true)) return { cleared: false, firm: false, clearedBy: [] }
+  if (readings.length === 0 || !clearedWith()) return { cleared: false, firm: false, clearedBy: [] }
   const firm = readings.every((_, out) => clearedWith((r) => r !== out))
   const kept = new Set(readings.keys())
   for (let r = readings.length - 1; r >= 0; r--) {

@@ -3,16 +3,23 @@ import { conditionKey } from '../document/condition'
 import type { Probe, Reading } from '../document/reading-schema'
 import { buildNetwork } from '../solver/build-network'
 import type { Network } from '../solver/network'
-import type { Study } from '../solver/study'
+import { Study } from '../solver/study'
 import { hypothesesOf, type Hypothesis } from './hypothesis'
-import { predictAll, studyFor, type PredictionTable } from './prediction-table'
+import { cellStates, type CellStates } from './cell-states'
+import { judgeReading, type JudgedReading } from './judged-reading'
+import { predictAll, type PredictionTable } from './prediction-table'
 import { runToEnd, type Steps } from './steps'
 
 /** A circuit with all its hypotheses, and what each foretells for the readings asked so far. */
 export class FaultModel {
   readonly network: Network
   readonly hypotheses: readonly Hypothesis[]
+  /** Cells numbered through: 0 is the good circuit, then those of each hypothesis from here. */
+  readonly firstCell: Int32Array
+  readonly cellCount: number
   private readonly tables = new Map<string, PredictionTable>()
+  private readonly statesOf = new WeakMap<Study, CellStates>()
+  private readonly judgedBy = new Map<string, JudgedReading>()
   private readonly studies = new Map<string, Study>()
 
   constructor(
@@ -21,6 +28,9 @@ export class FaultModel {
   ) {
     this.network = parts?.network ?? buildNetwork(circuit)
     this.hypotheses = parts?.hypotheses ?? runToEnd(hypothesesOf(circuit, this.network))
+    let next = 1
+    this.firstCell = Int32Array.from(this.hypotheses, ({ cells }) => (next += cells.length) - cells.length)
+    this.cellCount = next
   }
 
   /** The same circuit, suspecting one site only. */
@@ -37,8 +47,26 @@ export class FaultModel {
     if (!found) {
       // Bounded memory: a trace has tens of readings, not thousands.
       if (this.tables.size > 300) this.tables.clear()
-      this.tables.set(key, (found = predictAll(this.study(reading), this.hypotheses, reading)))
+      const counts = this.hypotheses.map(({ cells }) => cells.length)
+      this.tables.set(key, (found = predictAll(this.states(this.study(reading)), counts, reading)))
     }
+    return found
+  }
+
+  /** One reading judged against every cell; kept, since a trace asks again with every further reading. */
+  judged(reading: Reading): JudgedReading {
+    const key = JSON.stringify({ ...reading, id: '' })
+    let found = this.judgedBy.get(key)
+    if (!found) {
+      if (this.judgedBy.size > 300) this.judgedBy.clear()
+      this.judgedBy.set(key, (found = judgeReading(this, reading)))
+    }
+    return found
+  }
+
+  private states(study: Study): CellStates {
+    let found = this.statesOf.get(study)
+    if (!found) this.statesOf.set(study, (found = cellStates(study, this.hypotheses)))
     return found
   }
 
@@ -51,6 +79,12 @@ export class FaultModel {
     }
     return found
   }
+}
+
+/** A study for a probe's condition, with the leads it adds. */
+function studyFor(network: Network, { condition }: Probe): Study {
+  const { added } = condition
+  return new Study(added.length === 0 ? network : buildNetwork(network.circuit, added), condition)
 }
 
 /** The same key for the same measurement in an equal condition. */

@@ -112,20 +112,13 @@ function variants(
     if (certain) entry.certain[index] = true
   }
   const possible = (severity: number) => possibleBlown(network, studies, plain, severity, cache)
-  const alwaysSame = (): string[] | null => {
-    if (!isShort(kind.mode) || network.fuses.length === 0) return []
-    // The milder the short, the less a fuse carries: what the hardest and the mildest both blow for
-    // certain is blown throughout.
-    const [hardest, mildest] = [possible(grid[0]!), possible(grid.at(-1)!)]
-    const key = (sets: string[][]) => sets.map((set) => set.toSorted().join(',')).join('|')
-    return hardest.length === 1 && key(hardest) === key(mildest) ? hardest[0]! : null
-  }
-  const same = alwaysSame()
-  grid.forEach((severity, index) => {
-    if (same) return mark(index, same, true)
-    mark(index, blownFuses(network, studies, plain, severity, cache), true)
-    for (const blows of possible(severity)) mark(index, blows, false)
-  })
+  if (!isShort(kind.mode) || network.fuses.length === 0) grid.forEach((_, index) => mark(index, [], true))
+  else
+    blownOver(grid, possible).forEach((sets, index) => {
+      const certain = sets.length === 1 ? sets[0]! : blownFuses(network, studies, plain, grid[index]!, cache)
+      mark(index, certain, true)
+      for (const blows of sets) mark(index, blows, false)
+    })
   return [...found.values()].flatMap(({ blows, certain, possible }) => {
     const cases = casesAfter(studies, plain, blows, cache)
     const moved = movesOver(
@@ -146,6 +139,29 @@ function variants(
     }
     return cells.length > 0 ? [{ blows, cells }] : []
   })
+}
+
+/**
+ * The sets of fuses that a short may blow at each severity. The milder the short, the less a fuse carries: what the
+ * ends of a stretch both blow for certain is blown between them.
+ */
+function blownOver(grid: readonly number[], possible: (severity: number) => string[][]): string[][][] {
+  const found: (string[][] | undefined)[] = grid.map(() => undefined)
+  const at = (index: number) => (found[index] ??= possible(grid[index]!))
+  const key = (sets: string[][]) => sets.map((set) => set.toSorted().join(',')).join('|')
+  const between = (from: number, to: number) => {
+    if (to - from < 2) return
+    if (at(from).length === 1 && key(at(from)) === key(at(to))) {
+      found.fill(at(from), from + 1, to)
+      return
+    }
+    const middle = (from + to) >> 1
+    at(middle)
+    between(from, middle)
+    between(middle, to)
+  }
+  between(0, grid.length - 1)
+  return grid.map((_, index) => at(index))
 }
 
 /**

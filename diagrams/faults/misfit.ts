@@ -1,5 +1,5 @@
 import type { Reading } from '../document/reading-schema'
-import { fitsAll, weighReadings, type Evidence } from './evidence'
+import { weighReadings, type Evidence, type Included } from './evidence'
 import type { FaultModel } from './fault-model'
 import { highestVolts } from './highest-volts'
 import { slipShare } from './likelihood'
@@ -35,11 +35,11 @@ export function misfitOf(
 ): Misfit | null {
   const above = readings.findIndex((reading) => isAboveSources(model, reading))
   if (above >= 0) return { reading: above, above: true, logSlip: -Infinity }
-  const all = [evidence.good, ...evidence.cells.flat()]
-  if (readings.length === 0 || all.some((cell) => fitsAll(evidence, cell, readings))) return null
-  const mends = readings.map((_, out) =>
-    all.some((cell) => fitsAll(evidence, cell, readings, (r) => r !== out)),
-  )
+  const someFits = (included?: Included) =>
+    evidence.fits(-1, 0, included) ||
+    model.hypotheses.some(({ cells }, h) => cells.some((_, c) => evidence.fits(h, c, included)))
+  if (readings.length === 0 || someFits()) return null
+  const mends = readings.map((_, out) => someFits((r) => r !== out))
   const mended = mends.includes(true)
   const logs = readings.map((reading, out) => {
     if (mended && !mends[out]) return -Infinity

@@ -8,6 +8,7 @@ import { candidatePairs, type CandidatePair } from './pair-candidates'
 import type { PairMember, WeightOf } from './pair-member'
 import { PairSolver } from './pair-solver'
 import type { ReportEvidence } from './report-evidence'
+import type { Step, Steps } from './steps'
 import { noFaultPrior } from './priors'
 
 /** Of vehicles with one fault in a circuit, about one in fifty has another that has nothing to do with it (a guess). */
@@ -41,19 +42,20 @@ const negligible = 8
  * is sound, since a reading lies between those of the box's corners; one that can give all is halved until it is
  * as fine as the meter. Bounded by the work done, not by the clock.
  */
-export function searchPairs(
+export function* searchPairs(
   model: FaultModel,
   evidence: Evidence,
   readings: readonly Reading[],
   weightOf: WeightOf,
   told: ReportEvidence | null = null,
-): PairSearch {
+): Steps<PairSearch> {
   const solver = new PairSolver(model)
   const asked = askedReadings(model, evidence, readings)
   const candidates = candidatePairs(model, evidence, readings, weightOf, mostPairs)
   let open: PairBox[] = []
-  for (const candidate of candidates) {
+  for (const [c, candidate] of candidates.entries()) {
     if (solver.spent > searchPart * work) break
+    if (c % portion === 0) yield stepOf(solver)
     for (const box of wholeBoxes(solver, candidate, (member) => reportedOf(member, told)))
       if (mayGive(solver, box, asked)) open.push(box)
   }
@@ -61,11 +63,13 @@ export function searchPairs(
   let weighed = weigh(solver, open, readings, asked)
   // Level by level: a coarse box says too little of how likely it is to be left behind for a fine one.
   while (weighed.length > 0) {
+    yield stepOf(solver)
     open = []
     const best = Math.max(...found.map((box) => box.log), ...weighed.map((box) => box.log))
     const spread = weighed.map((box) => ({ box, by: spreadOf(solver, box, asked) }))
     spread.sort((x, y) => y.box.log + y.by.gain - x.box.log - x.by.gain)
-    for (const { box, by } of spread) {
+    for (const [b, { box, by }] of spread.entries()) {
+      if (b % portion === portion - 1) yield stepOf(solver)
       const matters = box.log + by.gain > best - negligible
       const halves = matters && solver.spent < work ? halvesOf(box, by) : null
       if (halves) open.push(...halves.filter((half) => mayGive(solver, half, asked)))
@@ -76,6 +80,15 @@ export function searchPairs(
   found.sort((x, y) => y.log - x.log)
   return { solver, boxes: found, logEvidence: logSum(found.map((box) => box.log)) }
 }
+
+/** Pairs or boxes between two looks at whether something newer is asked. */
+const portion = 16
+
+const stepOf = ({ spent }: PairSolver): Step => ({
+  stage: 'readings',
+  done: Math.min(spent, work),
+  of: work,
+})
 
 /** The boxes that give all readings together, with how well. */
 function weigh(

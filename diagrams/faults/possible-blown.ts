@@ -1,11 +1,12 @@
 import type { Alteration } from '../solver/alteration'
 import { casesAfter } from '../solver/blown-fuses'
-import { branchAmps, type Case, type Settled } from '../solver/case'
+import type { Base } from '../solver/base'
+import { fuseAmps, untouched, type Case, type Settled } from '../solver/case'
 import { blowsAtRatingTimes } from '../solver/constants'
-import type { FuseState, Network } from '../solver/network'
+import type { Network } from '../solver/network'
 import type { Study } from '../solver/study'
 import { restingRange } from './battery-range'
-import { predictAmps } from './prediction'
+import { predictAmps, type Prediction } from './prediction'
 import { eager, isCertain, reluctant } from './reluctance'
 
 /** The battery alone moves a current by less than this; far from the limit nothing else matters. */
@@ -58,11 +59,11 @@ function overloads(network: Network, cases: readonly Case[], severity: number): 
   const byDoubt = [none(), none(), none()] as const
   const note = (loads: Load[], given: Case, states: readonly Settled[]) => {
     for (const state of states)
-      network.fuses.forEach((fuse, i) => {
-        const load = loadOf(given, state, fuse)
+      for (let i = 0; i < network.fuses.length; i++) {
+        const load = loadOf(given, state, i)
         const { least, most } = loads[i]!
         loads[i] = { least: Math.max(least, load.least), most: Math.max(most, load.most) }
-      })
+      }
   }
   for (const given of cases) {
     const settled = given.settle(severity)
@@ -87,12 +88,34 @@ function overloads(network: Network, cases: readonly Case[], severity: number): 
   }))
 }
 
+/** A change of this many times its rating leaves what tolerances can do to a fuse nearly as it was. */
+const hardlyMoved = 0.02
+
 /** Where current divides between ways of nearly no resistance, 5 % of a part can be most of a fuse's current. */
-function loadOf(given: Case, state: Settled, fuse: FuseState): Load {
-  const times = Math.abs(branchAmps(given, state, fuse.branch)) / fuse.amps
+function loadOf(given: Case, state: Settled, index: number): Load {
+  const { branch, amps } = given.study.network.fuses[index]!
+  const carried = fuseAmps(given, state, index)
+  const times = Math.abs(carried) / amps
   if (times < farBelow * blowsAtRatingTimes || times > farAbove * blowsAtRatingTimes)
     return { least: times, most: times }
-  const { reachBattery, reachFixed } = predictAmps(given, state, fuse.branch)
-  const reach = (state.scale * reachBattery + reachFixed) / fuse.amps
+  const plain = reachInBase(given, state, index)
+  const moved = Math.abs(carried - (state.scale * plain.battery + plain.fixed)) / amps
+  const { reachBattery, reachFixed } = moved < hardlyMoved ? plain : predictAmps(given, state, branch)
+  const extra = moved < hardlyMoved ? moved : 0
+  const reach = (state.scale * reachBattery + reachFixed) / amps + extra
   return { least: battery.low * (times - reach), most: battery.high * (times + reach) }
+}
+
+const reaches = new WeakMap<Base, Map<number, Prediction>>()
+
+/** What a fuse carries in a network without the fault itself, and what tolerances do to that; most faults leave it so. */
+function reachInBase(given: Case, { located: { base }, states }: Settled, index: number): Prediction {
+  let byFuse = reaches.get(base)
+  if (!byFuse) reaches.set(base, (byFuse = new Map()))
+  let found = byFuse.get(index)
+  if (!found) {
+    const { branch } = given.study.network.fuses[index]!
+    byFuse.set(index, (found = predictAmps(given, untouched(base, states), branch)))
+  }
+  return found
 }

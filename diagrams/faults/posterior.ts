@@ -27,10 +27,10 @@ export function posteriorOf(
   const logs = model.hypotheses.map((hypothesis, h) =>
     Float64Array.from(
       hypothesis.cells,
-      (_, c) => logPrior[h]![c]! + evidence.cells[h]![c]!.logLikelihood + (codes ? codes.cells[h]![c]! : 0),
+      (_, c) => logPrior[h]![c]! + evidence.logs[h]![c]! + (codes ? codes.cells[h]![c]! : 0),
     ),
   )
-  const good = logNoFault + evidence.good.logLikelihood + (codes?.good ?? 0)
+  const good = logNoFault + evidence.goodLog + (codes?.good ?? 0)
   let most = good
   for (const list of logs) for (const log of list) most = Math.max(most, log)
   let sum = Math.exp(good - most)

@@ -1,13 +1,6 @@
 import type { Probe } from '../document/reading-schema'
-import { alterationKey, noAlteration, type Alteration } from '../solver/alteration'
-import { buildNetwork } from '../solver/build-network'
-import { Case, type Settled } from '../solver/case'
-import type { Network } from '../solver/network'
-import { stateKey, Study, type States } from '../solver/study'
-import { chargingRange, restingRange, weakRange, type ScaleRange } from './battery-range'
-import type { Cell, Hypothesis } from './hypothesis'
-import { predict, type Prediction } from './prediction'
-import { eager, isCertain, reluctant } from './reluctance'
+import type { CellStates } from './cell-states'
+import { Predictor, type Prediction } from './prediction'
 
 /** What one cell foretells for one reading. */
 export interface CellPrediction {
@@ -23,134 +16,99 @@ export interface CellPrediction {
   ends: readonly (readonly [Prediction, Prediction])[] | null
 }
 
-/** The good circuit as a hypothesis with one cell. */
-export const goodCell: Cell = { low: 0, high: 0, share: 1 }
+/** Predictions of one reading for the good circuit and every cell of every hypothesis, cells numbered through. */
+export class PredictionTable {
+  private made: CellPrediction[][] | undefined
 
-/** Predictions of one reading for the good circuit and every cell of every hypothesis. */
-export interface PredictionTable {
-  good: CellPrediction
+  constructor(
+    readonly states: CellStates,
+    /** Same order as the bounds of `states`. */
+    readonly bounds: readonly Prediction[],
+    /** Cells of each hypothesis. */
+    private readonly counts: readonly number[],
+  ) {}
+
+  get good(): CellPrediction {
+    return this.cell(0)
+  }
+
   /** Same order as the hypotheses and their cells. */
-  cells: CellPrediction[][]
-}
+  get cells(): CellPrediction[][] {
+    let next = 1
+    return (this.made ??= this.counts.map((count) => Array.from({ length: count }, () => this.cell(next++))))
+  }
 
-export function predictAll(study: Study, hypotheses: readonly Hypothesis[], probe: Probe): PredictionTable {
-  let given = new Case(study, noAlteration)
-  let key = alterationKey(noAlteration)
-  const caseOf = (alteration: Alteration): Case => {
-    const next = alterationKey(alteration)
-    // Neighbours in the list often change the same branch.
-    if (next !== key) given = new Case(study, alteration)
-    key = next
-    return given
-  }
-  return {
-    good: predictCells(given, [goodCell], probe)[0]!,
-    cells: hypotheses.map((hypothesis) =>
-      predictCells(caseOf(hypothesis.alteration(study.network)), hypothesis.cells, probe),
-    ),
-  }
-}
-
-function predictCells(given: Case, cells: readonly Cell[], probe: Probe): CellPrediction[] {
-  const range = given.alteration.weak
-    ? weakRange
-    : given.study.condition.charging
-      ? chargingRange
-      : restingRange
-  const ends = new Map<number, EndStates | null>()
-  const endOf = (severity: number) => {
-    let found = ends.get(severity)
-    if (found === undefined) ends.set(severity, (found = settleEnd(given, severity, range)))
-    return found
-  }
-  const known = new Map<string, Prediction>()
-  const predicted = (states: States, severity: number): Prediction => {
-    const key = `${severity} ${stateKey(states)}`
-    let found = known.get(key)
-    if (!found)
-      known.set(
-        key,
-        (found = predict(given, given.solve(states, severity, scaleFor(given, severity)), probe)),
+  private cell(cell: number): CellPrediction {
+    const { first, state, firstBound, bound, low, high, restless } = this.states
+    if (restless[cell]) return { bounds: null, ends: null }
+    const bounds = new Map<string, readonly Prediction[]>()
+    const ends: [Prediction, Prediction][] = []
+    for (let entry = first[cell]!; entry < first[cell + 1]!; entry++) {
+      const own = bound.subarray(firstBound[entry], firstBound[entry + 1])
+      bounds.set(
+        state[entry]!,
+        Array.from(own, (index) => this.bounds[index]!),
       )
-    return found
-  }
-  return cells.map(({ low, high }) => {
-    const [a, b] = [endOf(low), endOf(high)]
-    if (!a || !b) return { bounds: null, ends: null }
-    const states = new Map([...a.possible, ...b.possible])
-    const settled = new Map([
-      [stateKey(a.settled.states), a.settled.states],
-      [stateKey(b.settled.states), b.settled.states],
-    ])
-    return {
-      bounds: new Map(
-        [...states].map(([key, state]) => [
-          key,
-          high === low ? [predicted(state, low)] : [predicted(state, low), predicted(state, high)],
-        ]),
-      ),
-      ends: [...settled.values()].map((state) => [predicted(state, low), predicted(state, high)] as const),
+      if (low[entry]! >= 0) ends.push([this.bounds[low[entry]!]!, this.bounds[high[entry]!]!])
     }
-  })
+    return { bounds, ends }
+  }
+}
+
+/** A table of cells that were predicted one by one: the good circuit's, then each hypothesis's. */
+export function tableOf(
+  good: CellPrediction,
+  cells: readonly (readonly CellPrediction[])[],
+): PredictionTable {
+  const all = [good, ...cells.flat()]
+  const bounds: Prediction[] = []
+  const first = [0]
+  const state: string[] = []
+  const firstBound = [0]
+  const bound: number[] = []
+  const low: number[] = []
+  const high: number[] = []
+  for (const cell of all) {
+    for (const [key, own] of cell.bounds ?? []) {
+      state.push(key)
+      for (const prediction of own) bound.push(bounds.push(prediction) - 1)
+      firstBound.push(bound.length)
+      const ends = cell.ends?.find(([end]) => own.includes(end))
+      low.push(ends ? firstBound.at(-2)! + own.indexOf(ends[0]) : -1)
+      high.push(ends ? firstBound.at(-2)! + own.indexOf(ends[1]) : -1)
+    }
+    first.push(state.length)
+  }
+  return new PredictionTable(
+    {
+      bounds: [],
+      first: Int32Array.from(first),
+      state,
+      firstBound: Int32Array.from(firstBound),
+      bound: Int32Array.from(bound),
+      low: Int32Array.from(low),
+      high: Int32Array.from(high),
+      restless: Uint8Array.from(all, (cell) => (cell.bounds === null ? 1 : 0)),
+    },
+    bounds,
+    cells.map((list) => list.length),
+  )
+}
+
+export function predictAll(states: CellStates, counts: readonly number[], probe: Probe): PredictionTable {
+  const predictor = new Predictor(probe)
+  const bounds: Prediction[] = []
+  for (let i = 0; i < states.bounds.length; i++) {
+    const { given, severity, states: held } = states.bounds[i]!
+    bounds.push(predictor.predict(given, given.solve(held, severity, scaleFor(given, severity))))
+    // A fault's volts everywhere are wanted for as long as its severities are gone through, no longer.
+    if (states.bounds[i + 1]?.given !== given) given.releaseUnit()
+  }
+  return new PredictionTable(states, bounds, counts)
 }
 
 /** Predictions are linear in the battery, so a weak one is predicted for 12.6 V and scaled. */
-function scaleFor(given: Case, severity: number): number {
+function scaleFor(given: Bound['given'], severity: number): number {
   return given.alteration.weak ? 1 : given.scaleFor(severity)
 }
-
-interface EndStates {
-  settled: Settled
-  /** Every state the parts may be in, given battery and tolerances. */
-  possible: Map<string, States>
-}
-
-/** Parts that may be in either state are tried in every combination; with more of them nothing is foretold. */
-const mostDoubtful = 4
-
-function settleEnd(given: Case, severity: number, range: ScaleRange): EndStates | null {
-  const settled = given.settle(severity)
-  if (!settled) return null
-  const possible = new Map([[stateKey(settled.states), settled.states]])
-  const { relays, modules, diodes } = given.study.network
-  if (relays.length + modules.length + diodes.length === 0) return { settled, possible }
-  if (given.passed.every((state) => isCertain(given, state))) return { settled, possible }
-  const found: States[] = [settled.states]
-  for (const [scale, reluctance] of [
-    [range.high, eager],
-    [range.low, reluctant],
-  ] as const) {
-    const other = given.settle(severity, scale, reluctance)
-    if (!other) return null
-    found.push(other.states)
-    possible.set(stateKey(other.states), other.states)
-  }
-  const mixtures = combinations(found)
-  if (mixtures === null) return null
-  for (const held of mixtures) {
-    const solved = given.settleDiodes(held, severity, given.scaleFor(severity))
-    if (solved) possible.set(stateKey(solved.states), solved.states)
-  }
-  return { settled, possible }
-}
-
-/** Every mixture of relays and modules that the given states disagree on; null when there are too many. */
-function combinations(states: readonly States[]): States[] | null {
-  const [first] = states as [States]
-  let all: States[] = [first]
-  let doubtful = 0
-  for (const kind of ['relays', 'modules'] as const)
-    first[kind].forEach((on, i) => {
-      if (states.every((state) => state[kind][i] === on)) return
-      doubtful++
-      if (doubtful > mostDoubtful) return
-      all = all.flatMap((state) => [state, { ...state, [kind]: state[kind].with(i, !on) }])
-    })
-  return doubtful > mostDoubtful ? null : all
-}
-
-/** A study for a probe's condition, with the leads it adds. */
-export function studyFor(network: Network, probe: Probe): Study {
-  const { added } = probe.condition
-  return new Study(added.length === 0 ? network : buildNetwork(network.circuit, added), probe.condition)
-}
+type Bound = CellStates['bounds'][number]

@@ -4,13 +4,14 @@ import {
   batteryVoltsAt,
   fixedVoltsAt,
   ownShare,
-  unitCurrentIn,
+  spreadOfFault,
+  theveninOhms,
+  unitOfFault,
   voltsBetween,
   type Case,
   type Settled,
 } from '../solver/case'
 import { deadVolts, voltmeterOhms } from '../solver/constants'
-import type { Network } from '../solver/network'
 
 /**
  * What one faulted, settled network holds ready for one reading, as a function of the battery:
@@ -34,62 +35,70 @@ const secondOrder = 1.25
 
 /** Quantity of a reading: volts under the meter, ohm, amperes, volts over a load's element, volts of an input. */
 export function predict(given: Case, settled: Settled, probe: Probe): Prediction {
-  const { network } = given.study
-  switch (probe.kind) {
-    case 'volts': {
-      const [a, b] = [network.unknownOf.get(probe.red)!, network.unknownOf.get(probe.black)!]
-      return underMeter(given, settled, a, b)
-    }
-    case 'ohms': {
-      const [a, b] = [network.unknownOf.get(probe.red)!, network.unknownOf.get(probe.black)!]
-      const y = unitCurrentIn(settled, a, b)
-      const ohms = Math.max(0, at(y, a) - at(y, b))
-      return {
-        battery: 0,
-        fixed: ohms,
-        reachBattery: 0,
-        // Resistances between two points scale with the parts: exact, no second order.
-        reachFixed: tolerance * ohms,
-        spread: (tolerance / Math.sqrt(3)) * 0.7 * ohms,
-        live: Math.abs(voltsBetween(settled, a, b)) > deadVolts / 2,
+  let predictor = predictors.get(probe)
+  if (!predictor) predictors.set(probe, (predictor = new Predictor(probe)))
+  return predictor.predict(given, settled)
+}
+
+const predictors = new WeakMap<Probe, Predictor>()
+const nothing: Prediction = { battery: 0, fixed: 0, reachBattery: 0, reachFixed: 0, spread: 0, live: false }
+
+/** Predicts one reading for many faults; what they share is worked out once per base network. */
+export class Predictor {
+  constructor(private readonly probe: Probe) {}
+
+  predict(given: Case, settled: Settled): Prediction {
+    const { probe } = this
+    const { network } = given.study
+    switch (probe.kind) {
+      case 'volts':
+        return underMeter(settled, network.unknownOf.get(probe.red)!, network.unknownOf.get(probe.black)!)
+      case 'ohms':
+        return ohms(settled, network.unknownOf.get(probe.red)!, network.unknownOf.get(probe.black)!)
+      case 'amps':
+        return predictAmps(given, settled, network.branchIndex.get(`wire:${probe.wire}/from`)!)
+      case 'works': {
+        const load = network.loads.find((l) => l.node === probe.node)!
+        if (given.alteration.forced.idle.has(load.node)) return nothing
+        return overElement(given, settled, load.branch)
       }
-    }
-    case 'amps':
-      return predictAmps(given, settled, network.branchIndex.get(`wire:${probe.wire}/from`)!)
-    case 'works': {
-      const load = network.loads.find((l) => l.node === probe.node)!
-      if (given.alteration.forced.idle.has(load.node)) return nothing
-      return overElement(given, settled, load.branch)
-    }
-    case 'sees': {
-      const input = network.inputs.find((i) => i.point === probe.pin)!
-      return between(given, settled, input.inner, input.innerGround)
+      case 'sees': {
+        const input = network.inputs.find((i) => i.point === probe.pin)!
+        return volts(settled, input.inner, input.innerGround)
+      }
     }
   }
 }
 
-const nothing: Prediction = { battery: 0, fixed: 0, reachBattery: 0, reachFixed: 0, spread: 0, live: false }
-
-function between(given: Case, settled: Settled, a: number, b: number): Prediction {
-  return linear(given, settled, unitCurrentIn(settled, a, b), a, b)
+function ohms(settled: Settled, a: number, b: number): Prediction {
+  const value = theveninOhms(settled, a, b)
+  return {
+    battery: 0,
+    fixed: value,
+    reachBattery: 0,
+    // Resistances between two points scale with the parts: exact, no second order.
+    reachFixed: tolerance * value,
+    spread: (tolerance / Math.sqrt(3)) * 0.7 * value,
+    live: Math.abs(voltsBetween(settled, a, b)) > deadVolts / 2,
+  }
 }
 
-function linear(given: Case, settled: Settled, y: Float64Array, a: number, b: number): Prediction {
-  const reach = reachOf(given.study.network, settled, y)
+function volts(settled: Settled, a: number, b: number): Prediction {
+  const reach = reachOf(settled, a, b)
   return {
     battery: batteryVoltsAt(settled, a) - batteryVoltsAt(settled, b),
     fixed: fixedVoltsAt(settled, a) - fixedVoltsAt(settled, b),
-    ...reach,
+    reachBattery: reach.reachBattery,
+    reachFixed: reach.reachFixed,
+    spread: reach.spread,
     live: false,
   }
 }
 
 /** The voltmeter's 10 Mohm divides what stands at its leads. */
-function underMeter(given: Case, settled: Settled, a: number, b: number): Prediction {
-  const y = unitCurrentIn(settled, a, b)
-  const open = linear(given, settled, y, a, b)
-  const ohms = Math.max(0, at(y, a) - at(y, b))
-  const part = voltmeterOhms / (voltmeterOhms + ohms)
+function underMeter(settled: Settled, a: number, b: number): Prediction {
+  const open = volts(settled, a, b)
+  const part = voltmeterOhms / (voltmeterOhms + theveninOhms(settled, a, b))
   const partReach = secondOrder * tolerance * part * (1 - part)
   return {
     battery: open.battery * part,
@@ -104,16 +113,16 @@ function underMeter(given: Case, settled: Settled, a: number, b: number): Predic
 /** Volts over a load's own element; a fault inside the part, in series, takes its share. */
 function overElement(given: Case, settled: Settled, branch: number): Prediction {
   const { a, b } = given.study.network.branches[branch]!
-  const whole = between(given, settled, a, b)
+  const whole = volts(settled, a, b)
   const share = ownShare(settled, branch)
   const shareReach = secondOrder * tolerance * share * (1 - share)
   return {
-    ...whole,
     battery: whole.battery * share,
     fixed: whole.fixed * share,
     reachBattery: whole.reachBattery * share + Math.abs(whole.battery) * shareReach,
     reachFixed: whole.reachFixed * share + Math.abs(whole.fixed) * shareReach,
     spread: whole.spread * share,
+    live: false,
   }
 }
 
@@ -121,56 +130,64 @@ function overElement(given: Case, settled: Settled, branch: number): Prediction 
 export function predictAmps(given: Case, settled: Settled, branch: number): Prediction {
   const { base } = settled.located
   const { a, b } = given.study.network.branches[branch]!
-  const siemens = settled.located.branch === branch ? settled.siemens : base.conductance[branch]!
-  const y = unitCurrentIn(settled, a, b)
-  const volts = linear(given, settled, y, a, b)
-  const battery = siemens * (volts.battery - base.emfBattery[branch]!)
-  const fixed = siemens * (volts.fixed - base.emfFixed[branch]!)
+  const altered = settled.located.branch === branch
+  const siemens = altered ? settled.siemens : base.conductance[branch]!
+  const over = volts(settled, a, b)
+  const battery = altered ? settled.throughBattery : siemens * (over.battery - base.emfBattery[branch]!)
+  const fixed = altered ? settled.throughFixed : siemens * (over.fixed - base.emfFixed[branch]!)
   // The branch's own resistance also sets its current directly; bounded by the whole of it.
-  const own = secondOrder * tolerance * Math.max(0, 1 - siemens * Math.max(0, at(y, a) - at(y, b)))
+  const own = secondOrder * tolerance * Math.max(0, 1 - siemens * theveninOhms(settled, a, b))
   return {
     battery,
     fixed,
-    reachBattery: siemens * volts.reachBattery + own * Math.abs(battery),
-    reachFixed: siemens * volts.reachFixed + own * Math.abs(fixed),
-    spread: siemens * volts.spread,
+    reachBattery: siemens * over.reachBattery + own * Math.abs(battery),
+    reachFixed: siemens * over.reachFixed + own * Math.abs(fixed),
+    spread: siemens * over.spread,
     live: false,
   }
 }
 
 /**
  * Reach of the tolerances by the adjoint: dv/d ln R(k) = i(k)·y(k), with i the current of branch k
- * and y its volts when one ampere flows between the leads. O(branches).
+ * and y its volts when one ampere flows between the leads. Only branches that such an ampere, or one
+ * through the fault's place, moves at all are gone through.
  */
 function reachOf(
-  network: Network,
   settled: Settled,
-  y: Float64Array,
+  a: number,
+  b: number,
 ): Pick<Prediction, 'reachBattery' | 'reachFixed' | 'spread'> {
-  const { base } = settled.located
-  const { scale } = settled
+  const { located, scale, unitSiemens, ampsBattery, ampsFixed } = settled
+  const { base } = located
+  const lead = base.spreadOf(a, b)
+  const fault = located.touches ? spreadOfFault(located) : null
+  const z = fault && unitSiemens !== 0 ? unitOfFault(located) : null
+  const amps = z ? unitSiemens * (at(z, a) - at(z, b)) : 0
+  const ownFraction = located.branch < 0 ? 1 : located.ownOhms / (located.ownOhms + settled.severity)
+  const { conductance } = base
+  const currents = base.currents()
   let reachBattery = 0
   let reachFixed = 0
   let squares = 0
-  for (let k = 0; k < network.branches.length; k++) {
-    const branch = network.branches[k]!
-    const conductance = base.conductance[k]!
-    if (branch.exact || conductance === 0) continue
-    const moved = at(y, branch.a) - at(y, branch.b)
-    if (moved === 0) continue
+  const add = (k: number, y: number, dz: number) => {
+    const moved = y - amps * dz
+    if (moved === 0) return
     // Of an altered branch only its own resistance is uncertain; the severity is swept anyway.
-    const altered = settled.located.branch === k
-    const siemens = altered ? settled.siemens : conductance
-    const share = altered ? ownShare(settled, k) : 1
-    const iBattery =
-      siemens * (batteryVoltsAt(settled, branch.a) - batteryVoltsAt(settled, branch.b) - base.emfBattery[k]!)
-    const iFixed =
-      siemens * (fixedVoltsAt(settled, branch.a) - fixedVoltsAt(settled, branch.b) - base.emfFixed[k]!)
-    const weight = Math.abs(moved) * share
+    const altered = k === located.branch
+    const weight = altered ? Math.abs(moved) * ownFraction : Math.abs(moved)
+    const g = conductance[k]!
+    const iBattery = altered ? settled.throughBattery : currents.battery[k]! - g * ampsBattery * dz
+    const iFixed = altered ? settled.throughFixed : currents.fixed[k]! - g * ampsFixed * dz
     reachBattery += weight * Math.abs(iBattery)
     reachFixed += weight * Math.abs(iFixed)
     squares += (weight * (scale * iBattery + iFixed)) ** 2
   }
+  const { branches, moves } = lead
+  for (let i = 0; i < branches.length; i++) {
+    const k = branches[i]!
+    add(k, moves[k]!, fault ? fault.moves[k]! : 0)
+  }
+  if (fault && amps !== 0) for (const k of fault.branches) if (moves[k] === 0) add(k, 0, fault.moves[k]!)
   return {
     reachBattery: secondOrder * tolerance * reachBattery,
     reachFixed: secondOrder * tolerance * reachFixed,

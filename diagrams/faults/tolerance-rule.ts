@@ -70,56 +70,66 @@ export function scalesThatFit(cell: CellPrediction, windows: Windows, range: Sca
   if (cell.bounds === null) return new Map([[anyState, range]])
   const fits = new Map<string, ScaleRange>()
   for (const [state, bounds] of cell.bounds) {
-    const found = bounds.some((prediction) => prediction.live) ? range : scalesBetween(bounds, windows, range)
+    const all = Int32Array.from(bounds, (_, i) => i)
+    const found = bounds.some((prediction) => prediction.live)
+      ? range
+      : scalesBetween(bounds, all, 0, all.length, windows, range)
     if (found) fits.set(state, found)
   }
   return fits
 }
 
-function scalesBetween(
-  bounds: readonly Prediction[],
+/** The same for the predictions `all[index[from]]` … `all[index[to − 1]]` of one state. */
+export function scalesBetween(
+  all: readonly Prediction[],
+  index: Int32Array,
+  from: number,
+  to: number,
   windows: Windows,
   range: ScaleRange,
 ): ScaleRange | null {
   let found: ScaleRange | null = null
   for (const window of windows) {
     // Some bound must reach down to the window's top, and some bound up to its foot.
-    const below = widest(bounds, (p) =>
-      half(p.battery - p.reachBattery, p.fixed - p.reachFixed, window.high, range),
-    )
-    const above = widest(bounds, (p) =>
-      half(-p.battery - p.reachBattery, -p.fixed - p.reachFixed, -window.low, range),
-    )
-    found = hull(found, below && above && overlap(below, above))
+    let [belowLow, belowHigh, aboveLow, aboveHigh] = [Infinity, -Infinity, Infinity, -Infinity]
+    for (let i = from; i < to; i++) {
+      const { battery, fixed, reachBattery, reachFixed } = all[index[i]!]!
+      half(battery - reachBattery, fixed - reachFixed, window.high, range)
+      if (edgeLow < belowLow) belowLow = edgeLow
+      if (edgeHigh > belowHigh) belowHigh = edgeHigh
+      half(-battery - reachBattery, -fixed - reachFixed, -window.low, range)
+      if (edgeLow < aboveLow) aboveLow = edgeLow
+      if (edgeHigh > aboveHigh) aboveHigh = edgeHigh
+    }
+    const low = Math.max(belowLow, aboveLow)
+    const high = Math.min(belowHigh, aboveHigh)
+    if (low <= high + 1e-12)
+      found = found ? { low: Math.min(found.low, low), high: Math.max(found.high, high) } : { low, high }
   }
   return found
+}
+
+let edgeLow = 0
+let edgeHigh = 0
+
+/** Scales s in the range with s·slope + start ≤ limit, into `edgeLow` and `edgeHigh`: this runs for every cell, and what it allocated would add up. */
+function half(slope: number, start: number, limit: number, range: ScaleRange) {
+  edgeLow = range.low
+  edgeHigh = range.high
+  if (limit === Infinity) return
+  const room = limit - start
+  const flat = Math.abs(slope) < 1e-15
+  if (!flat && slope > 0) edgeHigh = Math.min(range.high, room / slope)
+  else if (!flat) edgeLow = Math.max(range.low, room / slope)
+  if (flat ? room < 0 : edgeLow > edgeHigh + 1e-12) {
+    edgeLow = Infinity
+    edgeHigh = -Infinity
+  }
 }
 
 /** The smallest range that holds both; null stands for none. */
 export function hull(a: ScaleRange | null, b: ScaleRange | null): ScaleRange | null {
   return a && b ? { low: Math.min(a.low, b.low), high: Math.max(a.high, b.high) } : (a ?? b)
-}
-
-/** Scales s in the range with s·slope + start ≤ limit. */
-function half(slope: number, start: number, limit: number, range: ScaleRange): ScaleRange | null {
-  if (limit === Infinity) return range
-  const room = limit - start
-  if (Math.abs(slope) < 1e-15) return room >= 0 ? range : null
-  const edge = room / slope
-  const found =
-    slope > 0
-      ? { low: range.low, high: Math.min(range.high, edge) }
-      : { low: Math.max(range.low, edge), high: range.high }
-  return found.low <= found.high + 1e-12 ? found : null
-}
-
-function widest(
-  bounds: readonly Prediction[],
-  rangeOf: (p: Prediction) => ScaleRange | null,
-): ScaleRange | null {
-  let found: ScaleRange | null = null
-  for (const prediction of bounds) found = hull(found, rangeOf(prediction))
-  return found
 }
 
 export function overlap(a: ScaleRange, b: ScaleRange): ScaleRange | null {

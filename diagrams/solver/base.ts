@@ -1,4 +1,5 @@
 import { factorise, gatherCurrents, solveInPlace, substituteBack, type Factor } from './factor'
+import { unitNear } from './unit-near'
 import { nowhere, type Network } from './network'
 
 /** Above this a source between two floating unknowns is solved by its loop, amperes of its Norton current. */
@@ -29,6 +30,31 @@ export interface SourceLoop {
   ohms: number
 }
 
+/** How the branches that can be off the drawing take part when one ampere flows between two unknowns. */
+export interface Spread {
+  /** Those it moves at all. */
+  branches: Int32Array
+  /** Volts over each branch, a over b; 0 where it moves none. Every branch has its place. */
+  moves: Float64Array
+}
+
+/** Below this an ampere moves nothing, volts. */
+const movesFromVolts = 1e-11
+
+export function spreadOver({ network, conductance }: Base, volts: Float64Array): Spread {
+  const moves = new Float64Array(network.branches.length)
+  const branches: number[] = []
+  for (const k of network.tolerant) {
+    if (conductance[k] === 0) continue
+    const { a, b } = network.branches[k]!
+    const moved = (a < 0 ? 0 : volts[a]!) - (b < 0 ? 0 : volts[b]!)
+    if (Math.abs(moved) < movesFromVolts) continue
+    moves[k] = moved
+    branches.push(k)
+  }
+  return { branches: Int32Array.from(branches), moves }
+}
+
 /** A network in one condition with its parts in one state: factored, and solved for its own sources. */
 export class Base {
   readonly factor: Factor
@@ -44,6 +70,9 @@ export class Base {
   readonly flowBattery: SourceFlow
   readonly flowFixed: SourceFlow
   private readonly units = new Map<number, Float64Array>()
+  private readonly spreads = new Map<number, Spread>()
+  private flowing: { battery: Float64Array; fixed: Float64Array } | undefined
+  private watching: { battery: Float64Array; fixed: Float64Array } | undefined
 
   constructor(
     readonly network: Network,
@@ -69,6 +98,45 @@ export class Base {
     let found = this.units.get(key)
     if (!found) this.units.set(key, (found = this.unitOnce(a, b)))
     return found
+  }
+
+  /** What that ampere moves; kept likewise. */
+  spreadOf(a: number, b: number): Spread {
+    const key = a * (this.network.size + 1) + b
+    let found = this.spreads.get(key)
+    if (!found) this.spreads.set(key, (found = spreadOver(this, this.unit(a, b))))
+    return found
+  }
+
+  /** Amperes of every branch, from the battery's sources and from fixed ones. */
+  currents(): { battery: Float64Array; fixed: Float64Array } {
+    const of = (volts: Float64Array, emf: Float64Array) =>
+      Float64Array.from(this.network.branches, ({ a, b }, k) => {
+        const over = (a < 0 ? 0 : volts[a]!) - (b < 0 ? 0 : volts[b]!)
+        return this.conductance[k]! * (over - emf[k]!)
+      })
+    return (this.flowing ??= {
+      battery: of(this.voltsBattery, this.emfBattery),
+      fixed: of(this.voltsFixed, this.emfFixed),
+    })
+  }
+
+  /** Volts of every watched pair. */
+  watched(): { battery: Float64Array; fixed: Float64Array } {
+    return (this.watching ??= {
+      battery: overPairs(this.network, this.voltsBattery),
+      fixed: overPairs(this.network, this.voltsFixed),
+    })
+  }
+
+  /** Volts of such an ampere over its own ends and over the watched pairs alone, without going through the rest. */
+  unitAt(a: number, b: number): { between: number; watched: Float64Array } {
+    const { network, factor } = this
+    const volts = unitNear(factor, a, b, network.watchedPivots)
+    return {
+      between: a === b ? 0 : (a < 0 ? 0 : volts[a]!) - (b < 0 ? 0 : volts[b]!),
+      watched: a === b ? new Float64Array(network.watched.length) : overPairs(network, volts),
+    }
   }
 
   /** The same, not kept. */
@@ -139,6 +207,16 @@ export class Base {
     }
     return volts
   }
+}
+
+/** Volts over every watched pair. */
+export function overPairs({ watched }: Network, volts: Float64Array): Float64Array {
+  const over = new Float64Array(watched.length)
+  for (let i = 0; i < over.length; i++) {
+    const [a, b] = watched[i]!
+    over[i] = (a < 0 ? 0 : volts[a]!) - (b < 0 ? 0 : volts[b]!)
+  }
+  return over
 }
 
 /** Volts per unknown for one ampere put in at p and taken out at q (−1 is chassis). */

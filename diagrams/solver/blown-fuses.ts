@@ -1,7 +1,7 @@
 import { controlCombinations } from '../document/condition'
 import { restCondition } from '../document/condition-schema'
 import { withBlown, type Alteration } from './alteration'
-import { branchAmps, Case, type Settled } from './case'
+import { Case, fuseAmps, type Settled } from './case'
 import { blowsAtRatingTimes } from './constants'
 import type { Network } from './network'
 import { Study } from './study'
@@ -36,13 +36,13 @@ export function blownFuses(
       const settled = each.settle(severity)
       const states: Settled[] = settled ? [settled] : each.passed
       for (const state of states)
-        for (const fuse of network.fuses) {
-          const times = Math.abs(branchAmps(each, state, fuse.branch)) / fuse.amps
+        network.fuses.forEach((fuse, i) => {
+          const times = Math.abs(fuseAmps(each, state, i)) / fuse.amps
           if (times > worst && !blown.includes(fuse.node)) {
             worst = times
             worstFuse = fuse.node
           }
-        }
+        })
     }
     if (worstFuse === null) return blown
     blown.push(worstFuse)

@@ -26,8 +26,10 @@ type Draft = Omit<
   Network,
   | 'order'
   | 'places'
+  | 'tolerant'
   | 'besides'
   | 'watched'
+  | 'firstWatchedFuse'
   | 'watchedPivots'
   | 'branchIndex'
   | 'leaking'

@@ -1,5 +1,5 @@
 import type { Alteration } from './alteration'
-import type { Base } from './base'
+import { spreadOver, type Base, type Spread } from './base'
 import { nominalBatteryVolts } from './constants'
 import type { States, Study } from './study'
 import { openUnit, takeOut } from './taken-out'
@@ -35,8 +35,9 @@ export interface Located {
   watchedBattery: Float64Array
   watchedFixed: Float64Array
   watchedUnit: Float64Array | null
-  /** z, once it has been asked for. */
+  /** z and what it moves, once they have been asked for. */
   z: Float64Array | null
+  spread: Spread | null
 }
 
 /** A faulted network with its parts settled; its volts are worked out where they are asked for. */
@@ -84,39 +85,17 @@ export class Case {
     return this.alteration.weak ? severity / nominalBatteryVolts : this.study.nominalScale
   }
 
+  /** Forgets what is as large as the network and can be worked out again. */
+  releaseUnit() {
+    for (const located of this.located.values()) {
+      located.z = null
+      located.spread = null
+    }
+  }
+
   /** Solves with the parts held in the given states. */
   solve(states: States, severity: number, scale: number): Settled {
-    const located = this.locate(states)
-    const { touches, branch, ownOhms, loopOhms: R } = located
-    if (!touches)
-      return {
-        states,
-        located,
-        siemens: 0,
-        severity,
-        scale,
-        throughBattery: 0,
-        throughFixed: 0,
-        ampsBattery: 0,
-        ampsFixed: 0,
-        unitSiemens: 0,
-      }
-    const around = 1 / (ownOhms + severity + R)
-    const throughBattery = located.drivenBattery * around
-    const throughFixed = located.drivenFixed * around
-    const lacks = branch < 0 ? 1 : -severity / (ownOhms + R)
-    return {
-      states,
-      located,
-      siemens: 1 / (ownOhms + severity),
-      severity,
-      scale,
-      throughBattery,
-      throughFixed,
-      ampsBattery: lacks * throughBattery,
-      ampsFixed: lacks * throughFixed,
-      unitSiemens: lacks * around,
-    }
+    return settledAt(this.locate(states), states, severity, scale)
   }
 
   /**
@@ -208,66 +187,104 @@ export class Case {
 function locate(study: Study, alteration: Alteration, states: States): Located {
   const { network } = study
   const base = study.base(states, alteration.forced)
-  const watchedBattery = watchedIn(base, base.voltsBattery)
-  const watchedFixed = watchedIn(base, base.voltsFixed)
-  const untouched: Located = {
-    base,
-    touches: false,
-    p: -1,
-    q: -1,
-    branch: -1,
-    ownOhms: 0,
-    loopOhms: 0,
-    drivenBattery: 0,
-    drivenFixed: 0,
-    watchedBattery,
-    watchedFixed,
-    watchedUnit: null,
-    z: null,
-  }
-  const branch = alteration.series.find((series) => base.conductance[series]! > 0)
-  if (branch !== undefined) {
-    const { a: p, b: q } = network.branches[branch]!
+  for (const branch of alteration.series) {
+    if (base.conductance[branch] === 0) continue
+    const { a, b } = network.branches[branch]!
     const open = takeOut(base, branch)
-    return {
-      ...untouched,
-      touches: true,
-      p,
-      q,
+    return locatedAt(base, a, b, {
       branch,
       ownOhms: 1 / base.conductance[branch]!,
       loopOhms: open.ohms,
       drivenBattery: open.voltsBattery - base.emfBattery[branch]!,
       drivenFixed: open.voltsFixed - base.emfFixed[branch]!,
       watchedUnit: open.watched,
-    }
+    })
   }
   if (alteration.shunt) {
     const [p, q] = alteration.shunt
-    const z = base.unitOnce(p, q)
-    return {
-      ...untouched,
-      touches: true,
-      p,
-      q,
-      loopOhms: Math.max(0, at(z, p) - at(z, q)),
+    const z = base.unitAt(p, q)
+    return locatedAt(base, p, q, {
+      branch: -1,
+      ownOhms: 0,
+      loopOhms: Math.max(0, z.between),
       drivenBattery: at(base.voltsBattery, p) - at(base.voltsBattery, q),
       drivenFixed: at(base.voltsFixed, p) - at(base.voltsFixed, q),
-      watchedUnit: watchedIn(base, z),
-      z,
-    }
+      watchedUnit: z.watched,
+    })
   }
-  return untouched
+  return untouchedBy(base)
 }
 
-function watchedIn({ network }: Base, volts: Float64Array): Float64Array {
-  return Float64Array.from(network.watched, ([a, b]) => at(volts, a) - at(volts, b))
+type Element = Pick<
+  Located,
+  'branch' | 'ownOhms' | 'loopOhms' | 'drivenBattery' | 'drivenFixed' | 'watchedUnit'
+>
+
+function locatedAt(base: Base, p: number, q: number, element: Element): Located {
+  const watched = base.watched()
+  return {
+    base,
+    touches: element.watchedUnit !== null,
+    p,
+    q,
+    branch: element.branch,
+    ownOhms: element.ownOhms,
+    loopOhms: element.loopOhms,
+    drivenBattery: element.drivenBattery,
+    drivenFixed: element.drivenFixed,
+    watchedBattery: watched.battery,
+    watchedFixed: watched.fixed,
+    watchedUnit: element.watchedUnit,
+    z: null,
+    spread: null,
+  }
+}
+
+function untouchedBy(base: Base): Located {
+  return locatedAt(base, -1, -1, {
+    branch: -1,
+    ownOhms: 0,
+    loopOhms: 0,
+    drivenBattery: 0,
+    drivenFixed: 0,
+    watchedUnit: null,
+  })
+}
+
+/** A base as it is, no fault in it, at the battery's drawn volts. */
+export function untouched(base: Base, states: States): Settled {
+  return settledAt(untouchedBy(base), states, 0, 1)
+}
+
+function settledAt(located: Located, states: States, severity: number, scale: number): Settled {
+  const { touches, branch, ownOhms, loopOhms: R } = located
+  const around = touches ? 1 / (ownOhms + severity + R) : 0
+  const lacks = branch < 0 ? 1 : -severity / (ownOhms + R)
+  const throughBattery = located.drivenBattery * around
+  const throughFixed = located.drivenFixed * around
+  return {
+    states,
+    located,
+    siemens: touches ? 1 / (ownOhms + severity) : 0,
+    severity,
+    scale,
+    throughBattery,
+    throughFixed,
+    ampsBattery: lacks * throughBattery,
+    ampsFixed: lacks * throughFixed,
+    unitSiemens: lacks * around,
+  }
 }
 
 /** z of a located fault: volts per unknown for one ampere from q to p, an altered branch taken out. Not to be changed. */
 export function unitOfFault(located: Located): Float64Array {
   return (located.z ??=
     located.branch < 0 ? located.base.unitOnce(located.p, located.q) : openUnit(located.base, located.branch))
+}
+
+/** What one ampere through the fault's place moves. */
+export function spreadOfFault(located: Located): Spread {
+  return (located.spread ??= spreadOver(located.base, unitOfFault(located)))
 }
 
 /** Volts per unknown of a settled network for one ampere from b to a: the adjoint of measuring a against b. Not to be changed. */
@@ -363,6 +380,15 @@ export function diodeVolts(given: Case, settled: Settled, diode: number): number
   return settled.located.branch === branch
     ? overAltered(settled)
     : watchedVolts(settled, network.relays.length + diode)
+}
+
+/** Amperes through a fuse. */
+export function fuseAmps(given: Case, settled: Settled, fuse: number): number {
+  const { network } = given.study
+  const { branch } = network.fuses[fuse]!
+  const { located, scale } = settled
+  if (located.branch === branch) return scale * settled.throughBattery + settled.throughFixed
+  return located.base.conductance[branch]! * watchedVolts(settled, network.firstWatchedFuse + fuse)
 }
 
 /** Least volts over a module's supplies, as parts of what it runs from. */

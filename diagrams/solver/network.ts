@@ -109,10 +109,13 @@ export interface Network {
   middleOf: ReadonlyMap<string, number>
   /** Where each branch's conductance is added: slot ≥ 0, or −1 − unknown when it goes to chassis, or null. */
   places: Int32Array
+  /** Branches that may be off the drawing. */
+  tolerant: Int32Array
   /** The other branches that are added in the same place as each. */
   besides: readonly (readonly number[])[]
-  /** Pairs whose volts decide the states: every coil, every diode, every supply of every module. */
+  /** Pairs whose volts decide the states: every coil, diode, supply of every module; then every fuse. */
   watched: readonly (readonly [number, number])[]
+  firstWatchedFuse: number
   /** Their unknowns and all those on the way to the last pivot, from the last to the first. */
   watchedPivots: Int32Array
   relays: RelayState[]
@@ -129,7 +132,15 @@ export const nowhere = -0x40000000
 export function finishNetwork(
   parts: Omit<
     Network,
-    'order' | 'places' | 'besides' | 'watched' | 'watchedPivots' | 'branchIndex' | 'leaking'
+    | 'order'
+    | 'places'
+    | 'tolerant'
+    | 'besides'
+    | 'watched'
+    | 'firstWatchedFuse'
+    | 'watchedPivots'
+    | 'branchIndex'
+    | 'leaking'
   > & { leaking?: number },
 ): Network {
   const inside = parts.branches.filter((x) => x.a >= 0 && x.b >= 0 && x.a !== x.b)
@@ -146,8 +157,10 @@ export function finishNetwork(
     ...parts,
     order,
     places,
+    tolerant: Int32Array.from(parts.branches.flatMap((x, i) => (x.exact ? [] : [i]))),
     besides: othersInPlace(places),
     watched,
+    firstWatchedFuse: watched.length - parts.fuses.length,
     watchedPivots: wayToLast(order, watched.flat()),
     branchIndex: new Map(parts.branches.map((x, i) => [x.name, i])),
   }
@@ -164,7 +177,8 @@ function watchedPairs({
   relays,
   diodes,
   modules,
-}: Pick<Network, 'branches' | 'relays' | 'diodes' | 'modules'>): [number, number][] {
+  fuses,
+}: Pick<Network, 'branches' | 'relays' | 'diodes' | 'modules' | 'fuses'>): [number, number][] {
   const ends = (branch: number): [number, number] => [branches[branch]!.a, branches[branch]!.b]
   return [
     ...relays.map((relay) => ends(relay.coil)),
@@ -172,6 +186,7 @@ function watchedPairs({
     ...modules.flatMap(({ supplies, innerGround }) =>
       supplies.map((pin): [number, number] => [pin, innerGround]),
     ),
+    ...fuses.map((fuse) => ends(fuse.branch)),
   ]
 }
 

@@ -1,4 +1,4 @@
-import type { Base, SourceFlow } from './base'
+import { overPairs, type Base, type SourceFlow } from './base'
 import type { EliminationOrder } from './elimination-order'
 import type { Factor } from './factor'
 import { nowhere, type Network } from './network'
@@ -143,7 +143,7 @@ class RemadePath {
   /** Volts over the watched pairs, after `unit`. */
   watched(network: Network): Float64Array {
     this.spread(network.watchedPivots, this.volts)
-    return Float64Array.from(network.watched, ([a, b]) => volt(this.volts, a) - volt(this.volts, b))
+    return overPairs(network, this.volts)
   }
 
   /** Volts of every unknown, after `unit`. */
