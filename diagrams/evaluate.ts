@@ -55,7 +55,7 @@ export function* evaluateSteps(request: EvaluationRequest): Steps<Answer> {
   if (misfit && !comesAndGoes) {
     const weightOf = (site: string, mode: Mode) => modeWeight(circuit, site, mode, priors, odds)
     const pairs = yield* twoFaultsIn(model, readings, full, misfit, weightOf, told)
-    if (pairs) return answerTwoFaults(pairs, full, readings)
+    if (pairs) return yield* answerTwoFaults(pairs, full, readings)
   }
   const aside = misfit?.reading ?? null
   const evidence = aside === null ? full : weigh(model, readings, new Set([aside]))

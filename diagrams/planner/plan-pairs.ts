@@ -3,6 +3,7 @@ import { FaultModel, probeKey } from '../faults/fault-model'
 import type { Hypothesis } from '../faults/hypothesis'
 import type { FittingBox, PairSearch } from '../faults/pair-search'
 import type { PairMember } from '../faults/pair-member'
+import type { Steps } from '../faults/steps'
 import { withBlown } from '../solver/alteration'
 import { fuseBranch } from '../solver/blown-fuses'
 import { besides, type HeldFault } from '../solver/held-fault'
@@ -38,7 +39,7 @@ interface PairParticle {
  * The plan while two faults are in play: the same one step of look-ahead, over pairs instead of single places.
  * Each held fault makes a network of its own, in which its partners are forecast like single faults.
  */
-export function planPairs(search: PairSearch, readings: readonly Reading[]): Plan {
+export function* planPairs(search: PairSearch, readings: readonly Reading[]): Steps<Plan> {
   const { model } = search.solver
   const { circuit } = model
   const particles = pairParticles(search)
@@ -71,7 +72,9 @@ export function planPairs(search: PairSearch, readings: readonly Reading[]): Pla
     mostConditions,
     Math.max(leastConditions, Math.round(weighings / Math.max(1, particles.length))),
   )
-  for (const set of candidateReadings(circuit, suspects, workplace.condition, { limit })) {
+  const sets = candidateReadings(circuit, suspects, workplace.condition, { limit })
+  for (const [done, set] of sets.entries()) {
+    yield { stage: 'planning', done, of: sets.length }
     if (set.condition.added.length > 0) continue
     const rows = forecastPairs(search, set, particles)
     set.probes.forEach((probe, i) => {
