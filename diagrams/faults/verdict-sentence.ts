@@ -96,6 +96,9 @@ function noFaultSentence(
   readings: readonly Reading[],
   answer: Omit<Answer, 'says'>,
 ): string {
+  // Without a source, or on next to no volts.
+  if (answer.sites.every((site) => site.modes.length === 0))
+    return 'No fault of this circuit would show: nothing in it drives a current in any ordinary condition.'
   const tried = [
     ...new Set(
       readings.map(({ condition }) => listWords(conditionParts(circuit, condition)) || 'everything at rest'),

@@ -240,8 +240,11 @@ describe('a circuit in which little can be', () => {
       ],
       ['h1.b > g1.in'],
     )
-    for (const readings of [[], [volts({ condition: restCondition, value: 0 })]])
-      soundAnswer({ circuit: bare, readings })
+    for (const readings of [[], [volts({ condition: restCondition, value: 0 })]]) {
+      const answer = soundAnswer({ circuit: bare, readings })
+      expect(answer.says).toMatch(/^No fault of this circuit would show: nothing in it drives a current/)
+      expect(answer.sites.every((site) => site.verdict !== 'faulty')).toBe(true)
+    }
     const ohms = volts({ kind: 'ohms', condition: { ...restCondition, battery: false }, value: 5 })
     soundAnswer({ circuit: bare, readings: [ohms] })
   })
