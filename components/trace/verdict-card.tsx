@@ -8,6 +8,7 @@ import { VerdictGlyph } from '../ui/verdict-glyph'
 import { ConnectorFace } from './connector-face'
 import { likeliestMode } from './likeliest-mode'
 import { connectorOf } from './next-words'
+import { PairList } from './pair-list'
 import { headAndRest, lookFor, siteTitle } from './site-words'
 
 /** What was found: place first, then what, then why; what it cleared, and under which assumption. */
@@ -28,6 +29,7 @@ export function VerdictCard({
   const point = first && pointOfSite(first.site)
   const face = point ? connectorOf(circuit, point) : null
   const blown = mode?.blows ?? []
+  const pair = answer.outcome === 'two-faults' ? answer.pairs?.[0] : undefined
   const [head, told] = headAndRest(answer.says)
   // The bracket below names the places that cannot be told apart; once is enough.
   const rest = group
@@ -40,24 +42,32 @@ export function VerdictCard({
       data-outcome={answer.outcome}
     >
       <div className="flex gap-3">
-        {first && answer.outcome !== 'no-fault' && <VerdictGlyph verdict="faulty" size={40} />}
+        {first && answer.outcome !== 'no-fault' && !pair && <VerdictGlyph verdict="faulty" size={40} />}
         <div className="min-w-0 flex-1" role="status">
           <h2 id="verdict" className="text-title">
             {head}
           </h2>
-          {rest && <p className="mt-1 text-dense text-ink-2">{rest}</p>}
+          {rest && !pair && <p className="mt-1 text-dense text-ink-2">{rest}</p>}
         </div>
         {face && (
           <ConnectorFace circuit={circuit} connector={face.connector} cavity={face.cavity} width={124} />
         )}
       </div>
-      {group && (
+      {pair && (
+        <>
+          <PairList circuit={circuit} pair={pair} />
+          <p className="text-dense text-ink-2">
+            No single fault gives these readings together. Nothing is proved good while there are two.
+          </p>
+        </>
+      )}
+      {group && !pair && (
         <div className="border-x-2 border-b-2 border-ink px-3 pb-1.5 text-dense">
           {group.map((site) => siteTitle(circuit, site)).join(', ')}: these {group.length} cannot be told
           apart by any reading.
         </div>
       )}
-      {first && mode && (
+      {first && mode && !pair && (
         <div className="rounded-field border-control border-edge bg-panel px-3 py-2 text-dense">
           {blown.length > 0 && (
             <p>

@@ -40,7 +40,8 @@ export function Dialog({
     <dialog
       ref={ref}
       aria-labelledby={titleId}
-      onClose={onClose}
+      // A dialog opened from within this one tells of its closing here, too.
+      onClose={(event) => event.target === event.currentTarget && onClose()}
       className={classNames(
         'm-auto w-[calc(100%-2rem)] max-w-xl border-area border-ink bg-panel p-5 text-ink shadow-menu z-dialog',
         'backdrop:bg-[var(--veil)] rounded-field',

@@ -39,7 +39,8 @@ export function ConditionChips({
     <div
       role="group"
       aria-label="Conditions"
-      className="flex flex-wrap gap-2 max-tablet:-mx-1 max-tablet:flex-nowrap max-tablet:overflow-x-auto max-tablet:px-1 max-tablet:py-1 max-tablet:*:flex-none laptop:-mx-1 laptop:flex-nowrap laptop:overflow-x-auto laptop:px-1 laptop:py-1 laptop:*:flex-none laptop:*:gap-1.5 laptop:*:px-3 laptop:*:text-dense"
+      // One row that scrolls sideways; two on a tablet, where the keys below need the height.
+      className="-mx-1 flex gap-2 overflow-x-auto px-1 py-1 *:flex-none tablet:max-laptop:grid tablet:max-laptop:auto-cols-max tablet:max-laptop:grid-flow-col tablet:max-laptop:grid-rows-2 laptop:*:gap-1.5 laptop:*:px-3 laptop:*:text-dense"
     >
       {circuit.controls.map((control) => {
         const position = positions[control.id] ?? control.rest
