@@ -85,7 +85,9 @@ export function readFaulty(
   const random = seededRandom(seed)
   const draw = () => drawOf(random.pick(oddShapes), random)
   for (let tries = 0; tries < 8; tries++) {
-    const severity = draw()
+    const drawn = draw()
+    // Just short of 1: it also picks from lists.
+    const severity = () => Math.min(drawn(), 1 - 1e-9)
     const fault = plantFault(model.circuit, site.id, random.pick(site.modes), severity)
     const part = draw()
     const battery = draw()
