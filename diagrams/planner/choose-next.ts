@@ -1,15 +1,10 @@
 import type { Circuit } from '../document/circuit-schema'
 import type { Condition } from '../document/condition-schema'
 import { placesOf } from './effort'
-import type { PlannedReading, WeighedReading } from './scales'
+import { worthOf, type PlannedReading, type WeighedReading } from './scales'
 import type { Bin } from './split'
 
 const offered = 5
-/**
- * What a reading costs beside its minutes, in minutes: few readings are wanted, not quick ones that tell little.
- * By trial on the sample circuits 3 needed fewer readings and fewer minutes to the end than 0.
- */
-const readingPrice = 3
 /** An alternative is worth at least this part of the best reading's bits per minute. */
 const leastPart = 0.15
 /** A quicker one takes at most this part of its minutes. */
@@ -19,10 +14,14 @@ const quickerPart = 0.7
  * The best reading and its alternatives, best bits per minute first. An alternative differs from the
  * best where a person has a reason to prefer another: it is taken at another place, in another way,
  * without opening anything, or in less time. What is left of the list goes by bits per minute. The same
- * split at a higher price is no alternative.
+ * split at a higher price is no alternative. `given`: the best, where it is known by looking further ahead.
  */
-export function chooseNext(circuit: Circuit, found: readonly WeighedReading[]): PlannedReading[] {
-  const best = mostWorth(found)
+export function chooseNext(
+  circuit: Circuit,
+  found: readonly WeighedReading[],
+  given?: WeighedReading,
+): PlannedReading[] {
+  const best = given ?? mostWorth(found)
   if (!best) return []
   // The best comes first: what has more bits per minute but leads to a dearer end is no alternative.
   const ranked = found.filter((other) => other.rate <= best.rate).toSorted((a, b) => b.rate - a.rate)
@@ -65,8 +64,10 @@ export function chooseNext(circuit: Circuit, found: readonly WeighedReading[]): 
 }
 
 function mostWorth(found: readonly WeighedReading[]): WeighedReading | undefined {
-  const worth = ({ bits, minutes }: WeighedReading) => bits / (minutes + readingPrice)
-  return found.reduce<WeighedReading | undefined>((a, b) => (a && worth(a) >= worth(b) ? a : b), undefined)
+  return found.reduce<WeighedReading | undefined>(
+    (a, b) => (a && worthOf(a) >= worthOf(b) ? a : b),
+    undefined,
+  )
 }
 
 function placeIds(circuit: Circuit, { probe }: WeighedReading): string[] {

@@ -15,13 +15,14 @@ export interface Particle {
 export const noFaultUnit = ''
 
 /** Hypotheses under this probability are left out of planning. */
-const least = 2e-5
+const leastMass = 2e-5
 /** Severities that all hypotheses share, about: the fewer are left, the more finely each is looked at. */
 const shared = 160
 /** Of one hypothesis at most. */
 const mostMarks = 12
-/** Below this one severity is enough. */
+/** Below this one severity is enough, from there two, and three where it is likely. */
 const coarseBelow = 0.0005
+const fineFrom = 0.01
 
 /**
  * Each hypothesis at severities that part its probability evenly, the likelier it is, the more of them. They
@@ -38,10 +39,11 @@ export function particlesOf(model: FaultModel, posterior: Posterior): Particle[]
   for (const mass of masses) if (mass >= coarseBelow) roots += Math.sqrt(mass)
   model.hypotheses.forEach((hypothesis, h) => {
     const mass = masses[h]!
-    if (mass < least) return
+    if (mass < leastMass) return
     const share = Math.round((shared * Math.sqrt(mass)) / roots)
     const fixed = hypothesis.cells.every(({ low, high }) => low === high)
-    const marks = fixed || mass < coarseBelow ? 1 : Math.max(1, Math.min(mostMarks, share))
+    const least = mass < fineFrom ? 2 : 3
+    const marks = fixed || mass < coarseBelow ? 1 : Math.max(least, Math.min(mostMarks, share))
     const cells = posterior.cells[h]!
     let c = 0
     let before = 0

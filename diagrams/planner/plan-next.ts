@@ -8,6 +8,7 @@ import { readingsWithLeads } from './added-leads'
 import { groupsAlike } from './alike'
 import { candidateReadings, mostConditions, type CandidateSet } from './candidates'
 import { chooseNext } from './choose-next'
+import { lookAhead } from './look-ahead'
 import { particlesOf, pilotOf, type Particle } from './particles'
 import { Scales, type PlannedReading, type WeighedReading } from './scales'
 import { wideReadings } from './wide-readings'
@@ -86,11 +87,13 @@ export function* planSteps(
     yield* weighAll(scales, wideReadings(circuit, suspects.slice(0, likeliest)))
   const found =
     pilot === particles ? scales.found : yield* lookClosely(model, particles, readings, scales.found)
+  const inseparable = alike.groups()
+  const best = few ? lookAhead(circuit, found, particles, scales.workplace, inseparable) : undefined
   return {
     particles,
-    next: chooseNext(circuit, found),
+    next: chooseNext(circuit, found, best),
     mostBits: Math.max(0, ...found.map(({ bits }) => bits)),
-    inseparable: alike.groups(),
+    inseparable,
   }
 }
 
