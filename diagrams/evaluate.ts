@@ -93,8 +93,8 @@ export function* evaluateSteps(request: EvaluationRequest): Steps<Answer> {
   })
   const explains = complaint ? explainedByLikeliest(complaint, posterior) : ''
   const says = [
-    comesAndGoesSentence(circuit, readings, scope),
     answer.says,
+    comesAndGoesSentence(circuit, readings, scope),
     symptomSentence(circuit, symptoms, outcome, explains),
   ]
   return { ...answer, says: says.filter(Boolean).join(' ') }

@@ -24,7 +24,7 @@ export function sayMoved(
   })
 }
 
-/** The verdict's first sentence where a fault comes and goes: the widest swing, and what follows from it. */
+/** After the verdict of a fault that comes and goes: what swung, and what follows from it. */
 export function comesAndGoesSentence(
   circuit: Circuit,
   readings: readonly Reading[],

@@ -82,13 +82,13 @@ describe('a reading with the harness moved', () => {
     })
   const judge = (...readings: Reading[]) => evaluate({ circuit: line, readings, codes: [], priors: 'trade' })
 
-  it('that swings says from where to where, beside where a good circuit stays, and the verdict begins with it', () => {
+  it('that swings says from where to where, beside where a good circuit stays, and the verdict says what follows', () => {
     const answer = judge(moved('c1-1.b', 12.5, 0.1, 12.5))
     expect(answer.readings[0]!.says).toBe(
       'C1 cavity 1, side b: went from 0.10 V to 12.50 V while the harness was moved. A good circuit stays at 12.49 V.',
     )
     expect(answer.says).toMatch(
-      /^This fault comes and goes: C1 cavity 1, side b went from 0\.10 V to 12\.50 V while the harness was moved\. Readings may have been taken with it or without it\. /,
+      /\. This fault comes and goes: C1 cavity 1, side b went from 0\.10 V to 12\.50 V while the harness was moved\. Readings may have been taken with it or without it\.$/,
     )
   })
   it('that does not swing says that it stayed', () => {
