@@ -4,19 +4,21 @@ import { faultModelOf } from '@/diagrams/faults/fault-model'
 import { posteriorOf } from '@/diagrams/faults/posterior'
 import { candidateReadings } from '@/diagrams/planner/candidates'
 import { forecast } from '@/diagrams/planner/forecast'
+import { bestByPlayingOut } from '@/diagrams/planner/play-out'
 import { particlesOf } from '@/diagrams/planner/particles'
 import { binsOf, bitsOf } from '@/diagrams/planner/split'
 import { samples } from '@/diagrams/samples/all-samples'
 import { seededRandom, type Random } from '../support/random'
 import { argument, flag } from './support/arguments'
-import { bestTree, greedyTree, type Instance } from './support/decision-tree'
+import { bestTree, locatedFrom, treeBy, type Instance } from './support/decision-tree'
 import { mean } from './support/figures'
 import { report } from './support/report'
 
 /**
- * One step of look-ahead against the optimal tree, on instances small enough to solve exactly: up to nine
- * suspects of a sample with the odds of the trade, every reading that splits them, all readings alike in
- * cost. Expected readings until one suspect holds 0.95.
+ * The planner against the optimal tree, on instances small enough to solve exactly: up to nine suspects of
+ * a sample with the odds of the trade, every reading that splits them, all readings alike in cost. Expected
+ * readings until one suspect holds 0.95. The planner plays out what follows once few places are left;
+ * beside it one step of look-ahead by bits alone.
  */
 const instances = argument('instances', 80)
 
@@ -70,26 +72,51 @@ function bits({ weights }: Instance, test: readonly number[], left: readonly num
   return bitsOf(bins, own, Int32Array.from(left.keys()), left.length)
 }
 
-const random = seededRandom(argument('seed', 5))
-const ratios: number[] = []
-for (let tries = 0; ratios.length < instances && tries < 40 * instances; tries++) {
-  const instance = draw(random.pick(ready), random)
-  if (!instance) continue
-  const taken = greedyTree(instance, (test, left) => bits(instance, test, left))
-  const least = bestTree(instance)
-  if (least === 0) continue
-  ratios.push(taken / least)
-  if (taken > 1.1 * least && flag('tell'))
-    console.log(taken.toFixed(3), least.toFixed(3), JSON.stringify(instance))
+function mostBits(instance: Instance, left: readonly number[]): readonly number[] | null {
+  let best: readonly number[] | null = null
+  let most = 0
+  for (const test of instance.tests) {
+    const found = bits(instance, test, left)
+    if (found > most + 1e-12) [best, most] = [test, found]
+  }
+  return best
 }
-const how = `${ratios.length} instances of 5 to 9 suspects`
+
+/** As the planner chooses: by playing out. */
+function playedOut({ weights, tests }: Instance, left: readonly number[]): readonly number[] | null {
+  const reading = bestByPlayingOut({
+    outcomes: tests.map((test) => left.map((m) => test[m]!)),
+    weights: left.map((m) => weights[m]!),
+    unitOf: left.map((_, i) => i),
+    units: left.length,
+    foundFrom: locatedFrom,
+    costOf: () => 1,
+  })
+  return reading < 0 ? mostBits({ weights, tests }, left) : tests[reading]!
+}
+
+const random = seededRandom(argument('seed', 5))
+const planner: number[] = []
+const oneStep: number[] = []
+for (let tries = 0; planner.length < instances && tries < 40 * instances; tries++) {
+  const instance = draw(random.pick(ready), random)
+  const least = instance ? bestTree(instance) : 0
+  if (!instance || least === 0) continue
+  planner.push(treeBy(instance, (left) => playedOut(instance, left)) / least)
+  oneStep.push(treeBy(instance, (left) => mostBits(instance, left)) / least)
+  if (planner.at(-1)! > 1.05 && flag('tell'))
+    console.log(planner.at(-1)!.toFixed(3), JSON.stringify(instance))
+}
+const how = `${planner.length} instances of 5 to 9 suspects`
+const by = (list: number[]) =>
+  `by bits alone ${mean(list).toFixed(3)} mean, ${Math.max(...list).toFixed(3)} worst`
 report('Readings against the optimal tree', [
-  { what: 'mean', goal: '≤ 1.02', figure: mean(ratios).toFixed(3), met: mean(ratios) <= 1.02, how },
+  { what: 'mean', goal: '≤ 1.02', figure: mean(planner).toFixed(3), met: mean(planner) <= 1.02, how },
   {
     what: 'worst',
     goal: '≤ 1.05',
-    figure: Math.max(...ratios).toFixed(3),
-    met: Math.max(...ratios) <= 1.05,
-    how,
+    figure: Math.max(...planner).toFixed(3),
+    met: Math.max(...planner) <= 1.05,
+    how: by(oneStep),
   },
 ])

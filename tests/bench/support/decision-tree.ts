@@ -46,20 +46,15 @@ export function bestTree({ weights, tests }: Instance): number {
   return cost.at(-1)!
 }
 
-/** Expected readings when the reading of the highest score is taken each time. */
-export function greedyTree(
+/** Expected readings when a chooser names the reading to take among those left; Infinity when it gives up. */
+export function treeBy(
   { weights, tests }: Instance,
-  score: (test: readonly number[], left: readonly number[]) => number,
+  choose: (left: readonly number[]) => readonly number[] | null,
 ): number {
   const costOf = (left: readonly number[]): number => {
     const mass = left.reduce((sum, m) => sum + weights[m]!, 0)
     if (left.some((m) => weights[m]! >= locatedFrom * mass)) return 0
-    let best: readonly number[] | null = null
-    let most = 0
-    for (const test of tests) {
-      const found = score(test, left)
-      if (found > most + 1e-12) [best, most] = [test, found]
-    }
+    const best = choose(left)
     if (!best) return Infinity
     const outcomes = new Map<number, number[]>()
     for (const m of left) {
@@ -67,7 +62,8 @@ export function greedyTree(
       if (list) list.push(m)
       else outcomes.set(best[m]!, [m])
     }
+    if (outcomes.size < 2) return Infinity
     return [...outcomes.values()].reduce((sum, part) => sum + costOf(part), mass)
   }
-  return costOf([...weights.keys()])
+  return tests.length === 0 ? Infinity : costOf([...weights.keys()])
 }
