@@ -44,8 +44,12 @@ export function standingIn(circuit: Circuit, condition: Condition): Standing {
   }
 }
 
-export function effortOf(circuit: Circuit, probe: Probe): Effort {
-  const standing = standingIn(circuit, probe.condition)
+/** `standing`: that of the probe's condition, where it is known already. */
+export function effortOf(
+  circuit: Circuit,
+  probe: Probe,
+  standing = standingIn(circuit, probe.condition),
+): Effort {
   const ends = probe.condition.added.flatMap(({ from, to }) => [from, to])
   const places = [...placesOf(circuit, probe), ...ends.flatMap((point) => placeOf(circuit, point) ?? [])]
   return { ...standing, places, reaches: [...standing.opened, ...places].map(({ id }) => id) }
@@ -90,7 +94,18 @@ export function placesOf(circuit: Circuit, probe: Probe): Place[] {
   }
 }
 
+/** Asked for every reading weighed, of a document that does not change. */
+const placesByCircuit = new WeakMap<Circuit, Map<string, Place | null>>()
+
 function placeOf(circuit: Circuit, text: string): Place | null {
+  let known = placesByCircuit.get(circuit)
+  if (!known) placesByCircuit.set(circuit, (known = new Map()))
+  let place = known.get(text)
+  if (place === undefined) known.set(text, (place = findPlace(circuit, text)))
+  return place
+}
+
+function findPlace(circuit: Circuit, text: string): Place | null {
   const point = parsePoint(text)
   const node = point && circuit.nodes.find((n) => n.id === point.node)
   if (!point || !node) return null

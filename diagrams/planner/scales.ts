@@ -1,9 +1,11 @@
+import { conditionKey } from '../document/condition'
 import type { Condition } from '../document/condition-schema'
 import type { Probe, Reading } from '../document/reading-schema'
 import { FaultModel, probeKey } from '../faults/fault-model'
 import { buildNetwork } from '../solver/build-network'
 import type { CandidateSet } from './candidates'
-import { minutesFor, workplaceAfter, type Workplace } from './cost'
+import { workplaceAfter, type Workplace } from './cost'
+import { effortOf, minutesOf, standingIn, type Standing } from './effort'
 import { forecast } from './forecast'
 import { leadsAreSafe } from './safe-leads'
 import { binsOf, bitsOf, type Bin } from './split'
@@ -43,6 +45,8 @@ export class Scales {
   readonly found: WeighedReading[] = []
   readonly workplace: Workplace
   private readonly taken: ReadonlySet<string>
+  private readonly takenIn: ReadonlySet<string>
+  private readonly now: Standing
   private readonly unitOf: Int32Array
   private readonly weights: Float64Array
   private readonly units: number
@@ -61,6 +65,8 @@ export class Scales {
     this.weights = Float64Array.from(particles, (particle) => particle.weight)
     this.workplace = workplaceAfter(model.circuit, readings)
     this.taken = new Set(readings.map((reading) => probeKey(model.circuit, reading)))
+    this.takenIn = new Set(readings.map((reading) => conditionKey(model.circuit, reading.condition)))
+    this.now = standingIn(model.circuit, this.workplace.condition)
   }
 
   weigh(set: CandidateSet) {
@@ -70,14 +76,17 @@ export class Scales {
     const split = rows.map((row, i) => binsOf(set.probes[i]!.kind, row))
     if (split.every((bins) => bins.length < 2)) return
     if (set.condition.added.length > 0 && !leadsAreSafe(model, set.condition, this.particles)) return
+    const standing = standingIn(circuit, set.condition)
+    const mayBeTaken = this.takenIn.has(conditionKey(circuit, set.condition))
     set.probes.forEach((probe, i) => {
       const bins = split[i]!
       if (bins.length < 2) return
       this.see(bins)
-      if (this.taken.has(probeKey(circuit, probe))) return
+      if (mayBeTaken && this.taken.has(probeKey(circuit, probe))) return
       const bits = bitsOf(bins, this.weights, this.unitOf, this.units)
       if (bits < leastBits) return
-      const minutes = minutesFor(circuit, probe, this.workplace)
+      const effort = effortOf(circuit, probe, standing)
+      const minutes = minutesOf(effort, this.now, this.workplace.reached)
       this.found.push({ probe, bits, minutes, bins, row: rows[i]!, rate: bits / minutes })
     })
   }
