@@ -4,7 +4,8 @@ import { conditionKey, positionsIn } from '@/diagrams/document/condition'
 import type { Condition } from '@/diagrams/document/condition-schema'
 import { measure } from '@/diagrams/solver/meter'
 import { solveOperatingPoint } from '@/diagrams/solver/operating-point'
-import { type MeterAction, meterReducer, probeOf, restMeter } from '@/lib/client/meter/meter-state'
+import { type MeterAction, meterReducer, restMeter } from '@/lib/client/meter/meter-state'
+import { probeOf } from '@/lib/client/meter/probe-of'
 import { conditionWords } from '@/lib/client/meter/reading-words'
 
 /** A circuit being operated: its condition, what it does, what it did before, and a meter on two points. */

@@ -4,14 +4,9 @@ import type { Reading } from '@/diagrams/document/reading-schema'
 import type { NextOutcome, NextReading } from '@/diagrams/faults/answer'
 import { refuseReading } from '@/diagrams/solver/legal-reading'
 import { enterReading } from '@/lib/client/meter/enter-reading'
-import {
-  type MeterAction,
-  meterReducer,
-  type MeterState,
-  probeOf,
-  probeOfNext,
-  restMeter,
-} from '@/lib/client/meter/meter-state'
+import { type MeterAction, meterReducer, type MeterState, restMeter } from '@/lib/client/meter/meter-state'
+import { probeOf } from '@/lib/client/meter/probe-of'
+import { probeOfNext } from '@/lib/client/meter/probe-of-next'
 import { outcomeOf } from '@/lib/client/meter/outcome-of'
 import { sameProbe } from '@/lib/client/meter/same-probe'
 import { typedValue } from '@/lib/client/meter/typed-value'

@@ -11,6 +11,7 @@ import type { PlantedFault } from '@/diagrams/solver/planted-fault'
 import { probeOf } from '../support/trace-fault'
 import { signIn } from './support/sign-in'
 import { pictureFolder, takePictures } from './support/take-pictures'
+import { schemes, widths } from './support/widths'
 import { withBrowser } from './support/with-browser'
 
 const circuit = samples[0] as (typeof samples)[number]
@@ -101,7 +102,15 @@ describe('a trace from a trouble code to a proved repair', () => {
       : 'R1'
     const again = readings[Number(number.slice(1)) - 1] as Reading
     const { id: _, value: __, ...probe } = again
-    await proving.fill(String(shown(probe as Probe)))
+    const good = shown(probe as Probe)
+    if (typeof good === 'number' || good === 'OL') await proving.fill(String(good))
+    else
+      await dialog
+        .getByRole('group', { name: probe.kind === 'sees' ? 'The module sees now' : 'It now' })
+        .getByText(good === 'high' ? 'High' : good === 'low' ? 'Low' : good ? 'Works' : 'Does not', {
+          exact: true,
+        })
+        .click()
     await dialog.getByText('Works', { exact: true }).last().click()
     await dialog.getByRole('button', { name: 'Record the proof' }).click()
     await page.getByText('The repair is proved').waitFor()
@@ -184,6 +193,88 @@ describe('a trace from a trouble code to a proved repair', () => {
       await context.close()
     })
 
+  it('takes what the driver tells, a moved harness, what a module sees and a lead put in', async () => {
+    const { page, context } = await test.visit()
+    const failures: string[] = []
+    page.on('pageerror', (error) => failures.push(error.message))
+    const mirrors = samples.find((sample) => sample.title === 'Heated mirrors') as typeof circuit
+    await signIn(page, 'noor@alderlane.example', test.product.password)
+    await page.goto(`/circuits?code=${mirrors.codes[0]?.code}`)
+    await page
+      .getByRole('link', { name: new RegExp(mirrors.title) })
+      .first()
+      .click()
+    await page.waitForURL(/\/circuits\/[0-9a-f-]{36}$/)
+    await page.getByRole('link', { name: 'Trace', exact: true }).click()
+    await page.waitForURL(/\/trace$/)
+    await page.getByLabel('Complaint').fill('Right mirror stays misted.')
+    const told = page.getByRole('group', { name: 'What it does' })
+    await told.getByText('Does not', { exact: true }).first().click()
+    await told.getByRole('button', { name: /^Step 2/ }).click()
+    await takePictures(page, 'trace-start')
+    await page.getByRole('button', { name: 'Start the trace' }).click()
+    await page.waitForURL(/\/traces\//)
+    // Told, and weighed before the first reading.
+    await page.locator('[data-outcome="narrowed"]').first().waitFor()
+    await page.getByRole('button', { name: 'This is done and held to' }).click()
+
+    await page.getByRole('group', { name: 'What to measure' }).getByText('Volts').click()
+    await put(page, 'Red lead', 'c12-5.a', mirrors)
+    await page.locator('[data-control="harness"]').click()
+    await page.getByRole('textbox', { name: /^Meter/ }).fill('12.5')
+    await page.getByRole('radio', { name: /^Least/ }).check()
+    await page.getByRole('textbox', { name: /^Meter/ }).fill('0.2')
+    await page.getByRole('radio', { name: /^Most/ }).check()
+    await page.getByRole('textbox', { name: /^Meter/ }).fill('12.5')
+    await takePictures(page, 'trace-moved')
+    const size = page.viewportSize()
+    await page.setViewportSize(widths.phone)
+    await page.getByRole('button', { name: 'Take the reading' }).click()
+    const entry = page.getByRole('dialog', { name: 'Take the reading' })
+    await entry.getByRole('radio', { name: /^Least/ }).waitFor()
+    for (const colorScheme of schemes) {
+      await page.emulateMedia({ colorScheme })
+      await page.screenshot({ path: path.join(pictureFolder, `trace-entry-moved-390-${colorScheme}.png`) })
+    }
+    await page.emulateMedia({ colorScheme: 'light' })
+    await entry.getByRole('button', { name: 'Back to the trace' }).click()
+    if (size) await page.setViewportSize(size)
+    await page.getByRole('textbox', { name: /^Meter/ }).press('Enter')
+    await page.getByText('moved 0.20 to 12.50').first().waitFor()
+
+    await page.locator('[data-control="put-in"]').click()
+    const dialog = page.getByRole('dialog', { name: 'Put in for this reading' })
+    await dialog.getByText('Test lamp', { exact: true }).click()
+    for (const [end, point] of [
+      ['From', 'c12-5.a'],
+      ['To', 'chassis'],
+    ] as const) {
+      await dialog.getByRole('button', { name: new RegExp(`^${end}`) }).click()
+      const list = page.getByRole('dialog', { name: new RegExp(`${end} which point`, 'i') })
+      await list
+        .getByRole('button', { name: pointName(mirrors, point), exact: false })
+        .first()
+        .click()
+    }
+    await dialog.getByRole('button', { name: 'Put it in' }).click()
+    await dialog.getByText(/^Test lamp from C12 cavity 5/).waitFor()
+    await takePictures(page, 'trace-put-in')
+    await dialog.getByRole('button', { name: 'Done' }).click()
+
+    await page.getByRole('group', { name: 'What to measure' }).getByText('Sees').click()
+    await page.getByRole('button', { name: /The module reports its input/ }).click()
+    await page.getByRole('dialog').getByRole('button', { name: /pin/ }).first().click()
+    await takePictures(page, 'trace-sees')
+    await enter(page, 'high')
+    await page.getByText('2, newest first').waitFor()
+    await page
+      .getByText(/test lamp from C12 cavity 5/)
+      .first()
+      .waitFor()
+    expect(failures).toEqual([])
+    await context.close()
+  })
+
   it('keeps readings through a lost network and a reload, and sends them when it is back', async () => {
     const { page, context } = await test.visit()
     await startTrace(page)
@@ -240,8 +331,8 @@ function connectorsOf(wire: { from: string; to: string }): string[] {
 }
 
 /** Puts a lead by its list: what the sheet's points do with a finger. */
-async function put(page: Page, lead: 'Red lead' | 'Black lead', point: string): Promise<void> {
-  const name = pointName(circuit, point)
+async function put(page: Page, lead: 'Red lead' | 'Black lead', point: string, of = circuit): Promise<void> {
+  const name = pointName(of, point)
   await page.getByRole('button', { name: new RegExp(`^${lead}`) }).click()
   await page.getByRole('dialog').getByLabel('Find').fill(name)
   await page.getByRole('dialog').getByRole('button', { name, exact: false }).first().click()
@@ -255,11 +346,12 @@ function shown(probe: Probe, fault?: PlantedFault): ReadingValue {
 }
 
 async function enter(page: Page, value: ReadingValue): Promise<void> {
-  if (typeof value === 'boolean') {
-    await page
-      .getByRole('group', { name: 'Does it work' })
-      .getByText(value ? 'Works' : 'Does not')
-      .click()
+  if (typeof value === 'boolean' || value === 'high' || value === 'low') {
+    const [group, words] =
+      typeof value === 'boolean'
+        ? ['Does it work', value ? 'Works' : 'Does not']
+        : ['The module sees', value === 'high' ? 'High' : 'Low']
+    await page.getByRole('group', { name: group }).getByText(words, { exact: true }).click()
     await page.getByRole('button', { name: 'Enter reading' }).first().click()
     return
   }

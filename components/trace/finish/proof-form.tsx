@@ -3,7 +3,7 @@
 import { useState } from 'react'
 import type { Circuit } from '@/diagrams/document/circuit-schema'
 import type { Reading } from '@/diagrams/document/reading-schema'
-import { cleanText } from '@/lib/client/meter/meter-state'
+import { cleanText } from '@/lib/client/meter/typed-text'
 import { readingFrom } from '@/lib/client/meter/reading-from'
 import {
   capital,

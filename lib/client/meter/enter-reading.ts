@@ -1,7 +1,8 @@
 import type { Circuit } from '@/diagrams/document/circuit-schema'
 import { figureOf, type Reading, readingSchema } from '@/diagrams/document/reading-schema'
 import { refuseReading } from '@/diagrams/solver/legal-reading'
-import { type Figure, type MeterState, probeOf } from './meter-state'
+import { type Figure, type MeterState } from './meter-state'
+import { probeOf } from './probe-of'
 import { readingFrom } from './reading-from'
 import { doubtTyped, typedFigure, typedValue } from './typed-value'
 

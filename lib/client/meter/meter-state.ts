@@ -1,6 +1,8 @@
 import { type Condition, restCondition } from '@/diagrams/document/condition-schema'
 import type { Probe } from '@/diagrams/document/reading-schema'
 import type { NextReading } from '@/diagrams/faults/answer'
+import { probeOfNext } from './probe-of-next'
+import { cleanText, pressKey } from './typed-text'
 
 export const meterKinds = ['volts', 'ohms', 'amps', 'works', 'sees'] as const
 export type MeterKind = (typeof meterKinds)[number]
@@ -75,8 +77,6 @@ export type MeterAction =
   | { do: 'set-for'; next: NextReading }
   | { do: 'set-probe'; probe: Probe }
   | { do: 'logged' }
-
-const mostCharacters = 9
 
 export function meterReducer(state: MeterState, action: MeterAction): MeterState {
   switch (action.do) {
@@ -182,59 +182,4 @@ function setForProbe(state: MeterState, probe: Probe): MeterState {
     case 'sees':
       return { ...set, kind: 'sees', pin: probe.pin }
   }
-}
-
-/** Null for a reading that does not say what it measures. */
-export function probeOfNext(next: NextReading): Probe | null {
-  const { condition } = next
-  switch (next.kind) {
-    case 'volts':
-    case 'ohms':
-      return next.red && next.black ? { kind: next.kind, red: next.red, black: next.black, condition } : null
-    case 'amps':
-      return next.wire ? { kind: 'amps', wire: next.wire, condition } : null
-    case 'works':
-      return next.node ? { kind: 'works', node: next.node, condition } : null
-    case 'sees':
-      return next.pin ? { kind: 'sees', pin: next.pin, condition } : null
-  }
-}
-
-/** What the meter is set to measure; null while something is missing. */
-export function probeOf(state: MeterState): Probe | null {
-  const { kind, condition } = state
-  switch (kind) {
-    case 'volts':
-    case 'ohms':
-      return state.red === null ? null : { kind, red: state.red, black: state.black, condition }
-    case 'amps':
-      return state.wire === null ? null : { kind, wire: state.wire, condition }
-    case 'works':
-      return state.node === null ? null : { kind, node: state.node, condition }
-    case 'sees':
-      return state.pin === null ? null : { kind, pin: state.pin, condition }
-  }
-}
-
-function pressKey(text: string, key: string): string {
-  switch (key) {
-    case 'erase':
-      return text === 'OL' ? '' : text.slice(0, -1)
-    case 'OL':
-      return text === 'OL' ? '' : 'OL'
-    case 'sign':
-      if (text === 'OL') return text
-      return text.startsWith('-') ? text.slice(1) : `-${text}`
-    default:
-      return cleanText(text === 'OL' ? key : text + key)
-  }
-}
-
-/** Keeps what a meter can show: one minus in front, one point (a comma is taken as one), digits. */
-export function cleanText(text: string): string {
-  if (/^\s*o/i.test(text)) return 'OL'
-  const plain = text.replaceAll(',', '.').replaceAll(/[^0-9.-]/g, '')
-  const minus = plain.startsWith('-') ? '-' : ''
-  const [whole = '', ...rest] = plain.replaceAll('-', '').split('.')
-  return (minus + (rest.length > 0 ? `${whole}.${rest.join('')}` : whole)).slice(0, mostCharacters)
 }

@@ -3,13 +3,8 @@ import { describe, expect, it } from 'vitest'
 import { openCircuit } from '@/diagrams/document/open-circuit'
 import type { NextReading } from '@/diagrams/faults/answer'
 import { enterReading } from '@/lib/client/meter/enter-reading'
-import {
-  cleanText,
-  type MeterAction,
-  meterReducer,
-  type MeterState,
-  restMeter,
-} from '@/lib/client/meter/meter-state'
+import { type MeterAction, meterReducer, type MeterState, restMeter } from '@/lib/client/meter/meter-state'
+import { cleanText } from '@/lib/client/meter/typed-text'
 import { outcomeOf } from '@/lib/client/meter/outcome-of'
 import { conditionWords, valueWords } from '@/lib/client/meter/reading-words'
 import { samples } from '@/diagrams/samples/all-samples'
