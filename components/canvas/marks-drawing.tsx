@@ -41,7 +41,10 @@ export const MarksDrawing = memo(function MarksDrawing({ scene, zoom = 1 }: { sc
       ))}
       <Primitives of={drawNotes(scene.circuit)} />
       {scene.glyphs.map((mark) => (
-        <Primitives key={mark.site} of={verdictGlyph(mark.verdict, mark.glyph)} />
+        <Primitives
+          key={mark.site}
+          of={verdictGlyph(mark.verdict, mark.glyph, scene.overlay.letters?.get(mark.site))}
+        />
       ))}
       {scene.plates.map((plate) => (
         <Primitives key={plate.point} of={plate.primitives} />

@@ -29,9 +29,22 @@ export function traceOverlay({
       blown: marked ? blownFuses(answer) : [],
     },
     verdicts: new Map(marked ? answer.sites.map((site) => [site.site, site.verdict]) : []),
+    ...(marked && answer.pairs ? { letters: lettersOf(answer) } : {}),
     flags: [...(next ? nextFlags(next) : []), ...readingFlagsOf(readings, answer)],
     tails: marked ? shortTailsOf(circuit, answer) : [],
   }
+}
+
+/** A and B for the two of the likeliest pair that are sure, and for what no reading tells from them. */
+function lettersOf(answer: Answer): Map<string, string> {
+  const letters = new Map<string, string>()
+  answer.pairs?.[0]?.sites.forEach((site, which) => {
+    const group = answer.inseparable.find((sites) => sites.includes(site)) ?? [site]
+    for (const one of group)
+      if (answer.sites.find((each) => each.site === one)?.verdict === 'faulty')
+        letters.set(one, which === 0 ? 'A' : 'B')
+  })
+  return letters
 }
 
 /** One flag a spot, the newest reading there: older ones stand in the list. */

@@ -94,7 +94,7 @@ export function circuitPrimitives(circuit: Circuit, overlay: Overlay): Primitive
       currentChevrons(route, wire.mm2, overlay.wireAmps?.get(wire.id) ?? 0, crossings),
     ),
     ...drawNotes(circuit),
-    ...marks.flatMap(({ verdict, at }) => verdictGlyph(verdict, at)),
+    ...marks.flatMap(({ site, verdict, at }) => verdictGlyph(verdict, at, overlay.letters?.get(site))),
     ...plates.flatMap((plate) => plate.primitives),
     ...flags.flatMap((flag) => flag.primitives),
   ]
@@ -144,12 +144,12 @@ function rings(circuit: Circuit, verdicts: ReadonlyMap<string, VerdictMark>, ins
 function glyphPlaces(
   circuit: Circuit,
   verdicts: ReadonlyMap<string, VerdictMark>,
-): { verdict: VerdictMark; at: Place }[] {
+): { site: string; verdict: VerdictMark; at: Place }[] {
   return [...verdicts].flatMap(([site, verdict]) => {
     // Rails and rings say it for wires and contacts: a tick on each would hide the drawing.
     if (verdict === 'proved-good' && (site.startsWith('wire:') || site.startsWith('contact:'))) return []
     const mark = placeMark(circuit, site)
-    return mark ? [{ verdict, at: mark.glyph }] : []
+    return mark ? [{ site, verdict, at: mark.glyph }] : []
   })
 }
 

@@ -6,6 +6,8 @@ export interface Overlay {
   title?: string
   /** Verdict of each site; sites left out carry no mark. */
   verdicts?: ReadonlyMap<string, VerdictMark>
+  /** Letters for the diamonds of faulty sites, where two faults stand together: A and B. */
+  letters?: ReadonlyMap<string, string>
   /** Switches moved, relays pulled in, connectors open. */
   moment?: Moment
   /** Volts to chassis shown in plates, by point. */

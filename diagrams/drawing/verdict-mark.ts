@@ -148,8 +148,8 @@ export function glyphBox(verdict: VerdictMark, { x, y }: Place): Box {
   return { x: x - half, y: y - half, width: 2 * half, height: 2 * half }
 }
 
-/** The verdict's glyph, centred: diamond with a cross, round with a question mark, bare tick. */
-export function verdictGlyph(verdict: VerdictMark, { x, y }: Place): Primitive[] {
+/** The verdict's glyph, centred: diamond with a cross or its letter, round with a question mark, bare tick. */
+export function verdictGlyph(verdict: VerdictMark, { x, y }: Place, letter?: string): Primitive[] {
   switch (verdict) {
     case 'faulty':
       return [
@@ -161,13 +161,24 @@ export function verdictGlyph(verdict: VerdictMark, { x, y }: Place): Primitive[]
           ),
           strokeWidth: 2,
         } as Primitive,
-        {
-          kind: 'path',
-          d: `M${x - 4} ${y - 4}L${x + 4} ${y + 4}M${x + 4} ${y - 4}L${x - 4} ${y + 4}`,
-          stroke: 'window',
-          strokeWidth: 2.4,
-          cap: 'round',
-        },
+        letter
+          ? {
+              kind: 'text',
+              x,
+              y: y + 4.5,
+              text: letter,
+              size: 13,
+              weight: 800,
+              anchor: 'middle',
+              fill: 'window',
+            }
+          : {
+              kind: 'path',
+              d: `M${x - 4} ${y - 4}L${x + 4} ${y + 4}M${x + 4} ${y - 4}L${x - 4} ${y + 4}`,
+              stroke: 'window',
+              strokeWidth: 2.4,
+              cap: 'round',
+            },
       ]
     case 'in-question':
       return [
