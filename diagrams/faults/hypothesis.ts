@@ -61,11 +61,20 @@ export function* hypothesesOf(circuit: Circuit, network: Network): Steps<Hypothe
             blows,
             part,
             cells,
-            alteration: (in_) => withBlown(alterationOf(in_, kind), blows.map(fuseBranch)),
+            alteration: oncePerNetwork((in_) => withBlown(alterationOf(in_, kind), blows.map(fuseBranch))),
           })
     }
   }
   return found
+}
+
+/** Asked again and again, mostly of one network. */
+function oncePerNetwork(find: (network: Network) => Alteration): (network: Network) => Alteration {
+  let last: { network: Network; alteration: Alteration } | undefined
+  return (network) => {
+    if (last?.network !== network) last = { network, alteration: find(network) }
+    return last.alteration
+  }
 }
 
 function keptCases(key: string, caches: Map<string, Map<string, Case[]>>): Map<string, Case[]> {

@@ -7,6 +7,7 @@ import {
   spreadOfFault,
   theveninOhms,
   unitOfFault,
+  unitSiemensOf,
   voltsBetween,
   type Case,
   type Settled,
@@ -157,7 +158,8 @@ function reachOf(
   a: number,
   b: number,
 ): Pick<Prediction, 'reachBattery' | 'reachFixed' | 'spread'> {
-  const { located, scale, unitSiemens, ampsBattery, ampsFixed } = settled
+  const { located, scale, ampsBattery, ampsFixed } = settled
+  const unitSiemens = unitSiemensOf(settled)
   const { base } = located
   const lead = base.spreadOf(a, b)
   const fault = located.touches ? spreadOfFault(located) : null

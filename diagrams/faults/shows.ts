@@ -1,4 +1,5 @@
-import { voltsAt, type Case, type Settled } from '../solver/case'
+import type { Base } from '../solver/base'
+import { elementVolts, furthestMove, voltsAt, voltsBetween, type Case, type Settled } from '../solver/case'
 import { noAlteration } from '../solver/alteration'
 import { Case as FaultCase } from '../solver/case'
 import { inputSees, loadWorks } from '../solver/operating-point'
@@ -9,13 +10,16 @@ export interface Show {
   volts: Float64Array | null
   works: boolean[]
   sees: string[]
+  base: Base | null
+  /** Every load and input is further than this from where it changes, volts. */
+  margin: number
 }
 
 export function goodShow(studies: readonly Study[]): Show[] {
   return studies.map((study) => {
     const given = new FaultCase(study, noAlteration)
     const settled = given.settle(0)
-    return settled ? showOf(given, settled) : { volts: null, works: [], sees: [] }
+    return settled ? showOf(given, settled) : { volts: null, works: [], sees: [], base: null, margin: 0 }
   })
 }
 
@@ -26,6 +30,15 @@ function showOf(given: Case, settled: Settled): Show {
     volts: Float64Array.from(points, (unknown) => voltsAt(settled, unknown)),
     works: network.loads.map((_, i) => loadWorks(given, settled, i)),
     sees: network.inputs.map((_, i) => inputSees(given, settled, i)),
+    base: settled.located.base,
+    margin: Math.min(
+      ...network.loads.map(({ branch, worksFromVolts }) =>
+        Math.abs(Math.abs(elementVolts(given, settled, branch)) - worksFromVolts),
+      ),
+      ...network.inputs.map(({ inner, innerGround, threshold }) =>
+        Math.abs(voltsBetween(settled, inner, innerGround) - threshold),
+      ),
+    ),
   }
 }
 
@@ -39,6 +52,18 @@ function pointUnknowns(study: Study): Int32Array {
     unknownsByNetwork.set(network, found)
   }
   return found
+}
+
+/** Under this a move is no show, near or not, volts. */
+const quietVolts = 0.3
+
+/** A weak battery moves everything; a load judged by its own element, less than its terminals stand over, has to be looked at. */
+function isPlain(given: Case, { located }: Settled): boolean {
+  return (
+    !given.alteration.weak &&
+    given.alteration.forced.idle.size === 0 &&
+    given.study.network.loads.every(({ branch }) => branch !== located.branch)
+  )
 }
 
 /**
@@ -60,6 +85,14 @@ export function showsBy(
     if (!before.volts) continue
     const settled = given.settle(severity)
     if (!settled) return Infinity
+    // Where nothing near a limit moves and no point moves by enough, there is nothing to look at one by one.
+    if (settled.located.base === before.base && isPlain(given, settled)) {
+      const furthest = furthestMove(settled)
+      if (2 * furthest < before.margin && furthest <= quietVolts) {
+        most = Math.max(most, furthest)
+        continue
+      }
+    }
     const points = pointUnknowns(given.study)
     for (let i = 0; i < points.length; i++)
       most = Math.max(most, Math.abs(voltsAt(settled, points[i]!) - before.volts[i]!))

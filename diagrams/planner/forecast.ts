@@ -1,7 +1,7 @@
 import type { Probe } from '../document/reading-schema'
 import type { FaultModel } from '../faults/fault-model'
 import { alterationKey, noAlteration } from '../solver/alteration'
-import { at, branchAmps, Case, unitOfFault, voltsBetween, type Settled } from '../solver/case'
+import { at, branchAmps, Case, unitOfFault, unitSiemensOf, voltsBetween, type Settled } from '../solver/case'
 import { deadVolts } from '../solver/constants'
 import { inputSees, loadWorks } from '../solver/operating-point'
 import type { Base } from '../solver/base'
@@ -96,12 +96,12 @@ class ProbeReader {
   private ohms(settled: Settled, i: number): number {
     const [a, b] = this.leads[i]!
     if (Math.abs(voltsBetween(settled, a, b)) > deadVolts) return Number.NaN
-    const { located, unitSiemens } = settled
+    const { located } = settled
     const whole = this.wholeOhms(located.base)[i]!
     if (!located.touches) return whole
     const z = unitOfFault(located)
     const moved = at(z, a) - at(z, b)
-    return Math.max(0, whole - unitSiemens * moved * moved)
+    return Math.max(0, whole - unitSiemensOf(settled) * moved * moved)
   }
 
   private wholeOhms(base: Base): Float64Array {

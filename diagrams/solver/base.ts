@@ -130,11 +130,12 @@ export class Base {
   }
 
   /** Volts of such an ampere over its own ends and over the watched pairs alone, without going through the rest. */
-  unitAt(a: number, b: number): { between: number; watched: Float64Array } {
+  unitAt(a: number, b: number): { atA: number; atB: number; watched: Float64Array } {
     const { network, factor } = this
     const volts = unitNear(factor, a, b, network.watchedPivots)
     return {
-      between: a === b ? 0 : (a < 0 ? 0 : volts[a]!) - (b < 0 ? 0 : volts[b]!),
+      atA: a === b || a < 0 ? 0 : volts[a]!,
+      atB: a === b || b < 0 ? 0 : volts[b]!,
       watched: a === b ? new Float64Array(network.watched.length) : overPairs(network, volts),
     }
   }

@@ -1,5 +1,5 @@
 import type { Alteration } from './alteration'
-import { spreadOver, type Base, type Spread } from './base'
+import { overPairs, spreadOver, type Base, type Spread } from './base'
 import { nominalBatteryVolts } from './constants'
 import type { States, Study } from './study'
 import { openUnit, takeOut } from './taken-out'
@@ -26,8 +26,11 @@ export interface Located {
   branch: number
   /** Ohm of the altered branch itself; 0 for a short. */
   ownOhms: number
-  /** R, ohm. */
+  /** R, ohm. Not a number until it is asked for. */
   loopOhms: number
+  /** z at p and at q. */
+  atP: number
+  atQ: number
   /** V − E from the battery's sources and from fixed ones. */
   drivenBattery: number
   drivenFixed: number
@@ -56,8 +59,6 @@ export interface Settled {
   /** Amperes that the base lacks between p and q. */
   ampsBattery: number
   ampsFixed: number
-  /** Siemens κ with which volts y for one ampere from b to a follow from the base: y − κ·(z(a) − z(b))·z. */
-  unitSiemens: number
 }
 
 /** A study with one fault in it. Settles for any severity; factorisations are shared between severities. */
@@ -190,78 +191,78 @@ function locate(study: Study, alteration: Alteration, states: States): Located {
   for (const branch of alteration.series) {
     if (base.conductance[branch] === 0) continue
     const { a, b } = network.branches[branch]!
-    const open = takeOut(base, branch)
-    return locatedAt(base, a, b, {
-      branch,
-      ownOhms: 1 / base.conductance[branch]!,
-      loopOhms: open.ohms,
-      drivenBattery: open.voltsBattery - base.emfBattery[branch]!,
-      drivenFixed: open.voltsFixed - base.emfFixed[branch]!,
-      watchedUnit: open.watched,
-    })
+    const open = takeOut(base, branch, network.watchedPivots)
+    const located = placed(base, a, b, branch)
+    located.ownOhms = 1 / base.conductance[branch]!
+    located.loopOhms = open.ohms
+    located.drivenBattery = open.voltsBattery - base.emfBattery[branch]!
+    located.drivenFixed = open.voltsFixed - base.emfFixed[branch]!
+    located.atP = at(open.unit, a)
+    located.atQ = at(open.unit, b)
+    located.watchedUnit = overPairs(network, open.unit)
+    return located
   }
   if (alteration.shunt) {
     const [p, q] = alteration.shunt
-    const z = base.unitAt(p, q)
-    return locatedAt(base, p, q, {
-      branch: -1,
-      ownOhms: 0,
-      loopOhms: Math.max(0, z.between),
-      drivenBattery: at(base.voltsBattery, p) - at(base.voltsBattery, q),
-      drivenFixed: at(base.voltsFixed, p) - at(base.voltsFixed, q),
-      watchedUnit: z.watched,
-    })
+    const located = placed(base, p, q, -1)
+    located.drivenBattery = at(base.voltsBattery, p) - at(base.voltsBattery, q)
+    located.drivenFixed = at(base.voltsFixed, p) - at(base.voltsFixed, q)
+    return located
   }
-  return untouchedBy(base)
+  return { ...placed(base, -1, -1, -1), touches: false }
 }
 
-type Element = Pick<
-  Located,
-  'branch' | 'ownOhms' | 'loopOhms' | 'drivenBattery' | 'drivenFixed' | 'watchedUnit'
->
-
-function locatedAt(base: Base, p: number, q: number, element: Element): Located {
+function placed(base: Base, p: number, q: number, branch: number): Located {
   const watched = base.watched()
   return {
     base,
-    touches: element.watchedUnit !== null,
+    touches: true,
     p,
     q,
-    branch: element.branch,
-    ownOhms: element.ownOhms,
-    loopOhms: element.loopOhms,
-    drivenBattery: element.drivenBattery,
-    drivenFixed: element.drivenFixed,
+    branch,
+    ownOhms: 0,
+    loopOhms: Number.NaN,
+    drivenBattery: 0,
+    drivenFixed: 0,
+    atP: 0,
+    atQ: 0,
     watchedBattery: watched.battery,
     watchedFixed: watched.fixed,
-    watchedUnit: element.watchedUnit,
+    watchedUnit: null,
     z: null,
     spread: null,
   }
 }
 
-function untouchedBy(base: Base): Located {
-  return locatedAt(base, -1, -1, {
-    branch: -1,
-    ownOhms: 0,
-    loopOhms: 0,
-    drivenBattery: 0,
-    drivenFixed: 0,
-    watchedUnit: null,
-  })
+/** Below this nothing drives a short, volts: it changes nothing, and what an ampere through it would do is not asked. */
+const drivenFrom = 1e-10
+
+/** R of a located fault, ohm. Of a short it is worked out when first asked for: most lie between places that stand alike. */
+function loopOhmsOf(located: Located): number {
+  if (Number.isNaN(located.loopOhms)) {
+    const unit = located.base.unitAt(located.p, located.q)
+    located.loopOhms = Math.max(0, unit.atA - unit.atB)
+    located.atP = unit.atA
+    located.atQ = unit.atB
+    located.watchedUnit = unit.watched
+  }
+  return located.loopOhms
 }
 
 /** A base as it is, no fault in it, at the battery's drawn volts. */
 export function untouched(base: Base, states: States): Settled {
-  return settledAt(untouchedBy(base), states, 0, 1)
+  return settledAt({ ...placed(base, -1, -1, -1), touches: false }, states, 0, 1)
 }
 
 function settledAt(located: Located, states: States, severity: number, scale: number): Settled {
-  const { touches, branch, ownOhms, loopOhms: R } = located
-  const around = touches ? 1 / (ownOhms + severity + R) : 0
+  const { touches, branch, ownOhms, drivenBattery, drivenFixed } = located
+  const driven =
+    touches && (branch >= 0 || Math.abs(drivenBattery) > drivenFrom || Math.abs(drivenFixed) > drivenFrom)
+  const R = driven ? loopOhmsOf(located) : 0
+  const around = driven ? 1 / (ownOhms + severity + R) : 0
   const lacks = branch < 0 ? 1 : -severity / (ownOhms + R)
-  const throughBattery = located.drivenBattery * around
-  const throughFixed = located.drivenFixed * around
+  const throughBattery = drivenBattery * around
+  const throughFixed = drivenFixed * around
   return {
     states,
     located,
@@ -272,8 +273,21 @@ function settledAt(located: Located, states: States, severity: number, scale: nu
     throughFixed,
     ampsBattery: lacks * throughBattery,
     ampsFixed: lacks * throughFixed,
-    unitSiemens: lacks * around,
   }
+}
+
+/** Siemens κ with which volts y for one ampere from b to a follow from the base's: y − κ·(z(a) − z(b))·z. */
+export function unitSiemensOf({ located, severity }: Settled): number {
+  if (!located.touches) return 0
+  const { branch, ownOhms } = located
+  const R = loopOhmsOf(located)
+  return (branch < 0 ? 1 : -severity / (ownOhms + R)) / (ownOhms + severity + R)
+}
+
+/** The furthest that a fault moves any unknown of its base, volts: it is at the fault's own ends that the most moves. */
+export function furthestMove({ located, scale, ampsBattery, ampsFixed }: Settled): number {
+  const amps = scale * ampsBattery + ampsFixed
+  return amps === 0 ? 0 : Math.abs(amps) * Math.max(Math.abs(located.atP), Math.abs(located.atQ))
 }
 
 /** z of a located fault: volts per unknown for one ampere from q to p, an altered branch taken out. Not to be changed. */
@@ -289,7 +303,8 @@ export function spreadOfFault(located: Located): Spread {
 
 /** Volts per unknown of a settled network for one ampere from b to a: the adjoint of measuring a against b. Not to be changed. */
 export function unitCurrentIn(settled: Settled, a: number, b: number): Float64Array {
-  const { located, unitSiemens } = settled
+  const { located } = settled
+  const unitSiemens = unitSiemensOf(settled)
   const y = located.base.unit(a, b)
   if (unitSiemens === 0) return y
   const z = unitOfFault(located)
@@ -299,7 +314,9 @@ export function unitCurrentIn(settled: Settled, a: number, b: number): Float64Ar
 }
 
 /** Thevenin resistance between two unknowns of a settled network, ohm. */
-export function theveninOhms({ located, unitSiemens }: Settled, a: number, b: number): number {
+export function theveninOhms(settled: Settled, a: number, b: number): number {
+  const { located } = settled
+  const unitSiemens = unitSiemensOf(settled)
   const y = located.base.unit(a, b)
   const whole = at(y, a) - at(y, b)
   if (unitSiemens === 0) return Math.max(0, whole)

@@ -92,6 +92,14 @@ export function orderElimination(size: number, edges: readonly [number, number][
   return { ...order, inflows: inflows(order) }
 }
 
+/** The given unknowns and all on their way to the last pivot, from the last to the first. */
+export function wayToLast({ parent, step }: EliminationOrder, unknowns: readonly number[]): Int32Array {
+  const wanted = new Set<number>()
+  for (const unknown of unknowns)
+    for (let k = unknown; k >= 0 && !wanted.has(k); k = parent[k]!) wanted.add(k)
+  return Int32Array.from(wanted).sort((x, y) => step[y]! - step[x]!)
+}
+
 /** Pivots in order, and for each unknown the neighbours it has left when its turn comes. */
 function eliminate(
   size: number,

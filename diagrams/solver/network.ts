@@ -1,6 +1,6 @@
 import type { Circuit, ControlsSetting } from '../document/circuit-schema'
 import type { Condition } from '../document/condition-schema'
-import { orderElimination, type EliminationOrder } from './elimination-order'
+import { orderElimination, wayToLast, type EliminationOrder } from './elimination-order'
 
 /** What decides whether a branch conducts: the condition, the states of the parts and what a fault forces. */
 export interface Setting {
@@ -164,12 +164,6 @@ export function finishNetwork(
     watchedPivots: wayToLast(order, watched.flat()),
     branchIndex: new Map(parts.branches.map((x, i) => [x.name, i])),
   }
-}
-
-function wayToLast({ parent, lastToFirst, size }: EliminationOrder, unknowns: readonly number[]): Int32Array {
-  const wanted = new Uint8Array(size)
-  for (const unknown of unknowns) for (let k = unknown; k >= 0 && !wanted[k]; k = parent[k]!) wanted[k] = 1
-  return lastToFirst.filter((k) => wanted[k] === 1)
 }
 
 function watchedPairs({

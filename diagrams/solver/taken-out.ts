@@ -1,4 +1,4 @@
-import { overPairs, type Base, type SourceFlow } from './base'
+import type { Base, SourceFlow } from './base'
 import type { EliminationOrder } from './elimination-order'
 import type { Factor } from './factor'
 import { nowhere, type Network } from './network'
@@ -10,29 +10,38 @@ export interface OpenEnds {
   /** Volts from the battery's sources and from fixed ones, the branch's own not counted. */
   voltsBattery: number
   voltsFixed: number
-  /** Volts over every watched pair for one ampere put in at the branch's a and taken out at its b. */
-  watched: Float64Array
+  /**
+   * Volts per unknown for one ampere put in at the branch's a and taken out at its b; right at those two and at the
+   * pivots asked for. Changed at the next call for the same order.
+   */
+  unit: Float64Array
 }
 
 /**
  * Takes a branch out. Only pivots from its ends to the last one change, and those are made anew by
  * the same sums of positive numbers, the others' part in them kept: no subtraction, so also what
- * floats once the branch is gone keeps full accuracy. O(height of the elimination tree).
+ * floats once the branch is gone keeps full accuracy. O(height of the elimination tree) and of `pivots`,
+ * which run from the last to the first, none left out on their way.
  */
-export function takeOut(base: Base, branch: number): OpenEnds {
+export function takeOut(base: Base, branch: number, pivots: Int32Array): OpenEnds {
   const { network } = base
   const { a, b } = network.branches[branch]!
   if (network.places[branch] === nowhere)
-    return { ohms: 0, voltsBattery: 0, voltsFixed: 0, watched: new Float64Array(network.watched.length) }
+    return {
+      ohms: 0,
+      voltsBattery: 0,
+      voltsFixed: 0,
+      unit: new Float64Array(network.size),
+    }
   const path = pathOf(network.order)
   path.remake(base, base.factor, branch)
   const ohms = Math.max(0, path.unit(a, b))
-  const watched = path.watched(network)
+  const unit = path.near(pivots)
   const open: OpenEnds = {
     ohms,
     voltsBattery: path.sources(base, base.flowBattery, base.emfBattery, branch, a, b),
     voltsFixed: path.sources(base, base.flowFixed, base.emfFixed, branch, a, b),
-    watched,
+    unit,
   }
   const ownOhms = 1 / base.conductance[branch]!
   for (const loop of base.loops) {
@@ -81,6 +90,7 @@ class RemadePath {
   private readonly share: Float64Array
   private readonly flow: Float64Array
   private readonly volts: Float64Array
+  private readonly nearby: Float64Array
   private factor!: Factor
 
   constructor(private readonly order: EliminationOrder) {
@@ -89,6 +99,7 @@ class RemadePath {
     this.leak = new Float64Array(order.size)
     this.flow = new Float64Array(order.size)
     this.volts = new Float64Array(order.size)
+    this.nearby = new Float64Array(order.size)
     this.share = new Float64Array(order.neighbour.length)
   }
 
@@ -140,15 +151,15 @@ class RemadePath {
     return this.dipole(null, a, b, a, b)
   }
 
-  /** Volts over the watched pairs, after `unit`. */
-  watched(network: Network): Float64Array {
-    this.spread(network.watchedPivots, this.volts)
-    return overPairs(network, this.volts)
+  /** Volts of the path and of further pivots, after `unit`. */
+  near(pivots: Int32Array): Float64Array {
+    this.spread(pivots, this.nearby)
+    return this.nearby
   }
 
   /** Volts of every unknown, after `unit`. */
   everywhere(): Float64Array {
-    const volts = this.volts.slice()
+    const volts = new Float64Array(this.order.size)
     this.spread(this.order.lastToFirst, volts)
     return volts
   }
@@ -156,6 +167,7 @@ class RemadePath {
   /** From the path to other pivots, where nothing goes in; `pivots` from the last to the first, none left out in between. */
   private spread(pivots: Int32Array, volts: Float64Array) {
     const { onPath, factor } = this
+    for (const k of this.path) volts[k] = this.volts[k]!
     const { first, count, neighbour } = this.order
     const { share } = factor
     for (const k of pivots) {
