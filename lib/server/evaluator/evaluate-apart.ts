@@ -1,11 +1,8 @@
 import type { Worker } from 'node:worker_threads'
-import type { Opened } from '@/diagrams/document/open-circuit'
-import type { Answer } from '@/diagrams/faults/answer'
 import { nextMessage } from './next-message'
 import { sourceThread } from './source-thread'
 import { answerOf, Deaf, type GivenUp } from './thread-answer'
-
-export type Reply = Opened<Answer>
+import type { Reply } from './thread-messages'
 
 /** Questions that may wait for the thread; whoever comes later is told to come again. */
 const mostWaiting = 8

@@ -3,9 +3,7 @@ import { evaluateSteps } from '@/diagrams/evaluate'
 import { openEvaluationRequest } from '@/diagrams/faults/request'
 import type { Steps } from '@/diagrams/faults/steps'
 import { QuestionRunner, type Told } from '@/lib/shared/evaluator/question-runner'
-import type { Reply } from './evaluate-apart'
-
-export type EvaluatorAsk = { do: 'ask'; number: number; input: unknown } | { do: 'drop'; number: number }
+import type { EvaluatorAsk, Reply } from './thread-messages'
 
 /** What the thread runs: the same runner as in the browser, with the door in front, since here nobody has checked the question. */
 const runner = new QuestionRunner<unknown, Reply>(openAndEvaluate, {

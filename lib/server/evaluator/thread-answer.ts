@@ -1,7 +1,6 @@
 import type { Worker } from 'node:worker_threads'
 import type { Told } from '@/lib/shared/evaluator/question-runner'
-import type { Reply } from './evaluate-apart'
-import type { EvaluatorAsk } from './evaluator-thread'
+import type { EvaluatorAsk, Reply } from './thread-messages'
 
 /** Why a question was given up: it took longer than it may, or whoever asked has gone. */
 export type GivenUp = 'too-long' | 'gone'
