@@ -66,7 +66,7 @@ function faultWords(circuit: Circuit, fault: PlantedFault | null): string[] {
   const beside = fault.other === undefined ? '' : `, ${siteName(circuit, `wire:${fault.other}`)}`
   const at = fault.wire === undefined ? '' : `, ${siteName(circuit, `wire:${fault.wire}`)}`
   const size = fault.ohms !== undefined && sized.has(fault.mode) ? ` ${fault.ohms} ohm` : ''
-  return [siteName(circuit, fault.site), `${fault.mode}${size}${beside}${at}`]
+  return [siteName(circuit, fault.site), `${fault.mode.replaceAll('-', ' ')}${size}${beside}${at}`]
 }
 
 /** Modes whose ohms say something: an open one's are as good as any. */
