@@ -5,6 +5,7 @@ import { problemsOf, type Opened } from '../document/open-circuit'
 import { readingSchema, type Reading } from '../document/reading-schema'
 import { refuseReading } from '../solver/legal-reading'
 import { checkOdds, oddsSchema } from './odds-schema'
+import { tooLarge } from './size-limit'
 import { checkSymptoms, symptomsSchema } from './symptom-schema'
 
 export const priorKinds = ['trade', 'even'] as const
@@ -39,6 +40,8 @@ export function openEvaluationRequest(input: unknown): Opened<EvaluationRequest>
     ...problem,
     path: problem.path ? `circuit.${problem.path}` : 'circuit',
   }))
+  const size = problems.length === 0 ? tooLarge(request.circuit) : null
+  if (size) problems.push(size)
   if (problems.length === 0) {
     problems.push(...checkReadings(request.circuit, request.readings))
     if (request.symptoms) problems.push(...checkSymptoms(request.circuit, request.symptoms))
