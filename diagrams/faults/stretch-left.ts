@@ -14,7 +14,8 @@ interface Stretch {
  * at just two points; else null. Points as in the format, a module as its id.
  */
 export function stretchLeft(circuit: Circuit, left: ReadonlySet<string>): [string, string] | null {
-  const stretches = stretchesOf(circuit)
+  let stretches = stretchesByCircuit.get(circuit)
+  if (!stretches) stretchesByCircuit.set(circuit, (stretches = stretchesOf(circuit)))
   const inside = stretches.filter(({ site }) => left.has(site))
   if (inside.length < 2) return null
   const points = new Set(inside.flatMap(({ a, b }) => [a, b]))
@@ -31,20 +32,31 @@ export function stretchLeft(circuit: Circuit, left: ReadonlySet<string>): [strin
 }
 
 function hangTogether(stretches: readonly Stretch[]): boolean {
-  const beside = new Map<string, string[]>()
+  // Union-find: each point leads to another of its piece, the last one to itself.
+  const leader = new Map<string, string>()
+  const pieceOf = (point: string): string => {
+    let at = point
+    for (let next = leader.get(at) ?? at; next !== at; next = leader.get(at) ?? at) at = next
+    leader.set(point, at)
+    return at
+  }
+  let pieces = 0
   for (const { a, b } of stretches) {
-    beside.set(a, [...(beside.get(a) ?? []), b])
-    beside.set(b, [...(beside.get(b) ?? []), a])
+    for (const point of [a, b])
+      if (!leader.has(point)) {
+        leader.set(point, point)
+        pieces++
+      }
+    const [one, other] = [pieceOf(a), pieceOf(b)]
+    if (one === other) continue
+    leader.set(one, other)
+    pieces--
   }
-  const reached = new Set<string>()
-  const queue = [stretches[0]!.a]
-  for (let point = queue.pop(); point !== undefined; point = queue.pop()) {
-    if (reached.has(point)) continue
-    reached.add(point)
-    queue.push(...beside.get(point)!)
-  }
-  return reached.size === beside.size
+  return pieces === 1
 }
+
+/** Asked with every reading, of a document that does not change. */
+const stretchesByCircuit = new WeakMap<Circuit, Stretch[]>()
 
 function stretchesOf(circuit: Circuit): Stretch[] {
   return [
