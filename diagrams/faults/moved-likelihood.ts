@@ -8,6 +8,7 @@ import type { Absent } from './moved-evidence'
 import { atEnd, isMoved } from './moved-reading'
 import type { CellPrediction, PredictionTable } from './prediction-table'
 import type { ReadingScope } from './reading-scope'
+import { accuracyOf } from './tolerance-rule'
 
 /** A fault that comes and goes is there for half of the readings, for all one knows. */
 const present = 0.5
@@ -15,6 +16,8 @@ const present = 0.5
 const asBefore = 0.8
 /** A meter too slow for the fault shows something between this often (a guess). */
 const between = 0.2
+/** Moving the harness leaves the fault as it is this often (a guess). */
+const unprovoked = 0.3
 /** Places of the battery over which the probability is averaged. */
 const steps = 7
 
@@ -55,15 +58,21 @@ export function movedLikelihoods(
           const any = each.reduce((sum, one) => sum + one, 0) / each.length
           return each.map((one) => asBefore * one + (1 - asBefore) * any)
         }
-        const rest = likely('rest').map((one) => present * one + (1 - present) * gone.rest(scale))
-        if (!gone.isMoved) return rest
-        const [low, high] = (['low', 'high'] as const).map((end) =>
-          likely(end).map(
-            (one, c) =>
-              (1 - between) * one + between * gone.passing(own[r]![c]!.typical(there(c)), end, scale),
-          ),
-        )
-        return rest.map((one, c) => (one * (low![c]! * gone.high(scale) + gone.low(scale) * high![c]!)) / 2)
+        const rest = likely('rest')
+        const either = rest.map((one) => present * one + (1 - present) * gone.rest(scale))
+        if (!gone.isMoved) return either
+        const [low, high] = [likely('low'), likely('high')]
+        const stays = gone.rest(scale) * gone.low(scale) * gone.high(scale)
+        return either.map((one, c) => {
+          const passing = (end: 'low' | 'high', figure: number) =>
+            (1 - between) * figure + between * gone.passing(own[r]![c]!.typical(there(c)), end, scale)
+          const swing =
+            (one *
+              (passing('low', low[c]!) * gone.high(scale) + gone.low(scale) * passing('high', high[c]!))) /
+            2
+          const same = present * rest[c]! * low[c]! * high[c]! + (1 - present) * stays
+          return (1 - unprovoked) * swing + unprovoked * same
+        })
       })
     }),
   }
@@ -97,8 +106,11 @@ function endsOf(reading: Reading, cell: CellPrediction, scope: ReadingScope): En
     typical,
     passing: (figure, end, scale) => {
       const value = moved ? reading[end] : 'OL'
+      const { percent, floor } = accuracyOf(reading)
+      const limit = 2 * ((percent / 100) * Math.abs(figure) + floor) + 1e-6
       const width = Math.abs(figure - typical(scale))
-      if (value === 'OL' || !(width > 0) || !Number.isFinite(width)) return 0
+      // Between two figures that the meter cannot tell apart lies nothing.
+      if (typeof value !== 'number' || !(width > limit) || !Number.isFinite(width)) return 0
       const inside = (value - figure) * (value - typical(scale)) <= 0
       return inside ? 1 / width : 0
     },
