@@ -29,6 +29,11 @@ export interface Evidence {
    * one and the same state throughout each condition? Hypothesis −1 is the good circuit.
    */
   fits(hypothesis: number, cell: number, included?: Included): boolean
+  /**
+   * What is to be added to a cell's log because parts off the drawing are the same ones in every reading: worked out
+   * for the few cells that hold the odds. With `still`, as if every reading lay where the cell foretells it.
+   */
+  shared?(hypothesis: number, cell: number, still?: boolean): number
 }
 
 /** Judges every cell against every reading. `skip` holds indices of readings that the odds leave out. */

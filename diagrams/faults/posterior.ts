@@ -30,7 +30,7 @@ export function posteriorOf(
       (_, c) => logPrior[h]![c]! + evidence.logs[h]![c]! + (codes ? codes.cells[h]![c]! : 0),
     ),
   )
-  const good = logNoFault + evidence.goodLog + (codes?.good ?? 0)
+  const good = logNoFault + evidence.goodLog + (codes?.good ?? 0) + shareTolerances(model, evidence, logs)
   let most = good
   for (const list of logs) for (const log of list) most = Math.max(most, log)
   let sum = Math.exp(good - most)
@@ -40,6 +40,33 @@ export function posteriorOf(
     cells: logs.map((list) => list.map((log) => Math.exp(log - most) / sum)),
     logEvidence: most + Math.log(sum),
   }
+}
+
+/** Cells whose odds are worked out with shared tolerances: so many of the likeliest, within so many nats of the best. */
+const looked = 40
+const within = 7
+
+/**
+ * Adds to the likeliest cells what shared tolerances make of their readings, against the good circuit with every
+ * reading where it should be; the others, which hold little, stay as they are. Gives what is to be added to the good
+ * circuit's own.
+ */
+function shareTolerances(model: FaultModel, evidence: Evidence, logs: readonly Float64Array[]): number {
+  if (!evidence.shared) return 0
+  const plain = evidence.shared(-1, 0, true)
+  let best = -Infinity
+  for (const list of logs) for (const log of list) best = Math.max(best, log)
+  const likeliest: { h: number; c: number; log: number }[] = []
+  logs.forEach((list, h) => {
+    // A weak battery scales every reading by itself.
+    if (model.hypotheses[h]!.mode === 'weak') return
+    list.forEach((log, c) => {
+      if (log > best - within) likeliest.push({ h, c, log })
+    })
+  })
+  likeliest.sort((x, y) => y.log - x.log)
+  for (const { h, c } of likeliest.slice(0, looked)) logs[h]![c]! += evidence.shared(h, c) - plain
+  return evidence.shared(-1, 0) - plain
 }
 
 /** ln of each cell's share of the 0.9 that faults have before any reading. */

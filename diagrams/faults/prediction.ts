@@ -2,10 +2,12 @@ import type { Probe } from '../document/reading-schema'
 import {
   at,
   batteryVoltsAt,
+  branchAmps,
   fixedVoltsAt,
   ownShare,
   spreadOfFault,
   theveninOhms,
+  unitCurrentIn,
   unitOfFault,
   unitSiemensOf,
   voltsBetween,
@@ -195,4 +197,64 @@ function reachOf(
     reachFixed: secondOrder * tolerance * reachFixed,
     spread: (tolerance / Math.sqrt(3)) * Math.sqrt(squares),
   }
+}
+
+/**
+ * By how much a reading moves for each branch's ln R, signed: dv/d ln R(k) = i(k)·y(k), and y(k)²/R(k) for ohms. Null
+ * for what is no figure.
+ */
+export function sensitivities(given: Case, settled: Settled, probe: Probe): Float64Array | null {
+  const { network } = given.study
+  switch (probe.kind) {
+    case 'volts':
+      return movesBetween(
+        settled,
+        network.unknownOf.get(probe.red)!,
+        network.unknownOf.get(probe.black)!,
+        voltmeterOhms,
+      )
+    case 'ohms':
+      return movesBetween(
+        settled,
+        network.unknownOf.get(probe.red)!,
+        network.unknownOf.get(probe.black)!,
+        null,
+      )
+    case 'amps': {
+      const branch = network.branchIndex.get(`wire:${probe.wire}/from`)!
+      const { a, b } = network.branches[branch]!
+      const altered = settled.located.branch === branch
+      const siemens = altered ? settled.siemens : settled.located.base.conductance[branch]!
+      const moves = movesBetween(settled, a, b, Infinity)
+      for (let k = 0; k < moves.length; k++) moves[k]! *= siemens
+      moves[branch]! -= branchAmps(given, settled, branch) * (altered ? ownShare(settled, branch) : 1)
+      return moves
+    }
+    default:
+      return null
+  }
+}
+
+/** Of volts between two unknowns under a meter of `meterOhms`, or with null of the ohms between them. */
+function movesBetween(settled: Settled, a: number, b: number, meterOhms: number | null): Float64Array {
+  const { located, scale } = settled
+  const { base } = located
+  const y = unitCurrentIn(settled, a, b)
+  const moves = new Float64Array(base.network.branches.length)
+  const part =
+    meterOhms === null ? 1 : meterOhms === Infinity ? 1 : meterOhms / (meterOhms + at(y, a) - at(y, b))
+  for (const k of base.network.tolerant) {
+    if (base.conductance[k] === 0) continue
+    const { a: from, b: to } = base.network.branches[k]!
+    const moved = at(y, from) - at(y, to)
+    if (moved === 0) continue
+    const altered = k === located.branch
+    const siemens = altered ? settled.siemens : base.conductance[k]!
+    const own = altered ? ownShare(settled, k) : 1
+    const amps = altered
+      ? scale * settled.throughBattery + settled.throughFixed
+      : siemens * (voltsBetween(settled, from, to) - scale * base.emfBattery[k]! - base.emfFixed[k]!)
+    moves[k] = part * own * moved * (meterOhms === null ? siemens * moved : amps)
+  }
+  return moves
 }

@@ -4,6 +4,7 @@ import { chargingRange, restingRange, weakRange, type ScaleRange } from './batte
 import type { CellEvidence, Evidence, Included } from './evidence'
 import type { FaultModel } from './fault-model'
 import { batterySteps, type JudgedReading } from './judged-reading'
+import { sharedLog } from './shared-tolerances'
 import { anyState, type Fits } from './tolerance-rule'
 
 /** Cells this far below the likeliest, in nats of likelihood, get no fine look at the battery. */
@@ -15,6 +16,7 @@ export class WeighedReadings implements Evidence {
   readonly goodLog: number
   readonly logs: readonly Float64Array[]
   private readonly judged: readonly JudgedReading[]
+  private readonly used: readonly number[]
   private readonly firstCell: Int32Array
   private made: CellEvidence[][] | undefined
 
@@ -27,10 +29,8 @@ export class WeighedReadings implements Evidence {
     this.conditions = keys.map((key) => keys.indexOf(key))
     this.judged = readings.map((reading) => model.judged(reading))
     this.firstCell = model.firstCell
-    const flat = this.weigh(
-      [...readings.keys()].filter((r) => !skip.has(r)),
-      model.cellCount,
-    )
+    this.used = [...readings.keys()].filter((r) => !skip.has(r))
+    const flat = this.weigh(this.used, model.cellCount)
     this.goodLog = flat[0]!
     this.logs = model.hypotheses.map(({ cells }, h) =>
       flat.subarray(this.firstCell[h], this.firstCell[h]! + cells.length),
@@ -39,6 +39,31 @@ export class WeighedReadings implements Evidence {
 
   fits(hypothesis: number, cell: number, included?: Included): boolean {
     return this.fitsAt(hypothesis < 0 ? 0 : this.firstCell[hypothesis]! + cell, included)
+  }
+
+  shared(hypothesis: number, cell: number, still = false): number {
+    const at = hypothesis < 0 ? 0 : this.firstCell[hypothesis]! + cell
+    const used = this.used.filter((r) => typeof this.readings[r]!.value === 'number')
+    if (used.length < 2) return 0
+    const { low, high } = this.readings[used[0]!]!.condition.charging ? chargingRange : restingRange
+    return sharedLog(
+      used.map((r) => this.readings[r]!),
+      used.map((r) => this.judged[r]!),
+      at,
+      low + ((this.likeliestStep(at, used) + 0.5) / batterySteps) * (high - low),
+      still,
+    )
+  }
+
+  private likeliestStep(cell: number, used: readonly number[]): number {
+    let best = 0
+    let most = -Infinity
+    for (let i = 0; i < batterySteps; i++) {
+      let sum = 0
+      for (const r of used) sum += this.judged[r]!.logs[this.judged[r]!.row[cell]!]![i]!
+      if (sum > most) [most, best] = [sum, i]
+    }
+    return best
   }
 
   get good(): CellEvidence {
