@@ -4,8 +4,8 @@ import type { Bin } from './split'
 /** Sites under this probability are not compared. */
 const leastProbability = 0.003
 const mostSites = 24
-/** Two sites look alike while no reading parts more than this of one from the other. */
-const alikeOverlap = 0.05
+/** Two sites look alike while no reading parts more than this of one from the other: one severity of a dozen is a hair. */
+const alikeOverlap = 0.1
 
 export interface AlikeSearch {
   /** Takes one reading's outcomes into account. */

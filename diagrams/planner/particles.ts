@@ -16,16 +16,18 @@ export const noFaultUnit = ''
 
 /** Hypotheses under this probability are left out of planning. */
 const leastMass = 2e-5
-/** Severities that all hypotheses share, about: the fewer are left, the more finely each is looked at. */
+/** Severities that all likely hypotheses share, about: the fewer are left, the more finely each is looked at. */
 const shared = 160
 /** Of one hypothesis at most. */
 const mostMarks = 12
+/** Severities within a cell: the same for every place, or two that look alike would be told apart by a hair. */
+const partsOfCell = 4
 /** Below this one severity is enough, from there two, and three where it is likely. */
 const coarseBelow = 0.0005
 const fineFrom = 0.01
 
 /**
- * Each hypothesis at severities that part its probability evenly, the likelier it is, the more of them. They
+ * Each hypothesis at severities that part its probability evenly; the fewer are likely, the more of them. They
  * lie anywhere in a cell, not in its middle: two places whose severities are not known exactly must not look
  * told apart by figures that only the choice of severities makes different. Weights sum to nearly 1.
  */
@@ -34,16 +36,14 @@ export function particlesOf(model: FaultModel, posterior: Posterior): Particle[]
     { hypothesis: null, site: noFaultUnit, severity: 0, weight: posterior.noFault },
   ]
   const masses = posterior.cells.map((cells) => cells.reduce((sum, cell) => sum + cell, 0))
-  // By the root, so that many small ones are not all left with one.
-  let roots = 0
-  for (const mass of masses) if (mass >= coarseBelow) roots += Math.sqrt(mass)
+  const likely = masses.filter((mass) => mass >= fineFrom).length
+  // The same for all that are likely: two places that nothing tells apart must stand for the same severities.
+  const finest = Math.max(3, Math.min(mostMarks, Math.round(shared / Math.max(1, likely))))
   model.hypotheses.forEach((hypothesis, h) => {
     const mass = masses[h]!
     if (mass < leastMass) return
-    const share = Math.round((shared * Math.sqrt(mass)) / roots)
     const fixed = hypothesis.cells.every(({ low, high }) => low === high)
-    const least = mass < fineFrom ? 2 : 3
-    const marks = fixed || mass < coarseBelow ? 1 : Math.max(least, Math.min(mostMarks, share))
+    const marks = fixed || mass < coarseBelow ? 1 : mass < fineFrom ? 2 : finest
     const cells = posterior.cells[h]!
     let c = 0
     let before = 0
@@ -51,10 +51,13 @@ export function particlesOf(model: FaultModel, posterior: Posterior): Particle[]
       const mark = ((m + 0.5) / marks) * mass
       while (c < cells.length - 1 && before + cells[c]! < mark) before += cells[c++]!
       const { low, high } = hypothesis.cells[c]!
-      const inside = cells[c]! > 0 ? Math.min(1, (mark - before) / cells[c]!) : 0.5
+      const part = cells[c]! > 0 ? (mark - before) / cells[c]! : 0.5
+      const inside = (Math.min(partsOfCell - 1, Math.floor(partsOfCell * part)) + 0.5) / partsOfCell
       const even = hypothesis.mode === 'weak' || low === 0
       const severity = even ? low + inside * (high - low) : low * (high / low) ** inside
-      particles.push({ hypothesis, site: hypothesis.site, severity, weight: mass / marks })
+      const last = particles.at(-1)!
+      if (last.hypothesis === hypothesis && last.severity === severity) last.weight += mass / marks
+      else particles.push({ hypothesis, site: hypothesis.site, severity, weight: mass / marks })
     }
   })
   return particles
