@@ -4,6 +4,7 @@ import { codeEvidence } from './faults/code-evidence'
 import { weighReadings, type Evidence } from './faults/evidence'
 import { explain } from './faults/explain'
 import { faultModelSteps, type FaultModel } from './faults/fault-model'
+import { modeAnswers } from './faults/mode-answers'
 import { misfitOf } from './faults/misfit'
 import { weighMoved } from './faults/moved-evidence'
 import { swings } from './faults/moved-reading'
@@ -66,6 +67,7 @@ export function* evaluateSteps(request: EvaluationRequest): Steps<Answer> {
 
   const sites = sitesOf(circuit).map((site) => site.id)
   const probabilities = siteProbabilities(model, posterior)
+  const modes = modeAnswers(model, posterior, evidence)
   const cleared = clearances(model, full, readings, sites)
   const judged = sayMoved(circuit, readings, judgeReadings(model, readings, full), scope)
   const located = locatedGroup(probabilities, plan.inseparable)
@@ -78,7 +80,14 @@ export function* evaluateSteps(request: EvaluationRequest): Steps<Answer> {
   )
   const siteAnswers = sites
     .map((site) =>
-      siteAnswer(site, model, posterior, probabilities.get(site) ?? 0, cleared.get(site)!, outcome, located),
+      siteAnswer(
+        site,
+        modes.get(site) ?? [],
+        probabilities.get(site) ?? 0,
+        cleared.get(site)!,
+        outcome,
+        located,
+      ),
     )
     .toSorted((a, b) => b.probability - a.probability)
   const answer = explain(model.circuit, readings, {
@@ -128,8 +137,7 @@ function locatedGroup(
 
 function siteAnswer(
   site: string,
-  model: FaultModel,
-  posterior: Posterior,
+  modes: ModeAnswer[],
   probability: number,
   clearance: Clearance,
   outcome: Outcome,
@@ -143,45 +151,6 @@ function siteAnswer(
     firm: good && clearance.firm,
     clearedBy: good ? clearance.clearedBy : [],
     probability,
-    modes: modesOf(site, model, posterior),
+    modes,
   }
-}
-
-/** The ways in which a site may be at fault, most probable first, with the most likely severity of each. */
-function modesOf(site: string, model: FaultModel, posterior: Posterior): ModeAnswer[] {
-  const found = new Map<string, ModeAnswer & { heaviest: number; heaviestVariant: number }>()
-  model.hypotheses.forEach((hypothesis, h) => {
-    if (hypothesis.site !== site) return
-    const key = `${hypothesis.mode} ${hypothesis.other}`
-    const entry = found.get(key) ?? {
-      mode: hypothesis.mode,
-      probability: 0,
-      ohms: null,
-      other: hypothesis.other,
-      blows: hypothesis.blows,
-      heaviest: -1,
-      heaviestVariant: -1,
-    }
-    found.set(key, entry)
-    let variant = 0
-    hypothesis.cells.forEach((cell, c) => {
-      const mass = posterior.cells[h]![c]!
-      variant += mass
-      if (mass <= entry.heaviest) return
-      entry.heaviest = mass
-      entry.ohms = hasOhms(hypothesis.mode) ? Math.sqrt(cell.low * cell.high) : null
-    })
-    entry.probability += variant
-    if (variant > entry.heaviestVariant) {
-      entry.heaviestVariant = variant
-      entry.blows = hypothesis.blows
-    }
-  })
-  return [...found.values()]
-    .toSorted((a, b) => b.probability - a.probability)
-    .map(({ mode, probability, ohms, other, blows }) => ({ mode, probability, ohms, other, blows }))
-}
-
-function hasOhms(mode: ModeAnswer['mode']): boolean {
-  return mode === 'resistive' || mode.startsWith('short')
 }

@@ -34,6 +34,8 @@ export interface Evidence {
    * for the few cells that hold the odds. With `still`, as if every reading lay where the cell foretells it.
    */
   shared?(hypothesis: number, cell: number, still?: boolean): number
+  /** How far between a cell's low and high severity the readings lie, 0 to 1, on its logarithmic scale. */
+  within?(hypothesis: number, cell: number): number
 }
 
 /** Judges every cell against every reading. `skip` holds indices of readings that the odds leave out. */

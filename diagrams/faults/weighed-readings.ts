@@ -5,7 +5,7 @@ import type { CellEvidence, Evidence, Included } from './evidence'
 import type { FaultModel } from './fault-model'
 import { batterySteps, type JudgedReading } from './judged-reading'
 import { sharedLog } from './shared-tolerances'
-import { anyState, type Fits } from './tolerance-rule'
+import { accuracyOf, anyState, type Fits } from './tolerance-rule'
 
 /** Cells this far below the likeliest, in nats of likelihood, get no fine look at the battery. */
 const coarseFrom = 30
@@ -53,6 +53,33 @@ export class WeighedReadings implements Evidence {
       low + ((this.likeliestStep(at, used) + 0.5) / batterySteps) * (high - low),
       still,
     )
+  }
+
+  /** By least squares over readings that the cell explains, each taken as straight between the cell's ends. */
+  within(hypothesis: number, cell: number): number {
+    const at = this.firstCell[hypothesis]! + cell
+    let [along, square] = [0, 0]
+    for (const r of this.used) {
+      const { value, condition } = this.readings[r]!
+      const { table, misfits } = this.judged[r]!
+      const { first, low, high } = table.states
+      if (typeof value !== 'number' || misfits[at] === 1) continue
+      const group = this.used.filter((u) => this.readings[u]!.condition.charging === condition.charging)
+      const range = condition.charging ? chargingRange : restingRange
+      const scale =
+        range.low + ((this.likeliestStep(at, group) + 0.5) / batterySteps) * (range.high - range.low)
+      let entry = first[at]!
+      while (entry < first[at + 1]! && low[entry]! < 0) entry++
+      if (entry === first[at + 1]) continue
+      const [a, b] = [table.bounds[low[entry]!]!, table.bounds[high[entry]!]!]
+      const [from, to] = [scale * a.battery + a.fixed, scale * b.battery + b.fixed]
+      const { percent, floor } = accuracyOf(this.readings[r]!)
+      const variance =
+        (((percent / 100) * Math.abs(value) + floor) / 2) ** 2 + ((a.spread + b.spread) / 2) ** 2
+      along += ((to - from) * (value - from)) / variance
+      square += (to - from) ** 2 / variance
+    }
+    return square > 0 ? Math.min(1, Math.max(0, along / square)) : 0.5
   }
 
   private likeliestStep(cell: number, used: readonly number[]): number {
