@@ -29,10 +29,10 @@ describe('the evaluator behind the address', () => {
   })
 
   it('holds up nobody while it works on a circuit that is too much for it, and says so', async () => {
-    const request = { circuit: randomCircuit(3, 60) }
+    const request = { circuit: randomCircuit(3, 40) }
     const delay = monitorEventLoopDelay({ resolution: 10 })
     delay.enable()
-    const result = await evaluateRequest(who.context, request, { milliseconds: 1500 })
+    const result = await evaluateRequest(who.context, request, { milliseconds: 300 })
     delay.disable()
     expect(result.ok ? '' : result.failure.code).toBe('evaluation-too-long')
     expect(delay.max / 1e6).toBeLessThan(700)
@@ -44,8 +44,8 @@ describe('the evaluator behind the address', () => {
     const before = await evaluatorReady()
     const result = await evaluateRequest(
       who.context,
-      { circuit: randomCircuit(4, 60) },
-      { milliseconds: 500 },
+      { circuit: randomCircuit(4, 40) },
+      { milliseconds: 300 },
     )
     expect(result.ok ? '' : result.failure.code).toBe('evaluation-too-long')
     expect(await evaluatorReady()).toBe(before)
@@ -54,8 +54,8 @@ describe('the evaluator behind the address', () => {
   it('leaves a question whose asker has gone, working on it or still waiting, and answers the next', async () => {
     const [first, second] = [new AbortController(), new AbortController()]
     const replies = [
-      evaluateApart({ circuit: randomCircuit(5, 60) }, 30_000, first.signal),
-      evaluateApart({ circuit: randomCircuit(6, 60) }, 30_000, second.signal),
+      evaluateApart({ circuit: randomCircuit(3, 40) }, 30_000, first.signal),
+      evaluateApart({ circuit: randomCircuit(6, 40) }, 30_000, second.signal),
       evaluateApart(exampleRequest(), 30_000),
     ]
     await new Promise((resolve) => setTimeout(resolve, 300))
@@ -69,7 +69,7 @@ describe('the evaluator behind the address', () => {
   })
 
   it('starts a thread anew that has died over a question, for the next one', async () => {
-    const asked = evaluateApart({ circuit: randomCircuit(7, 60) }, 30_000)
+    const asked = evaluateApart({ circuit: randomCircuit(7, 40) }, 30_000)
     const thread = await evaluatorReady()
     await new Promise((resolve) => setTimeout(resolve, 200))
     await Promise.all([expect(asked).rejects.toThrow(/thread ended/), thread.terminate()])
