@@ -55,31 +55,44 @@ export class WeighedReadings implements Evidence {
     )
   }
 
-  /** By least squares over readings that the cell explains, each taken as straight between the cell's ends. */
+  /** By least squares over readings that the cell explains, each taken as straight between the cell's ends, at any battery. */
   within(hypothesis: number, cell: number): number {
     const at = this.firstCell[hypothesis]! + cell
-    let [along, square] = [0, 0]
-    for (const r of this.used) {
-      const { value, condition } = this.readings[r]!
-      const { table, misfits } = this.judged[r]!
-      const { first, low, high } = table.states
-      if (typeof value !== 'number' || misfits[at] === 1) continue
-      const group = this.used.filter((u) => this.readings[u]!.condition.charging === condition.charging)
-      const range = condition.charging ? chargingRange : restingRange
-      const scale =
-        range.low + ((this.likeliestStep(at, group) + 0.5) / batterySteps) * (range.high - range.low)
-      let entry = first[at]!
-      while (entry < first[at + 1]! && low[entry]! < 0) entry++
-      if (entry === first[at + 1]) continue
-      const [a, b] = [table.bounds[low[entry]!]!, table.bounds[high[entry]!]!]
-      const [from, to] = [scale * a.battery + a.fixed, scale * b.battery + b.fixed]
-      const { percent, floor } = accuracyOf(this.readings[r]!)
-      const variance =
-        (((percent / 100) * Math.abs(value) + floor) / 2) ** 2 + ((a.spread + b.spread) / 2) ** 2
-      along += ((to - from) * (value - from)) / variance
-      square += (to - from) ** 2 / variance
+    const explained = this.used.flatMap((r) => this.straightIn(r, at) ?? [])
+    let [weights, sum] = [0, 0]
+    for (let i = 0; i < batterySteps; i++) {
+      let [along, square, off] = [0, 0, 0]
+      for (const { ends, range, value, variance } of explained) {
+        const scale = range.low + ((i + 0.5) / batterySteps) * (range.high - range.low)
+        const from = scale * ends[0].battery + ends[0].fixed
+        const slope = scale * ends[1].battery + ends[1].fixed - from
+        along += (slope * (value - from)) / variance
+        square += slope ** 2 / variance
+        off += (value - from) ** 2 / variance
+      }
+      if (square === 0) return 0.5
+      const part = Math.min(1, Math.max(0, along / square))
+      const weight = Math.exp(-(off - 2 * part * along + part ** 2 * square) / 2)
+      weights += weight
+      sum += weight * part
     }
-    return square > 0 ? Math.min(1, Math.max(0, along / square)) : 0.5
+    return weights > 0 ? sum / weights : 0.5
+  }
+
+  private straightIn(r: number, cell: number) {
+    const reading = this.readings[r]!
+    const { table, misfits } = this.judged[r]!
+    const { first, low, high } = table.states
+    const { value } = reading
+    if (typeof value !== 'number' || misfits[cell] === 1) return null
+    let entry = first[cell]!
+    while (entry < first[cell + 1]! && low[entry]! < 0) entry++
+    if (entry === first[cell + 1]) return null
+    const ends = [table.bounds[low[entry]!]!, table.bounds[high[entry]!]!] as const
+    const { percent, floor } = accuracyOf(reading)
+    const variance =
+      (((percent / 100) * Math.abs(value) + floor) / 2) ** 2 + ((ends[0].spread + ends[1].spread) / 2) ** 2
+    return { ends, value, variance, range: reading.condition.charging ? chargingRange : restingRange }
   }
 
   private likeliestStep(cell: number, used: readonly number[]): number {
