@@ -14,8 +14,8 @@ export interface BetweenPlan {
   next: PlannedReading[]
 }
 
-/** A reading tells places apart when it is expected to bring this much of what parts them, bits. */
-const partsFromBits = 0.05
+/** A reading tells places apart when it is expected to bring this much of what parts them, bits: more than a hair. */
+const partsFromBits = 0.1
 
 /**
  * Readings that would settle between places, as if the fault were at one of them, each as likely as the
