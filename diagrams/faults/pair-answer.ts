@@ -108,11 +108,11 @@ function ohmsOf({ member: { mode }, low, high }: Part): number | null {
 /** Whether one fault alone, at these severities, gives a reading. */
 function explains(model: FaultModel, evidence: Evidence, part: Part, reading: number): boolean {
   const { hypotheses } = part.member
-  if (hypotheses.length === 0) return evidence.good.fits[reading]!.size > 0
+  const only = (one: number) => one === reading
+  if (hypotheses.length === 0) return evidence.fits(-1, 0, only)
   return hypotheses.some((h) =>
     model.hypotheses[h]!.cells.some(
-      (cell, c) =>
-        cell.low <= part.high && cell.high >= part.low && evidence.cells[h]![c]!.fits[reading]!.size > 0,
+      (cell, c) => cell.low <= part.high && cell.high >= part.low && evidence.fits(h, c, only),
     ),
   )
 }

@@ -1,5 +1,5 @@
 import type { Reading } from '../document/reading-schema'
-import type { CellEvidence, Evidence } from './evidence'
+import type { Evidence } from './evidence'
 import type { FaultModel } from './fault-model'
 import { hiddenPairs, showingMembers, type PairMember, type WeightOf } from './pair-member'
 
@@ -11,9 +11,12 @@ export interface CandidatePair {
   missing: number
 }
 
+/** On the largest circuits the rarest faults are not paired: every two of these are compared. */
+const mostMembers = 1500
+
 /**
  * The pairs most worth solving, at most so many: those come first of which each explains what the other does
- * not, the likelier before the others. The last fifth of the room is kept for pairs that show only together.
+ * not, the likelier before the others.
  */
 export function candidatePairs(
   model: FaultModel,
@@ -24,43 +27,60 @@ export function candidatePairs(
 ): CandidatePair[] {
   const shown = showingMembers(model, weightOf)
   const scale = 1 / shown.reduce((sum, member) => sum + member.share, 0)
-  const members = shown.map((member) => ({ ...member, share: scale * member.share }))
+  const members = shown
+    .map((member) => ({ ...member, share: scale * member.share }))
+    .toSorted((a, b) => b.share - a.share)
+    .slice(0, mostMembers)
   const masks = new MaskList(readings.length)
   const masksOf = members.map((member) =>
-    widest(member.hypotheses.flatMap((h) => evidence.cells[h]!.map(explained))).map((mask) =>
-      masks.number(mask),
-    ),
+    widest(
+      member.hypotheses.flatMap((h) =>
+        model.hypotheses[h]!.cells.map((_, c) => explainedBy(evidence, h, c, readings.length)),
+      ),
+    ).map((mask) => masks.number(mask)),
   )
   const missing = masks.missingTogether()
-  const ranked: CandidatePair[] = []
+  const foremost = new Foremost(most)
   for (let i = 0; i < members.length; i++)
     for (let j = i + 1; j < members.length; j++) {
       if (!mayStandTogether(members[i]!, members[j]!)) continue
       let fewest = readings.length
       for (const x of masksOf[i]!) for (const y of masksOf[j]!) fewest = Math.min(fewest, missing[x]![y]!)
-      ranked.push({ a: members[i]!, b: members[j]!, missing: fewest })
+      foremost.add(members[i]!, members[j]!, fewest)
     }
-  const hidden = hiddenPairs(model, weightOf, scale).map(([a, b]) => ({ a, b, missing: readings.length }))
-  const room = Math.max(Math.ceil(0.8 * most), most - hidden.length)
-  return [...foremost(ranked, room), ...foremost(hidden, most - Math.min(room, ranked.length))]
+  return foremost.list()
 }
 
-/** The first so many by readings explained, then by odds. */
-function foremost(pairs: readonly CandidatePair[], most: number): CandidatePair[] {
-  const odds = ({ a, b }: CandidatePair) => a.share * b.share
-  const byMissing = new Map<number, CandidatePair[]>()
-  for (const pair of pairs) {
-    const list = byMissing.get(pair.missing)
-    if (list) list.push(pair)
-    else byMissing.set(pair.missing, [pair])
+/** Pairs that show only together, likelier ones first: asked where no other pair explains the readings. */
+export function hiddenCandidates(model: FaultModel, weightOf: WeightOf, missing: number): CandidatePair[] {
+  const shown = showingMembers(model, weightOf)
+  const scale = 1 / shown.reduce((sum, member) => sum + member.share, 0)
+  const pairs = hiddenPairs(model, weightOf, scale)
+  const foremost = new Foremost(Math.max(1, pairs.length))
+  for (const [a, b] of pairs) foremost.add(a, b, missing)
+  return foremost.list()
+}
+
+/** The first so many pairs by readings explained, then by odds; never holds many more. */
+class Foremost {
+  private kept: CandidatePair[] = []
+  /** What explains less than this is behind enough others already. */
+  private limit = Infinity
+
+  constructor(private readonly most: number) {}
+
+  add(a: PairMember, b: PairMember, missing: number) {
+    if (missing > this.limit) return
+    this.kept.push({ a, b, missing })
+    if (this.kept.length < 4 * this.most) return
+    this.kept = this.list()
+    this.limit = this.kept.at(-1)!.missing
   }
-  const found: CandidatePair[] = []
-  for (const missing of [...byMissing.keys()].toSorted((x, y) => x - y)) {
-    if (found.length >= most) break
-    const list = byMissing.get(missing)!.toSorted((x, y) => odds(y) - odds(x))
-    found.push(...list.slice(0, most - found.length))
+
+  list(): CandidatePair[] {
+    const odds = ({ a, b }: CandidatePair) => a.share * b.share
+    return this.kept.toSorted((x, y) => x.missing - y.missing || odds(y) - odds(x)).slice(0, this.most)
   }
-  return found
 }
 
 /** A place has one fault, and a branch is altered once. */
@@ -71,11 +91,11 @@ function mayStandTogether(a: PairMember, b: PairMember): boolean {
   return !(a.mode === 'short-to-wire' && b.mode === 'short-to-wire' && a.other === b.site.slice(5))
 }
 
-function explained(cell: CellEvidence): Uint32Array {
-  const mask = new Uint32Array(Math.ceil(cell.fits.length / 32))
-  cell.fits.forEach((fits, r) => {
-    if (fits.size > 0) mask[r >> 5]! |= 1 << (r & 31)
-  })
+/** The readings that a cell gives, each taken by itself. */
+function explainedBy(evidence: Evidence, hypothesis: number, cell: number, readings: number): Uint32Array {
+  const mask = new Uint32Array(Math.ceil(readings / 32))
+  for (let r = 0; r < readings; r++)
+    if (evidence.fits(hypothesis, cell, (one) => one === r)) mask[r >> 5]! |= 1 << (r & 31)
   return mask
 }
 

@@ -32,7 +32,7 @@ export function askedReadings(
       range: reading.condition.charging ? chargingRange : restingRange,
     }),
   )
-  const agrees = (r: number) => Math.sign(evidence.good.fits[r]!.size)
+  const agrees = (r: number) => Number(evidence.fits(-1, 0, (one) => one === r))
   return asked.toSorted((x, y) => agrees(x.number) - agrees(y.number))
 }
 

@@ -65,7 +65,7 @@ function kindKey({ site, mode, other, wire }: FaultKind | Hypothesis): string {
 }
 
 /** Opens that nobody notices, because current has another way: beyond this many they are not paired. */
-const mostHidden = 40
+const mostHidden = 30
 const showsAtVolts = 0.4
 
 /**

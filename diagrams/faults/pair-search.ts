@@ -2,9 +2,10 @@ import type { Reading } from '../document/reading-schema'
 import { weighReadings, type Evidence } from './evidence'
 import type { FaultModel } from './fault-model'
 import { logSum } from './log-sum'
-import { BoxModel, comesToRest, halvesOf, mayGive, spreadOf, wholeBox, type PairBox } from './pair-box'
+import { BoxModel, comesToRest, mayGive, wholeBox, type PairBox } from './pair-box'
+import { halvesOf, spreadOf } from './pair-halves'
 import { askedReadings, type AskedReading } from './pair-corner'
-import { candidatePairs, type CandidatePair } from './pair-candidates'
+import { candidatePairs, hiddenCandidates, type CandidatePair } from './pair-candidates'
 import type { PairMember, WeightOf } from './pair-member'
 import { PairSolver } from './pair-solver'
 import type { ReportEvidence } from './report-evidence'
@@ -51,13 +52,30 @@ export function* searchPairs(
 ): Steps<PairSearch> {
   const solver = new PairSolver(model)
   const asked = askedReadings(model, evidence, readings)
-  const candidates = candidatePairs(model, evidence, readings, weightOf, mostPairs)
+  const prior = (member: PairMember) => reportedOf(member, told)
+  const fitting = (candidates: readonly CandidatePair[]) =>
+    boxesThatFit(solver, candidates, readings, asked, prior)
+  let boxes = yield* fitting(candidatePairs(model, evidence, readings, weightOf, mostPairs))
+  if (boxes.length === 0) {
+    solver.spent = 0
+    boxes = yield* fitting(hiddenCandidates(model, weightOf, readings.length))
+  }
+  boxes.sort((x, y) => y.log - x.log)
+  return { solver, boxes, logEvidence: logSum(boxes.map((box) => box.log)) }
+}
+
+function* boxesThatFit(
+  solver: PairSolver,
+  candidates: readonly CandidatePair[],
+  readings: readonly Reading[],
+  asked: readonly AskedReading[],
+  prior: (member: PairMember) => number,
+): Steps<FittingBox[]> {
   let open: PairBox[] = []
   for (const [c, candidate] of candidates.entries()) {
     if (solver.spent > searchPart * work) break
     if (c % portion === 0) yield stepOf(solver)
-    for (const box of wholeBoxes(solver, candidate, (member) => reportedOf(member, told)))
-      if (mayGive(solver, box, asked)) open.push(box)
+    for (const box of wholeBoxes(solver, candidate, prior)) if (mayGive(solver, box, asked)) open.push(box)
   }
   const found: FittingBox[] = []
   let weighed = weigh(solver, open, readings, asked)
@@ -77,8 +95,7 @@ export function* searchPairs(
     }
     weighed = weigh(solver, open, readings, asked)
   }
-  found.sort((x, y) => y.log - x.log)
-  return { solver, boxes: found, logEvidence: logSum(found.map((box) => box.log)) }
+  return found
 }
 
 /** Pairs or boxes between two looks at whether something newer is asked. */
