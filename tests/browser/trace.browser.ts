@@ -5,6 +5,7 @@ import { describe, expect, it } from 'vitest'
 import { pointName } from '@/diagrams/document/points'
 import type { Probe, Reading, ReadingValue } from '@/diagrams/document/reading-schema'
 import { evaluate } from '@/diagrams/evaluate'
+import type { Odds } from '@/diagrams/faults/odds-schema'
 import { samples } from '@/diagrams/samples/all-samples'
 import { measure } from '@/diagrams/solver/meter'
 import type { PlantedFault } from '@/diagrams/solver/planted-fault'
@@ -45,9 +46,10 @@ describe('a trace from a trouble code to a proved repair', () => {
     after?: (readings: number) => Promise<unknown>,
   ): Promise<Reading[]> {
     const readings: Reading[] = []
+    const odds = await oddsOf(page)
     for (;;) {
       await page.locator('[data-outcome="narrowed"], [data-outcome="located"]').first().waitFor()
-      const answer = evaluate({ circuit, readings, codes: [codeText], priors: 'trade' })
+      const answer = evaluate({ circuit, readings, codes: [codeText], priors: 'trade', odds })
       await page.locator(`[data-outcome="${answer.outcome}"]`).first().waitFor()
       if (answer.outcome === 'located' || readings.length >= most) return readings
       const [next] = answer.next
@@ -279,9 +281,10 @@ describe('a trace from a trouble code to a proved repair', () => {
     const { page, context } = await test.visit()
     await startTrace(page)
     await page.locator('[data-outcome="narrowed"]').first().waitFor()
+    const odds = await oddsOf(page)
     await page.route('**/api/v1/traces/**', (route) => route.abort())
     await page.getByRole('button', { name: 'Set the meter for this' }).click()
-    const [next] = evaluate({ circuit, readings: [], codes: [codeText], priors: 'trade' }).next
+    const [next] = evaluate({ circuit, readings: [], codes: [codeText], priors: 'trade', odds }).next
     if (!next) throw new Error('the planner has nothing to ask')
     await enter(page, shown(probeOf(next)))
     await page.getByText('Offline, 1 reading kept on this tablet').first().waitFor()
@@ -297,6 +300,14 @@ describe('a trace from a trouble code to a proved repair', () => {
     await context.close()
   })
 })
+
+/** The odds of the organisation that the trace on the page starts from. */
+async function oddsOf(page: Page): Promise<Odds | undefined> {
+  const id = /\/traces\/([0-9a-f-]{36})/.exec(page.url())?.[1]
+  const answered = await page.request.get(`/api/v1/traces/${id}`)
+  const trace = (await answered.json()) as { odds: Odds | null }
+  return trace.odds ?? undefined
+}
 
 /** Size of a picture and what it is painted with, as the browser itself decodes it. */
 async function look(page: Page, file: string) {
