@@ -5,6 +5,7 @@ import type { CellEvidence, Evidence } from './evidence'
 import type { FaultModel } from './fault-model'
 import type { Hypothesis } from './hypothesis'
 import { plainEvidence } from './plain-evidence'
+import { absentCells, type Absent } from './moved-absent'
 import { movedLikelihoods } from './moved-likelihood'
 import { atEnd, halves, isMoved } from './moved-reading'
 import type { CellPrediction, PredictionTable } from './prediction-table'
@@ -59,21 +60,6 @@ export function weighMoved(
       ),
     ),
   )
-}
-
-/** Where a fault is while it is absent: the good circuit, or the fuses that it has blown before. */
-export type Absent = { cells: readonly (readonly [number, number])[] } | 'anything'
-
-/** Per hypothesis. Two fuses blown and nothing else is no fault that the model holds, so nothing is foretold of it. */
-function absentCells(model: FaultModel): Absent[] {
-  return model.hypotheses.map(({ blows }) => {
-    if (blows.length === 0) return { cells: [] }
-    if (blows.length > 1) return 'anything'
-    const h = model.hypotheses.findIndex(
-      (other) => other.site === `part:${blows[0]}` && other.mode === 'blown',
-    )
-    return h < 0 ? { cells: [] } : { cells: model.hypotheses[h]!.cells.map((_, c) => [h, c] as const) }
-  })
 }
 
 /** What must be possible for a reading: its value; moved, each of its figures from above and from below. */
