@@ -131,3 +131,12 @@ export function calibrationError(steps: readonly Step[]): number {
   }
   return bins.reduce((sum, { claimed, right }) => sum + Math.abs(claimed - right), 0) / steps.length
 }
+
+/** The error that chance alone would give claims that are exactly right: so many traces can show no less. */
+export function calibrationByChance(steps: readonly Step[], random: Random): number {
+  const rounds = 100
+  let sum = 0
+  for (let i = 0; i < rounds; i++)
+    sum += calibrationError(steps.map(({ top }) => ({ top, right: random.chance(top) })))
+  return sum / rounds
+}
