@@ -167,8 +167,8 @@ describe('one fault', () => {
         `${count.other} times another one, ${count.two} taken for two faults`,
     )
     expect(noticed).toBeGreaterThan(5 * rounds)
-    expect(count.named).toBeGreaterThan(0.5 * noticed)
-    expect(count.two).toBeLessThan(0.35 * noticed)
+    expect(count.named).toBeGreaterThan(0.7 * noticed)
+    expect(count.two).toBeLessThan(0.2 * noticed)
   }, 600_000)
 })
 
