@@ -43,8 +43,8 @@ function uselessWords({ method, reach, low, high }: FaultFraction, lengthMetres:
   const wire = `${metresWords(lengthMetres, Math.round)} of wire`
   const better =
     method === 'both-drops' || method === 'drop'
-      ? 'A larger current or a finer millivolt range would.'
-      : 'Millivolts along the wire at a known current would.'
+      ? 'A larger current or a finer millivolt range would say it.'
+      : 'Millivolts along the wire at a known current would say it.'
   return method === 'one-end'
     ? `One reading in ohms leaves the whole ${wire}. ${better}`
     : `These readings are good to give or take ${metresWords(metres, Math.ceil)} on ${wire}: they do not say where the short lies. ${better}`

@@ -88,10 +88,10 @@ export function DistanceFields({
             and read the volts from that end to the other open one. From both ends in turn it is surest.
           </p>
           <div className="grid gap-2 tablet:grid-cols-2">
-            {field('nearMillivolts', `Fed at ${from}`, 'mV')}
-            {field('nearAmps', 'Current then', 'A')}
-            {field('farMillivolts', `Fed at ${to}`, 'mV')}
-            {field('farAmps', 'Current then', 'A')}
+            {field('nearMillivolts', `Drop, fed at ${from}`, 'mV')}
+            {field('nearAmps', `Current fed at ${from}`, 'A')}
+            {field('farMillivolts', `Drop, fed at ${to}`, 'mV')}
+            {field('farAmps', `Current fed at ${to}`, 'A')}
             {field('millivoltsGoodTo', 'The meter is good to', 'mV')}
           </div>
         </>

@@ -38,7 +38,7 @@ export function DistanceToFault({
         title={`Distance to the fault: ${siteTitle(circuit, `wire:${short.wire}`)}`}
         className="max-w-2xl"
       >
-        {known.ok && (
+        {known.ok && known.value.useful && (
           <p className="mb-3 border-b border-line pb-3">
             <b>
               {known.value.says} By {known.value.readings.join(', ')} of this trace.
