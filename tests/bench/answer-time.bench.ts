@@ -1,23 +1,16 @@
-import { controlCombinations } from '@/diagrams/document/condition'
 import type { Circuit } from '@/diagrams/document/circuit-schema'
-import { restCondition } from '@/diagrams/document/condition-schema'
-import { readingSchema, type Reading } from '@/diagrams/document/reading-schema'
-import { sitesOf } from '@/diagrams/document/sites'
+import type { Reading } from '@/diagrams/document/reading-schema'
 import { evaluate } from '@/diagrams/evaluate'
-import { weighReadings } from '@/diagrams/faults/evidence'
+import { weighReadings } from '@/diagrams/faults/weighed-readings'
 import { faultModelOf } from '@/diagrams/faults/fault-model'
 import { posteriorOf } from '@/diagrams/faults/posterior'
-import { candidateReadings } from '@/diagrams/planner/candidates'
 import { planNext } from '@/diagrams/planner/plan-next'
-import { buildNetwork } from '@/diagrams/solver/build-network'
 import { harnessOfSize } from '../support/harness-of-size'
-import { plantFault } from '../support/plant-fault'
-import { seededRandom } from '../support/random'
-import { Vehicle } from '../support/vehicle'
 import { argument } from './support/arguments'
 import { exponentOf, median, processorMs, quantile } from './support/figures'
 import { report } from './support/report'
 import { Sweep } from './support/sweep'
+import { tenReadings } from './support/ten-readings'
 
 /**
  * How long an answer takes and how it grows with the circuit: ten readings in six conditions of a faulty
@@ -27,37 +20,6 @@ const largest = argument('largest', 400)
 const sizes = [50, 100, 200, 400].filter((size) => size <= largest)
 const harnessesPerSize = argument('harnesses', 4)
 const vehiclesPerHarness = argument('vehicles', 5)
-const readingCount = 10
-
-/** Ten readings, five combinations of controls and the battery off, of a vehicle with a fault that shows. */
-function someReadings(circuit: Circuit, seed: number): Reading[] {
-  const random = seededRandom(seed)
-  const network = buildNetwork(circuit)
-  const conditions = [
-    ...controlCombinations(circuit, 5).map((controls) => ({ ...restCondition, controls })),
-    { ...restCondition, battery: false },
-  ]
-  const sets = candidateReadings(circuit, [], restCondition, { limit: 1000 })
-  const pool = conditions.map((condition) => {
-    const set = sets.find((one) => one.condition.battery === condition.battery)!
-    return set.probes.map((probe) => ({ ...probe, condition }))
-  })
-  for (;;) {
-    const site = random.pick(sitesOf(circuit))
-    const fault = plantFault(circuit, site.id, random.pick(site.modes), random.next)
-    const off = { partFactor: () => 0.95 + 0.1 * random.next(), restingVolts: 12.2, chargingVolts: 14 }
-    const vehicle = new Vehicle(network, off, fault)
-    if (!vehicle.shows()) continue
-    const readings: Reading[] = []
-    for (let i = 0; readings.length < readingCount; i++) {
-      const probe = random.pick(pool[i % pool.length]!)
-      const value = vehicle.read(probe)
-      if (value !== null) readings.push(readingSchema.parse({ id: `r${i}`, ...probe, value }))
-      if (i > 100) break
-    }
-    if (readings.length === readingCount) return readings
-  }
-}
 
 const ask = (circuit: Circuit, readings: Reading[]) =>
   evaluate({ circuit, readings, codes: [], priors: 'trade' } as Parameters<typeof evaluate>[0])
@@ -88,7 +50,7 @@ function timesOf(circuit: Circuit): Times {
     sweep: median([0, 0, 0].map(() => processorMs(() => sweep.run(sweep.points)))),
   }
   for (let seed = 1; seed <= vehiclesPerHarness; seed++) {
-    const readings = someReadings(circuit, seed)
+    const readings = tenReadings(circuit, seed)
     ask(circuit, readings.slice(0, -1))
     const whole = processorMs(() => ask(circuit, readings))
     const model = faultModelOf(circuit)

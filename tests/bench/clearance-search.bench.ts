@@ -1,6 +1,6 @@
 import { sitesOf } from '@/diagrams/document/sites'
 import { clearances } from '@/diagrams/faults/clearance'
-import { weighReadings } from '@/diagrams/faults/evidence'
+import { weighReadings } from '@/diagrams/faults/weighed-readings'
 import { faultModelOf } from '@/diagrams/faults/fault-model'
 import { samples } from '@/diagrams/samples/all-samples'
 import { readFaulty, readingPool } from '../support/clearance-run'

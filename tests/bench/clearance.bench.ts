@@ -1,7 +1,7 @@
 import { sitesOf } from '@/diagrams/document/sites'
 import type { Circuit } from '@/diagrams/document/circuit-schema'
 import type { Probe } from '@/diagrams/document/reading-schema'
-import { weighReadings } from '@/diagrams/faults/evidence'
+import { weighReadings } from '@/diagrams/faults/weighed-readings'
 import { FaultModel } from '@/diagrams/faults/fault-model'
 import { samples } from '@/diagrams/samples/all-samples'
 import { clearanceRun, readingPool, type ClearanceRun } from '../support/clearance-run'

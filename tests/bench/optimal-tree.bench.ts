@@ -1,5 +1,5 @@
 import { restCondition } from '@/diagrams/document/condition-schema'
-import { weighReadings } from '@/diagrams/faults/evidence'
+import { weighReadings } from '@/diagrams/faults/weighed-readings'
 import { faultModelOf } from '@/diagrams/faults/fault-model'
 import { posteriorOf } from '@/diagrams/faults/posterior'
 import { candidateReadings } from '@/diagrams/planner/candidates'
