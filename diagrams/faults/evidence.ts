@@ -1,8 +1,4 @@
-import { conditionKey } from '../document/condition'
-import type { Reading } from '../document/reading-schema'
-import type { FaultModel } from './fault-model'
 import type { Fits } from './tolerance-rule'
-import { WeighedReadings } from './weighed-readings'
 
 /** What all readings say of one cell. */
 export interface CellEvidence {
@@ -36,13 +32,4 @@ export interface Evidence {
   shared?(hypothesis: number, cell: number, still?: boolean): number
   /** How far between a cell's low and high severity the readings lie, 0 to 1, on its logarithmic scale. */
   within?(hypothesis: number, cell: number): number
-}
-
-/** Judges every cell against every reading. `skip` holds indices of readings that the odds leave out. */
-export function weighReadings(
-  model: FaultModel,
-  readings: readonly Reading[],
-  skip: ReadonlySet<number> = new Set(),
-): Evidence {
-  return new WeighedReadings(model, readings, skip)
 }

@@ -59,7 +59,10 @@ export class FaultModel {
     let found = this.judgedBy.get(key)
     if (!found) {
       if (this.judgedBy.size > 300) this.judgedBy.clear()
-      this.judgedBy.set(key, (found = judgeReading(this, reading)))
+      this.judgedBy.set(
+        key,
+        (found = judgeReading(this.network, this.hypotheses, this.table(reading), reading)),
+      )
     }
     return found
   }

@@ -1,7 +1,8 @@
 import type { Reading } from '../document/reading-schema'
 import { nominalBatteryVolts } from '../solver/constants'
 import { chargingRange, restingRange, weakRange, type ScaleRange } from './battery-range'
-import type { FaultModel } from './fault-model'
+import type { Network } from '../solver/network'
+import type { Hypothesis } from './hypothesis'
 import { likelihoodOf } from './likelihood'
 import { accuracyOf, scalesBetween, windowsOf } from './tolerance-rule'
 import type { Prediction } from './prediction'
@@ -32,12 +33,17 @@ export interface JudgedReading {
   peaks: readonly number[]
 }
 
-export function judgeReading(model: FaultModel, reading: Reading): JudgedReading {
-  const table = model.table(reading)
+/** `hypotheses` are those of the table, whose cells it numbers through. */
+export function judgeReading(
+  network: Network,
+  hypotheses: readonly Hypothesis[],
+  table: PredictionTable,
+  reading: Reading,
+): JudgedReading {
   const { states, bounds } = table
   const { first, firstBound, bound, low, high, restless } = states
   const cells = first.length - 1
-  const scope = { network: model.network }
+  const scope = { network }
   const windows = windowsOf(reading, scope)
   const range = reading.condition.charging ? chargingRange : restingRange
   const fitLow = new Float64Array(states.state.length).fill(1)
@@ -88,7 +94,7 @@ export function judgeReading(model: FaultModel, reading: Reading): JudgedReading
   }
   judge(0, null)
   let cell = 1
-  for (const hypothesis of model.hypotheses) {
+  for (const hypothesis of hypotheses) {
     rowsOf.nextHypothesis()
     for (const { low, high } of hypothesis.cells) {
       const weak = hypothesis.mode === 'weak'

@@ -1,5 +1,6 @@
 import type { Reading } from '../document/reading-schema'
-import { weighReadings, type Evidence, type Included } from './evidence'
+import type { Evidence, Included } from './evidence'
+import { weighReadings } from './weighed-readings'
 import type { FaultModel } from './fault-model'
 import { highestVolts } from './highest-volts'
 import { slipShare } from './likelihood'

@@ -1,5 +1,6 @@
 import type { Reading } from '../document/reading-schema'
-import { weighReadings, type Evidence } from './evidence'
+import type { Evidence } from './evidence'
+import { weighReadings } from './weighed-readings'
 import type { FaultModel } from './fault-model'
 import { logSum } from './log-sum'
 import { BoxModel, comesToRest, mayGive, wholeBox, type PairBox } from './pair-box'

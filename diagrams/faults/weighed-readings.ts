@@ -10,8 +10,17 @@ import { accuracyOf, anyState, type Fits } from './tolerance-rule'
 /** Cells this far below the likeliest, in nats of likelihood, get no fine look at the battery. */
 const coarseFrom = 30
 
+/** Judges every cell against every reading. `skip` holds indices of readings that the odds leave out. */
+export function weighReadings(
+  model: FaultModel,
+  readings: readonly Reading[],
+  skip: ReadonlySet<number> = new Set(),
+): Evidence {
+  return new WeighedReadings(model, readings, skip)
+}
+
 /** All readings judged against every cell, cells numbered through. */
-export class WeighedReadings implements Evidence {
+class WeighedReadings implements Evidence {
   readonly conditions: number[]
   readonly goodLog: number
   readonly logs: readonly Float64Array[]

@@ -1,5 +1,3 @@
-import type { EliminationOrder } from './elimination-order'
-
 /**
  * What reaches an unknown and a slot from pivots eliminated before: lets a few pivots be worked out
  * anew by sums alone, the rest of a factorisation kept.
@@ -16,7 +14,18 @@ export interface Inflows {
   joinedY: Int32Array
 }
 
-export function inflows(order: Omit<EliminationOrder, 'inflows'>): Inflows {
+/** The part of an elimination order that they follow from. */
+interface Slots {
+  size: number
+  pivots: Int32Array
+  first: Int32Array
+  count: Int32Array
+  neighbour: Int32Array
+  firstPair: Int32Array
+  pairSlot: Int32Array
+}
+
+export function inflows(order: Slots): Inflows {
   const { size, pivots, first, count, neighbour, firstPair, pairSlot } = order
   const slots = neighbour.length
   const owner = new Int32Array(slots)

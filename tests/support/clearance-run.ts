@@ -8,7 +8,7 @@ import {
 } from '@/diagrams/document/reading-schema'
 import { sitesOf, type Site } from '@/diagrams/document/sites'
 import { clearances } from '@/diagrams/faults/clearance'
-import { weighReadings } from '@/diagrams/faults/evidence'
+import { weighReadings } from '@/diagrams/faults/weighed-readings'
 import type { FaultModel } from '@/diagrams/faults/fault-model'
 import { candidateReadings } from '@/diagrams/planner/candidates'
 import type { PlantedFault } from '@/diagrams/solver/planted-fault'

@@ -1,6 +1,6 @@
 import type { Circuit } from '@/diagrams/document/circuit-schema'
 import type { Reading } from '@/diagrams/document/reading-schema'
-import { weighReadings } from '@/diagrams/faults/evidence'
+import { weighReadings } from '@/diagrams/faults/weighed-readings'
 import { faultModelOf, type FaultModel } from '@/diagrams/faults/fault-model'
 import { posteriorOf, siteProbabilities, type Posterior } from '@/diagrams/faults/posterior'
 import { minutesFor, workplaceAfter } from '@/diagrams/planner/cost'

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { sitesOf } from '@/diagrams/document/sites'
 import { clearances } from '@/diagrams/faults/clearance'
-import { weighReadings } from '@/diagrams/faults/evidence'
+import { weighReadings } from '@/diagrams/faults/weighed-readings'
 import { faultModelOf } from '@/diagrams/faults/fault-model'
 import { samples } from '@/diagrams/samples/all-samples'
 import { readFaulty, readingPool } from '@/tests/support/clearance-run'

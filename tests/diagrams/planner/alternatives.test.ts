@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { restCondition, type Condition } from '@/diagrams/document/condition-schema'
 import type { Probe } from '@/diagrams/document/reading-schema'
-import { weighReadings } from '@/diagrams/faults/evidence'
+import { weighReadings } from '@/diagrams/faults/weighed-readings'
 import { faultModelOf } from '@/diagrams/faults/fault-model'
 import { posteriorOf } from '@/diagrams/faults/posterior'
 import { chooseNext } from '@/diagrams/planner/choose-next'

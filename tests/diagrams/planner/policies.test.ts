@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import type { Circuit } from '@/diagrams/document/circuit-schema'
 import type { Probe, Reading } from '@/diagrams/document/reading-schema'
-import { weighReadings } from '@/diagrams/faults/evidence'
+import { weighReadings } from '@/diagrams/faults/weighed-readings'
 import { faultModelOf } from '@/diagrams/faults/fault-model'
 import { posteriorOf } from '@/diagrams/faults/posterior'
 import { walkCircuit } from '@/diagrams/planner/policies/circuit-walk'
