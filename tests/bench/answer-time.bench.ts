@@ -68,7 +68,14 @@ function timesOf(circuit: Circuit): Times {
 // Compiled on another harness, so that the first size is not charged for it.
 timesOf(harnessOfSize(999, 60))
 const all = sizes.flatMap((size) =>
-  Array.from({ length: harnessesPerSize }, (_, i) => ({ size, ...timesOf(harnessOfSize(500 + i, size)) })),
+  Array.from({ length: harnessesPerSize }, (_, i) => {
+    const times = timesOf(harnessOfSize(500 + i, size))
+    const list = (ms: number[]) => ms.map((x) => x.toFixed(0)).join(' ')
+    console.log(
+      `  ${size} nodes: new ${times.first.toFixed(0)} ms; answer ${list(times.answer)}; plan ${list(times.plan)}; retyped ${list(times.again)}`,
+    )
+    return { size, ...times }
+  }),
 )
 console.log('nodes  unknowns  new circuit  sweep  tenth reading: answer  plan  retyped   (ms, medians)')
 for (const size of sizes) {
