@@ -18,11 +18,11 @@ interface Share {
 }
 
 /**
- * What two readings share: the parts off the drawing are the same ones in both. Taking each reading's spread for
- * itself counts one part's error as often as it is read. For a cell of the given readings: ln of their joint density
+ * What two readings share: the parts off the drawing, and the severity, are the same ones in both. Taking each
+ * reading's spread for itself counts one part's error as often as it is read. For a cell of the given readings: ln of their joint density
  * over the product of their single ones,
  *   −½ (ln det C − Σ ln Cᵢᵢ + eᵀ C⁻¹ e − Σ eᵢ²/Cᵢᵢ),  C = diag(σ²) + S Sᵀ,
- * S the moves by part; with `still`, the determinants alone, as if every reading lay where it was foretold.
+ * S the moves by part and by severity; with `still`, the determinants alone, as if every reading lay where it was foretold.
  */
 export function sharedLog(
   readings: readonly Reading[],
@@ -71,13 +71,17 @@ function shareOf(reading: Reading, judged: JudgedReading, cell: number, scale: n
   const { given, severity, states: held } = states.bounds[from]!
   const other = states.bounds[to]!.severity
   const middle = severity > 0 && other > 0 ? Math.sqrt(severity * other) : (severity + other) / 2
-  const moves = sensitivities(given, given.solve(held, middle, scale), reading)
+  const byPart = sensitivities(given, given.solve(held, middle, scale), reading)
   given.releaseUnit()
-  if (!moves) return null
+  if (!byPart) return null
+  const moves = new Float64Array(byPart.length + 1)
+  moves.set(byPart)
   for (let k = 0; k < moves.length; k++) moves[k]! *= sigmaOfPart
+  // The severity, somewhere in the cell, is one more thing that readings share: even over its width.
+  moves[moves.length - 1] = (b - a) / Math.sqrt(12)
   const { percent, floor } = accuracyOf(reading)
   const sigma = ((percent / 100) * Math.abs(value) + floor) / 2
-  const left = value - Math.min(Math.max(value, Math.min(a, b)), Math.max(a, b))
+  const left = value - (a + b) / 2
   return Math.abs(left) > slipFrom * Math.sqrt(sigma * sigma + dot(moves, moves))
     ? null
     : { left, sigma, moves }
@@ -87,9 +91,11 @@ function valueAt({ battery, fixed }: Prediction, scale: number): number {
   return scale * battery + fixed
 }
 
-/** With leads put in a network has a few branches more at its end, which are exact. */
+/**
+ * With leads put in a network has a few branches more, which are exact; the severity's move stands last of all.
+ */
 function dot(x: Float64Array, y: Float64Array): number {
-  let sum = 0
-  for (let i = 0, n = Math.min(x.length, y.length); i < n; i++) sum += x[i]! * y[i]!
+  let sum = x.at(-1)! * y.at(-1)!
+  for (let i = 0, n = Math.min(x.length, y.length) - 1; i < n; i++) sum += x[i]! * y[i]!
   return sum
 }
