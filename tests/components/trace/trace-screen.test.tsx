@@ -105,12 +105,12 @@ describe('a trace on screen', () => {
   })
 
   it('says quietly how far an answer has come that takes its time, and no more once it is there', async () => {
-    let thread: SlowWorker | null = null
+    const threads: SlowWorker[] = []
     class SlowWorker extends SameThreadWorker {
       private readonly asked: Asked[] = []
       constructor() {
         super()
-        thread = this
+        threads.push(this)
       }
       override postMessage(asked: Asked) {
         this.asked.push(asked)
@@ -125,7 +125,7 @@ describe('a trace on screen', () => {
     serve(makeTrace())
     show(makeTrace())
     expect(await screen.findByText('Next split: 37 %')).toBeInTheDocument()
-    thread!.finish()
+    for (const thread of threads) thread.finish()
     await nextCard()
     expect(screen.queryByText(/37 %/)).not.toBeInTheDocument()
   })
