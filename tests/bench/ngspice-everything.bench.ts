@@ -33,7 +33,7 @@ const rows = samples.map((circuit) => {
     goal: 'within 1e-6 relative, 1e-6 floor',
     figure: `${found.nearest.toExponential(1)} of that at worst`,
     met: found.nearest <= 1,
-    how: `${found.compared} netlists, ${found.values} values, worst ${found.worst.V.toExponential(1)} V, ${found.worst.A.toExponential(1)} A`,
+    how: `${found.compared} netlists, ${found.values} values, worst ${found.worst.V.toExponential(1)} V, ${found.worst.A.toExponential(1)} A${found.referred > 0 ? `; ${found.referred} volts of floating parts settled by 320 bits` : ''}`,
   }
 })
 report(
