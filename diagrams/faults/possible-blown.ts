@@ -1,7 +1,7 @@
 import type { Alteration } from '../solver/alteration'
 import { casesAfter } from '../solver/blown-fuses'
 import type { Base } from '../solver/base'
-import { fuseAmps, untouched, type Case, type Settled } from '../solver/case'
+import { fuseAmps, untouched, type Case, type Located, type Settled } from '../solver/case'
 import { blowsAtRatingTimes } from '../solver/constants'
 import type { Network } from '../solver/network'
 import type { Study } from '../solver/study'
@@ -93,17 +93,38 @@ const hardlyMoved = 0.02
 
 /** Where current divides between ways of nearly no resistance, 5 % of a part can be most of a fuse's current. */
 function loadOf(given: Case, state: Settled, index: number): Load {
-  const { branch, amps } = given.study.network.fuses[index]!
+  const { amps } = given.study.network.fuses[index]!
   const carried = fuseAmps(given, state, index)
   const times = Math.abs(carried) / amps
   if (times < farBelow * blowsAtRatingTimes || times > farAbove * blowsAtRatingTimes)
     return { least: times, most: times }
   const plain = reachInBase(given, state, index)
   const moved = Math.abs(carried - (state.scale * plain.battery + plain.fixed)) / amps
-  const { reachBattery, reachFixed } = moved < hardlyMoved ? plain : predictAmps(given, state, branch)
-  const extra = moved < hardlyMoved ? moved : 0
-  const reach = (state.scale * reachBattery + reachFixed) / amps + extra
+  const reach =
+    moved < hardlyMoved
+      ? (state.scale * plain.reachBattery + plain.reachFixed) / amps + moved
+      : times * reachPart(given, state, index)
   return { least: battery.low * (times - reach), most: battery.high * (times + reach) }
+}
+
+const parts = new WeakMap<Located, Map<number, { severity: number; part: number }>>()
+
+/**
+ * What tolerances can do to a fuse's current, as part of it. Of a short in one state of the parts it is worked out at
+ * the harshest severity asked for: the milder the short, the less the other parts have to say in its current.
+ */
+function reachPart(given: Case, state: Settled, index: number): number {
+  let byFuse = parts.get(state.located)
+  if (!byFuse) parts.set(state.located, (byFuse = new Map()))
+  let found = byFuse.get(index)
+  if (!found || found.severity > state.severity) {
+    const { branch } = given.study.network.fuses[index]!
+    const own = predictAmps(given, state, branch)
+    const amps = Math.abs(state.scale * own.battery + own.fixed)
+    const reach = state.scale * own.reachBattery + own.reachFixed
+    byFuse.set(index, (found = { severity: state.severity, part: reach / Math.max(amps, 1e-9) }))
+  }
+  return found.part
 }
 
 const reaches = new WeakMap<Base, Map<number, Prediction>>()

@@ -99,6 +99,8 @@ export function* planSteps(
 
 /** Readings that a first look is followed up by: the best by bits per minute and the best by bits. */
 const looked = 20
+/** In this many conditions at least; in more where there are few particles. */
+const leastLooked = 3
 
 /** Weighs the most promising readings of a first look once more, by all particles. */
 function* lookClosely(
@@ -111,11 +113,12 @@ function* lookClosely(
     ...found.toSorted((a, b) => b.rate - a.rate).slice(0, looked),
     ...found.toSorted((a, b) => b.bits - a.bits).slice(0, looked),
   ])
+  const most = Math.max(leastLooked, Math.round(weighings / particles.length))
   const byCondition = new Map<Condition, Probe[]>()
   for (const { probe } of best) {
     const probes = byCondition.get(probe.condition)
     if (probes) probes.push(probe)
-    else byCondition.set(probe.condition, [probe])
+    else if (byCondition.size < most) byCondition.set(probe.condition, [probe])
   }
   const scales = new Scales(model, particles, readings)
   yield* weighAll(
