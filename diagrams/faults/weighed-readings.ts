@@ -52,16 +52,19 @@ class WeighedReadings implements Evidence {
 
   shared(hypothesis: number, cell: number, still = false): number {
     const at = hypothesis < 0 ? 0 : this.firstCell[hypothesis]! + cell
-    const used = this.used.filter((r) => typeof this.readings[r]!.value === 'number')
-    if (used.length < 2) return 0
-    const { low, high } = this.readings[used[0]!]!.condition.charging ? chargingRange : restingRange
-    return sharedLog(
-      used.map((r) => this.readings[r]!),
-      used.map((r) => this.judged[r]!),
-      at,
-      low + ((this.likeliestStep(at, used) + 0.5) / batterySteps) * (high - low),
-      still,
-    )
+    let log = 0
+    for (const charging of [false, true]) {
+      const used = this.used.filter((r) => this.readings[r]!.condition.charging === charging)
+      if (used.length < 2) continue
+      log += sharedLog(
+        used.map((r) => this.readings[r]!),
+        used.map((r) => this.judged[r]!),
+        at,
+        charging ? chargingRange : restingRange,
+        still,
+      )
+    }
+    return log
   }
 
   /** By least squares over readings that the cell explains, each taken as straight between the cell's ends, at any battery. */
@@ -102,17 +105,6 @@ class WeighedReadings implements Evidence {
     const variance =
       (((percent / 100) * Math.abs(value) + floor) / 2) ** 2 + ((ends[0].spread + ends[1].spread) / 2) ** 2
     return { ends, value, variance, range: reading.condition.charging ? chargingRange : restingRange }
-  }
-
-  private likeliestStep(cell: number, used: readonly number[]): number {
-    let best = 0
-    let most = -Infinity
-    for (let i = 0; i < batterySteps; i++) {
-      let sum = 0
-      for (const r of used) sum += this.judged[r]!.logs[this.judged[r]!.row[cell]!]![i]!
-      if (sum > most) [most, best] = [sum, i]
-    }
-    return best
   }
 
   get good(): CellEvidence {

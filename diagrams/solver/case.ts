@@ -235,7 +235,7 @@ function placed(base: Base, p: number, q: number, branch: number): Located {
 }
 
 /** Below this nothing drives a short, volts: it changes nothing, and what an ampere through it would do is not asked. */
-const drivenFrom = 1e-10
+const drivenFrom = 1e-13
 
 /** R of a located fault, ohm. Of a short it is worked out when first asked for: most lie between places that stand alike. */
 function loopOhmsOf(located: Located): number {

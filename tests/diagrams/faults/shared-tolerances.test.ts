@@ -46,6 +46,9 @@ describe('what a part off the drawing does to a reading', () => {
   })
 })
 
+/** The battery as drawn, no more and no less. */
+const nominal = { low: 1, high: 1 }
+
 describe('readings that share a part off the drawing', () => {
   const circuit = line(6)
   const model = new FaultModel(circuit)
@@ -72,20 +75,20 @@ describe('readings that share a part off the drawing', () => {
     const z = 0.05 / Math.sqrt(own + common)
     const joint = -0.5 * Math.log(1 - rho ** 2) - (z * z * (1 - rho)) / (1 - rho ** 2) + z * z
     const judged = readings.map((each) => model.judged(each))
-    expect(sharedLog(readings, judged, 0, 1)).toBeCloseTo(joint, 3)
+    expect(sharedLog(readings, judged, 0, nominal)).toBeCloseTo(joint, 3)
     expect(rho).toBeGreaterThan(0.3)
   })
 
   it('say nothing together where there is one of them, or where one is a slip', () => {
     const one = [reading('a', volts)]
-    expect(sharedLog(one, [model.judged(one[0]!)], 0, 1)).toBe(0)
+    expect(sharedLog(one, [model.judged(one[0]!)], 0, nominal)).toBe(0)
     const slip = [reading('a', volts), reading('b', volts - 5)]
     expect(
       sharedLog(
         slip,
         slip.map((each) => model.judged(each)),
         0,
-        1,
+        nominal,
       ),
     ).toBe(0)
   })

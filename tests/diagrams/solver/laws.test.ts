@@ -36,8 +36,10 @@ function balance(given: Case, settled: Settled) {
     ] as const) {
       if (unknown < 0) continue
       leaving[unknown]! += sign * amps
-      // What rounding the volts at its ends may put on a branch's amperes.
-      largest[unknown]! += Math.abs(amps) + siemens * 1e-3 * Math.abs(voltsAt(settled, unknown))
+      // What rounding the volts at its ends may put on a branch's amperes: those with the fault, which are the
+      // volts without it less what the fault takes away.
+      const volts = Math.max(Math.abs(voltsAt(settled, unknown)), Math.abs(without(settled, unknown)))
+      largest[unknown]! += Math.abs(amps) + siemens * 1e-3 * volts
     }
   })
   const { p, q, branch, touches } = settled.located
@@ -48,6 +50,10 @@ function balance(given: Case, settled: Settled) {
   }
   for (let i = 0; i < leaving.length; i++) leaving[i]! += leakSiemens * voltsAt(settled, i)
   return { leaving, largest }
+}
+
+function without({ located: { base }, scale }: Settled, unknown: number): number {
+  return scale * base.voltsBattery[unknown]! + base.voltsFixed[unknown]!
 }
 
 describe('Kirchhoff', () => {
@@ -110,7 +116,9 @@ describe('Thevenin resistance', () => {
         const circuit = randomCircuit(seed, 3)
         const random = seededRandom(seed + 3)
         const ends = circuit.wires.flatMap((wire) => [wire.from, wire.to])
-        const added = [{ from: random.pick(ends), to: random.pick(['chassis', ...ends]), ohms }]
+        const from = random.pick(ends)
+        const to = random.pick(['chassis', ...ends.filter((end) => end !== from)])
+        const added = [{ from, to, ohms }]
         const before = settle(circuit, seed, { battery: false })
         const after = settle(circuit, seed, { battery: false, added })
         const [a, b] = pairOf(seed, before.given)
