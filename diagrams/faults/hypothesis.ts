@@ -38,20 +38,20 @@ const showsAtVolts = 0.4
 /** For clearing a site a little less is enough: tolerances may add what is missing. */
 const nearlyShowsAtVolts = 0.3
 
-/** Every hypothesis of a circuit that would show, a site at a time. Nothing else counts as a fault. */
+/** Every hypothesis of a circuit that would show, one way to fail at a time. Nothing else counts as a fault. */
 export function* hypothesesOf(circuit: Circuit, network: Network): Steps<Hypothesis[]> {
   const studies = drivingStudies(network)
   const good = goodShow(studies)
   const sites = sitesOf(circuit)
   const found: Hypothesis[] = []
   for (const [done, site] of sites.entries()) {
-    yield { stage: 'circuit', done, of: sites.length }
     // Modes of one site that change the same branch, an open and a bad joint, share their factorisations.
     const caches = new Map<string, Map<string, Case[]>>()
     for (const mode of site.modes) {
       const kinds = kindsOf(circuit, site.id, mode)
       const part = (mode === 'short-to-wire' ? 0.5 : 1) / kinds.length
-      for (const kind of kinds)
+      for (const kind of kinds) {
+        yield { stage: 'circuit', done, of: sites.length }
         for (const { blows, cells } of variants(network, studies, good, kind, caches))
           found.push({
             site: kind.site,
@@ -63,6 +63,7 @@ export function* hypothesesOf(circuit: Circuit, network: Network): Steps<Hypothe
             cells,
             alteration: oncePerNetwork((in_) => withBlown(alterationOf(in_, kind), blows.map(fuseBranch))),
           })
+      }
     }
   }
   return found

@@ -13,7 +13,7 @@ export class Deaf extends Error {
 }
 
 /** A portion of work is milliseconds; one that takes this long will not end soon. */
-const listenMilliseconds = 2000
+const listenMilliseconds = 5000
 
 let lastNumber = 0
 
