@@ -15,27 +15,14 @@ import {
   suppressionOhms,
   worksReferenceVolts,
 } from './constants'
-import { finishNetwork, type Branch, type Network, type Setting } from './network'
+import { finishNetwork, type Branch, type Network, type NetworkParts, type Setting } from './network'
 
 /** Ohm of a wire: as given, else from size and length. */
 export function wireOhms(wire: Wire): number {
   return wire.ohms ?? (copperOhmMm2PerMetre * wire.length) / wire.mm2
 }
 
-type Draft = Omit<
-  Network,
-  | 'order'
-  | 'places'
-  | 'tolerant'
-  | 'besides'
-  | 'watched'
-  | 'firstWatchedFuse'
-  | 'watchedPivots'
-  | 'branchIndex'
-  | 'leaking'
-  | 'unknownOf'
-  | 'middleOf'
-> & {
+type Draft = Omit<NetworkParts, 'unknownOf' | 'middleOf'> & {
   unknownOf: Map<string, number>
   middleOf: Map<string, number>
 }

@@ -129,20 +129,21 @@ export interface Network {
 /** Slot numbers for `places`; a branch with both ends on the same unknown goes nowhere. */
 export const nowhere = -0x40000000
 
-export function finishNetwork(
-  parts: Omit<
-    Network,
-    | 'order'
-    | 'places'
-    | 'tolerant'
-    | 'besides'
-    | 'watched'
-    | 'firstWatchedFuse'
-    | 'watchedPivots'
-    | 'branchIndex'
-    | 'leaking'
-  > & { leaking?: number },
-): Network {
+/** A network before what follows from its branches has been worked out. */
+export type NetworkParts = Omit<
+  Network,
+  | 'order'
+  | 'places'
+  | 'tolerant'
+  | 'besides'
+  | 'watched'
+  | 'firstWatchedFuse'
+  | 'watchedPivots'
+  | 'branchIndex'
+  | 'leaking'
+>
+
+export function finishNetwork(parts: NetworkParts & { leaking?: number }): Network {
   const inside = parts.branches.filter((x) => x.a >= 0 && x.b >= 0 && x.a !== x.b)
   const order = orderElimination(
     parts.size,
