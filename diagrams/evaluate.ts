@@ -24,6 +24,8 @@ import { nextReadings } from './next-readings'
 import { planSteps, type Plan, worthwhileBits } from './planner/plan-next'
 import { answerTwoFaults } from './two-faults'
 
+/** Fewer readings than this never speak of two faults. */
+const leastForTwo = 2
 /** One site, or one group that cannot be told apart, is located when it holds this much. */
 const locatedFrom = 0.95
 
@@ -54,7 +56,7 @@ export function* evaluateSteps(request: EvaluationRequest): Steps<Answer> {
   const told = allReports([codeEvidence(model, codes), complaint])
   const posteriorFor = (evidence: Evidence) => posteriorOf(model, evidence, priors, told, odds)
   const misfit = misfitOf(model, readings, full, posteriorFor, weigh)
-  if (misfit && !comesAndGoes) {
+  if (misfit && !comesAndGoes && !misfit.contradicts && readings.length >= leastForTwo) {
     const weightOf = (site: string, mode: Mode) => modeWeight(circuit, site, mode, priors, odds)
     const pairs = yield* twoFaultsIn(model, readings, full, misfit, weightOf, told)
     if (pairs) return yield* answerTwoFaults(pairs, full, readings)

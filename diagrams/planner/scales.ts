@@ -73,6 +73,9 @@ export class Scales {
     const { circuit } = this.model
     const model = modelWith(this.model, set.condition.added)
     const rows = forecast(model, set, this.particles)
+    // Where the good circuit keeps switching itself nobody can read anything.
+    const restless = this.particles[0]?.hypothesis === null && rows.every((row) => Number.isNaN(row[0]))
+    if (restless) return
     const split = rows.map((row, i) => binsOf(set.probes[i]!.kind, row))
     if (split.every((bins) => bins.length < 2)) return
     if (set.condition.added.length > 0 && !leadsAreSafe(model, set.condition, this.particles)) return

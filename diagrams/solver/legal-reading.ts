@@ -81,6 +81,11 @@ function refuseProbe(circuit: Circuit, probe: Probe): Problem | null {
         : { path: 'node', message: `load "${probe.node}" does not exist` }
     case 'sees': {
       const point = parsePoint(probe.pin)
+      if (point?.part)
+        return {
+          path: 'pin',
+          message: `"${probe.pin}" is a side of a plug, expected a pin such as ${point.node}.${point.port}`,
+        }
       const node = circuit.nodes.find((n) => n.id === point?.node)
       const pin = node?.kind === 'module' ? node.pins.find((p) => p.pin === point?.port) : undefined
       if (pin?.circuit.type !== 'pull-up' && pin?.circuit.type !== 'pull-down')
