@@ -42,29 +42,31 @@ const nearlyShowsAtVolts = 0.3
 export function* hypothesesOf(circuit: Circuit, network: Network): Steps<Hypothesis[]> {
   const studies = drivingStudies(network)
   const good = goodShow(studies)
-  const sites = sitesOf(circuit)
   const found: Hypothesis[] = []
-  for (const [done, site] of sites.entries()) {
+  const ways = sitesOf(circuit).flatMap((site) => {
     // Modes of one site that change the same branch, an open and a bad joint, share their factorisations.
     const caches = new Map<string, Map<string, Case[]>>()
-    for (const mode of site.modes) {
+    return site.modes.flatMap((mode) => {
       const kinds = kindsOf(circuit, site.id, mode)
       const part = (mode === 'short-to-wire' ? 0.5 : 1) / kinds.length
-      for (const kind of kinds) {
-        yield { stage: 'circuit', done, of: sites.length }
-        for (const { blows, cells } of variants(network, studies, good, kind, caches))
-          found.push({
-            site: kind.site,
-            mode: kind.mode,
-            other: kind.other ?? null,
-            wire: kind.wire ?? null,
-            blows,
-            part,
-            cells,
-            alteration: oncePerNetwork((in_) => withBlown(alterationOf(in_, kind), blows.map(fuseBranch))),
-          })
-      }
-    }
+      return kinds.map((kind) => ({ kind, part, caches }))
+    })
+  })
+  for (const [done, { kind, part, caches }] of ways.entries()) {
+    yield { stage: 'circuit', done, of: ways.length }
+    for (const { blows, cells } of variants(network, studies, good, kind, caches))
+      found.push({
+        site: kind.site,
+        mode: kind.mode,
+        other: kind.other ?? null,
+        wire: kind.wire ?? null,
+        blows,
+        part,
+        cells,
+        alteration: oncePerNetwork((in_) => withBlown(alterationOf(in_, kind), blows.map(fuseBranch))),
+      })
+    // What its site has kept is wanted no longer than its last way to fail.
+    if (ways[done + 1]?.caches !== caches) caches.clear()
   }
   return found
 }
