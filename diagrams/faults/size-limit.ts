@@ -6,7 +6,7 @@ import { sitesOf } from '../document/sites'
  * Work of an evaluation grows with the square of a circuit's places and with its combinations of controls. Beyond
  * this it would take minutes, and a person should draw the part of the vehicle that is in question instead.
  */
-const mostWork = 6e6
+const mostWork = 12e6
 /** Combinations of controls gone through at most. */
 const mostCombinations = 256
 
