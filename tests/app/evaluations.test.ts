@@ -65,8 +65,9 @@ describe('the evaluator behind the address', () => {
     const [working, waiting, answered] = await Promise.all(replies)
     expect([working, waiting]).toEqual(['gone', 'gone'])
     expect(answered).toMatchObject({ ok: true, value: { outcome: 'located' } })
-    expect(performance.now() - started).toBeLessThan(10_000)
-  })
+    // Either of the two that were left would have been worked on until its 30 seconds were over.
+    expect(performance.now() - started).toBeLessThan(25_000)
+  }, 60_000)
 
   it('starts a thread anew that has died over a question, for the next one', async () => {
     const asked = evaluateApart({ circuit: randomCircuit(7, 40) }, 30_000)
