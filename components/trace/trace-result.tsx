@@ -47,7 +47,7 @@ export function TraceResult({
         answer={answer}
         actions={
           <>
-            <Button look="filled" className="min-w-52 flex-1" onClick={onFinish}>
+            <Button look="filled" className="grow basis-52" onClick={onFinish}>
               {trace.finding ? 'Prove the repair' : 'Record and prove the repair'}
             </Button>
             <DistanceToFault circuit={circuit} readings={readings} answer={answer} />
